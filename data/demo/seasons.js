@@ -61,7 +61,7 @@ export function makeSeasonFigures(seed, { towns, people }) {
 }
 
 /** One town's season in storage units. Tons are reported to a tenth, gallons to ten. */
-export function amountsOf(random, town, year) {
+function amountsOf(random, town, year) {
   const age = year - seasonYears[0];
   const laneMiles = Math.round(town.laneMiles * (1 + town.laneMileGrowth * (age - 4)) * 10) / 10;
   const drawnEvents = winterEvents[year] * districtFactor[town.row.district] * random.normal(1, 0.07);

@@ -1,7 +1,7 @@
 import { jointBody, townNames } from "./names.js";
 import { createRandom } from "./random.js";
 
-export const districts = ["Upper Tarn", "Lower Tarn", "Lakeside", "Ridge"];
+const districts = ["Upper Tarn", "Lower Tarn", "Lakeside", "Ridge"];
 
 // How many towns of each size lie in each district, in the order above. Sizes and districts cut across each other:
 // were one a copy of the other, publishing both would let a reader subtract one group from the other.

@@ -17,16 +17,17 @@ export type AgendaItem = {
 /** The road of Today: what waits for you, in the order to do it. The first item is the next step. */
 export function Agenda({ items }: { items: readonly AgendaItem[] }) {
   return (
-    <ol className="relative pl-10 sm:pl-0">
-      <li
+    <div className="relative pl-10 sm:pl-0">
+      <div
         aria-hidden="true"
         className="road-bed absolute inset-y-0 left-0 w-6.5 rounded-plate sm:left-[9.65rem] print:hidden"
-        role="presentation"
       />
-      {items.map((item, position) => (
-        <AgendaRow key={item.key} item={item} isFirst={position === 0} />
-      ))}
-    </ol>
+      <ol>
+        {items.map((item, position) => (
+          <AgendaRow key={item.key} item={item} isFirst={position === 0} />
+        ))}
+      </ol>
+    </div>
   );
 }
 

@@ -54,14 +54,15 @@ function remainderOf<Id>(whole: readonly Id[], parts: readonly Candidate<Id>[]) 
  *
  * @param candidates - in order of precedence; those of one partition do not overlap and follow each other
  * @param earlier - groups published before, of the same indicator and season
- * @param whole - all contributors, when figures on all of them are among the candidates; empty otherwise
+ * @param wholeKey - the candidate that holds all the others; while it is not published, no remainder can be worked out
+ * @param minimumDifference - on each side groups may differ by nobody, or by so many
  * @returns keys of the groups to publish
  * @example a district of all towns but three // left out: the three would be exposed
  */
 export function publishableGroups<Id extends number | string>(
   candidates: readonly Candidate<Id>[],
   earlier: readonly (readonly Id[])[],
-  whole: readonly Id[],
+  wholeKey: string,
   minimumDifference: number,
 ): Set<string> {
   const taken: (readonly Id[])[] = [...earlier];
@@ -72,6 +73,7 @@ export function publishableGroups<Id extends number | string>(
       const beside = [...taken, ...parts.map(({ members }) => members)];
       if (!conflictsWith(beside, one.members, minimumDifference)) parts.push(one);
     }
+    const whole = keys.has(wholeKey) ? (candidates.find(({ groupKey }) => groupKey === wholeKey)?.members ?? []) : [];
     let remainder = remainderOf(whole, parts);
     while (parts.length > 0 && remainder.length > 0 && isExposed(remainder, taken, minimumDifference)) {
       const smallest = parts.reduce((least, one) => (one.members.length <= least.members.length ? one : least));

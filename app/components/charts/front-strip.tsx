@@ -33,7 +33,10 @@ export function FrontStrip({ svg }: { svg: { desk: string; phone: string } }) {
   return (
     <figure>
       <div className="overflow-hidden sm:hidden" dangerouslySetInnerHTML={{ __html: svg.phone }} />
-      <div className="hidden overflow-hidden sm:block" dangerouslySetInnerHTML={{ __html: svg.desk }} />
+      {/* Never narrower than it was drawn: the road runs off both sides of a tablet, and its words stay legible. */}
+      <div className="hidden justify-center overflow-hidden sm:flex">
+        <div className="w-full min-w-222 flex-none" dangerouslySetInnerHTML={{ __html: svg.desk }} />
+      </div>
       <figcaption className="mx-auto max-w-column px-4 pt-2 text-s text-gravel sm:px-8">
         Example with invented figures: salt, lb per lane mile at the working setting. Each dot is a town, never fewer
         than three together.

@@ -98,13 +98,21 @@ export function layOutStrip(spec: LaneStripSpec, size: StripSize, widthPx: numbe
   };
 }
 
-/** The reason is painted on the near lane, beside the band where there is room. */
+/** The reason is painted on the near lane, beside the band where there is room, and in fewer words where there is little. */
 function layOutWithheld(reason: string, band: StripLayout["band"], { widthPx, labelPx }: Base) {
-  const words = `peers hidden: ${reason}`;
-  const need = textWidthPx(words, labelPx) + 16;
-  if (band !== null && widthPx - band.x2 >= need) return { x: (band.x2 + widthPx) / 2, words };
-  if (band !== null && band.x1 >= need) return { x: band.x1 / 2, words };
-  return { x: widthPx / 2, words };
+  const stretches =
+    band === null
+      ? [[0, widthPx]]
+      : [
+          [band.x2, widthPx],
+          [0, band.x1],
+        ];
+  for (const words of [`peers hidden: ${reason}`, reason]) {
+    for (const [from = 0, to = 0] of stretches) {
+      if (to - from >= textWidthPx(words, labelPx) + 16) return { x: (from + to) / 2, words };
+    }
+  }
+  return { x: widthPx / 2, words: reason };
 }
 
 type Base = {
@@ -203,7 +211,7 @@ function layOutHeaps(spec: LaneStripSpec, base: Base) {
   const notches = borders.filter((border) => border > spec.axis.from && border < spec.axis.to).map(base.x);
 
   if (kind === "grains") {
-    const tight = Math.min(1, narrowest / 32.5);
+    const tight = Math.min(1, narrowest / 38);
     const grainRadius = 4.2 * tight;
     const grains = heaps.flatMap((_, i) =>
       heapOfGrains(centres[i] ?? 0, counts[i] ?? 0, 10.5 * tight, base.laneBottom - 7.5 - grainRadius),

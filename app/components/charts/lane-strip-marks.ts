@@ -1,7 +1,7 @@
 import type { RenderFunction } from "@observablehq/plot";
 import { edgeInset, type FlagLayout, type StripLayout } from "./lane-strip-layout.ts";
 
-const svgNamespace = "http://www.w3.org/2000/svg";
+const svgNamespace = "http://www.w3.org/2000/svg" as const;
 
 type Attributes = Record<string, string | number>;
 
@@ -11,7 +11,7 @@ function element(
   attributes: Attributes,
   children: readonly (Element | string)[] = [],
 ) {
-  const made = document.createElementNS(svgNamespace, name) as SVGElement;
+  const made = document.createElementNS(svgNamespace, name);
   for (const [key, value] of Object.entries(attributes)) made.setAttribute(key, String(value));
   made.append(...children);
   return made;

@@ -8,16 +8,13 @@ type Props = {
   title?: string;
 };
 
-/** All that is wrong with a form, above it. Takes focus when it appears, and leads to each field. */
+/** All that is wrong with a form, above it. Takes focus when it appears, and leads to each field. Give it a `key` per reply. */
 export function ErrorSummary({ errors, title = errorTitle(errors.length) }: Props) {
   const box = useRef<HTMLDivElement>(null);
-  const hasErrors = errors.length > 0;
-  useEffect(() => {
-    // `errors` is a new list after every reply, so a second failed attempt moves the focus here again.
-    if (hasErrors) box.current?.focus();
-  }, [errors, hasErrors]);
+  // On mount only: focus must not be taken from a field while it is being put right.
+  useEffect(() => box.current?.focus(), []);
 
-  if (!hasErrors) return null;
+  if (errors.length === 0) return null;
   return (
     <div
       ref={box}

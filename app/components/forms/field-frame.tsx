@@ -7,6 +7,8 @@ export type FieldWords = {
   hint?: ReactNode;
   /** What is wrong and what would be right, in words. The value typed is kept. */
   error?: string | readonly string[] | null;
+  /** Says so beside the label. Fields are needed unless they say otherwise. */
+  isOptional?: boolean;
   /** Only where two forms on a page share a name. */
   id?: string;
 };
@@ -30,21 +32,13 @@ export function fieldTies({ name, id, hint, error }: FieldWords) {
 }
 
 /** Label above, error in words beside the field, hint under it. */
-export function FieldFrame({
-  words,
-  isRequired,
-  children,
-}: {
-  words: FieldWords;
-  isRequired: boolean;
-  children: ReactNode;
-}) {
+export function FieldFrame({ words, children }: { words: FieldWords; children: ReactNode }) {
   const controlId = words.id ?? words.name;
   return (
     <div className="max-w-field">
       <label htmlFor={controlId} className="mb-1 block font-semibold">
         {words.label}
-        {!isRequired && <span className="font-normal text-gravel"> (may be left empty)</span>}
+        {words.isOptional === true && <span className="font-normal text-gravel"> (may be left empty)</span>}
       </label>
       {children}
       <FieldError id={`${controlId}-error`} error={words.error} />

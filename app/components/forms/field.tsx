@@ -4,10 +4,10 @@ import { FieldFrame, fieldLook, fieldTies, type FieldWords } from "./field-frame
 /** Words first; every other attribute of the control may be given too, so a form library's props can be spread in. */
 type InputProps = FieldWords & Omit<ComponentProps<"input">, keyof FieldWords | "className">;
 
-export function TextField({ name, label, hint, error, id, ...rest }: InputProps) {
-  const words = { name, label, hint, error, id };
+export function TextField({ name, label, hint, error, id, isOptional, ...rest }: InputProps) {
+  const words = { name, label, hint, error, id, isOptional };
   return (
-    <FieldFrame words={words} isRequired={rest.required === true}>
+    <FieldFrame words={words}>
       <input type="text" {...rest} {...fieldTies(words)} className={fieldLook} />
     </FieldFrame>
   );
@@ -19,10 +19,10 @@ type NumberProps = Omit<InputProps, "type" | "inputMode"> & {
 };
 
 /** A figure as typed: text with the numeric keyboard, so that "1 7/8" and "1,200" reach the server as they were written. */
-export function NumberField({ name, label, hint, error, id, unit, ...rest }: NumberProps) {
-  const words = { name, label, hint, error, id };
+export function NumberField({ name, label, hint, error, id, isOptional, unit, ...rest }: NumberProps) {
+  const words = { name, label, hint, error, id, isOptional };
   return (
-    <FieldFrame words={words} isRequired={rest.required === true}>
+    <FieldFrame words={words}>
       <span className="flex items-center gap-2">
         <span className="block w-40">
           <input
@@ -42,10 +42,10 @@ export function NumberField({ name, label, hint, error, id, unit, ...rest }: Num
 
 type FileProps = Omit<InputProps, "type" | "defaultValue" | "value">;
 
-export function FileField({ name, label, hint, error, id, ...rest }: FileProps) {
-  const words = { name, label, hint, error, id };
+export function FileField({ name, label, hint, error, id, isOptional, ...rest }: FileProps) {
+  const words = { name, label, hint, error, id, isOptional };
   return (
-    <FieldFrame words={words} isRequired={rest.required === true}>
+    <FieldFrame words={words}>
       <input
         {...rest}
         type="file"

@@ -10,10 +10,10 @@ type SelectProps = FieldWords &
     prompt?: string;
   };
 
-export function SelectField({ name, label, hint, error, id, choices, prompt, ...rest }: SelectProps) {
-  const words = { name, label, hint, error, id };
+export function SelectField({ name, label, hint, error, id, isOptional, choices, prompt, ...rest }: SelectProps) {
+  const words = { name, label, hint, error, id, isOptional };
   return (
-    <FieldFrame words={words} isRequired={rest.required === true}>
+    <FieldFrame words={words}>
       <span className="relative block">
         <select {...rest} {...fieldTies(words)} className={`${fieldLook} appearance-none pr-9 font-semibold`}>
           {prompt !== undefined && <option value="">{prompt}</option>}

@@ -3,10 +3,10 @@ import { FieldFrame, fieldLook, fieldTies, type FieldWords } from "./field-frame
 
 type Props = FieldWords & Omit<ComponentProps<"textarea">, keyof FieldWords | "className">;
 
-export function TextArea({ name, label, hint, error, id, rows = 3, ...rest }: Props) {
-  const words = { name, label, hint, error, id };
+export function TextArea({ name, label, hint, error, id, isOptional, rows = 3, ...rest }: Props) {
+  const words = { name, label, hint, error, id, isOptional };
   return (
-    <FieldFrame words={words} isRequired={rest.required === true}>
+    <FieldFrame words={words}>
       <textarea
         rows={rows}
         {...rest}

@@ -1,7 +1,14 @@
 import { administer } from "./mariadb.js";
 
 /** Tables whose rows are written once: the application may add to them and read them, nothing else. */
-export const writeOnceTables = ["audit_entry", "edition", "edition_cell", "edition_row", "edition_member", "edition_place"];
+export const writeOnceTables = [
+  "audit_entry",
+  "edition",
+  "edition_cell",
+  "edition_row",
+  "edition_member",
+  "edition_place",
+];
 const readOnlyTables = ["schema_migration"];
 
 /**
@@ -41,7 +48,10 @@ export function prepareDatabase({ socket, database, migratorPassword, appPasswor
  */
 export function applyGrants({ socket, database }) {
   assertPlainName(database);
-  const tables = administer(socket, `SELECT TABLE_NAME FROM information_schema.TABLES WHERE TABLE_SCHEMA = '${database}'`);
+  const tables = administer(
+    socket,
+    `SELECT TABLE_NAME FROM information_schema.TABLES WHERE TABLE_SCHEMA = '${database}'`,
+  );
   const held = administer(
     socket,
     `SELECT TABLE_NAME, PRIVILEGE_TYPE FROM information_schema.TABLE_PRIVILEGES
@@ -73,8 +83,12 @@ export function grantStatements({ database, tables, held }) {
     const missing = wanted.filter((right) => !present.includes(right));
     const excess = present.filter((right) => !wanted.includes(right));
     return [
-      ...(missing.length > 0 ? [`GRANT ${missing.join(", ")} ON \`${database}\`.\`${table}\` TO 'app'@'127.0.0.1'`] : []),
-      ...(excess.length > 0 ? [`REVOKE ${excess.join(", ")} ON \`${database}\`.\`${table}\` FROM 'app'@'127.0.0.1'`] : []),
+      ...(missing.length > 0
+        ? [`GRANT ${missing.join(", ")} ON \`${database}\`.\`${table}\` TO 'app'@'127.0.0.1'`]
+        : []),
+      ...(excess.length > 0
+        ? [`REVOKE ${excess.join(", ")} ON \`${database}\`.\`${table}\` FROM 'app'@'127.0.0.1'`]
+        : []),
     ];
   });
 }
@@ -87,11 +101,13 @@ function rightsOn(table) {
 
 /** @param {string} name */
 function assertPlainName(name) {
-  if (!/^[a-z0-9_]{1,60}$/.test(name)) throw new RangeError("a database's name has letters, digits and underscores only");
+  if (!/^[a-z0-9_]{1,60}$/.test(name))
+    throw new RangeError("a database's name has letters, digits and underscores only");
 }
 
 /** @param {string} password base64url, so that it needs no quoting @returns {string} */
 function plain(password) {
-  if (!/^[\w-]{16,}$/.test(password)) throw new RangeError("a database password is base64url and has 16 characters or more");
+  if (!/^[\w-]{16,}$/.test(password))
+    throw new RangeError("a database password is base64url and has 16 characters or more");
   return password;
 }

@@ -33,7 +33,11 @@ export function welcomeLines({ origin, mailOrigin, people, invitationUrl }) {
     });
   }
   if (invitationUrl !== null) {
-    lines.push("", "This network is empty. Its first coordinator comes in here, once, within 7 days:", `  ${invitationUrl}`);
+    lines.push(
+      "",
+      "This network is empty. Its first coordinator comes in here, once, within 7 days:",
+      `  ${invitationUrl}`,
+    );
   }
   lines.push("", "Stop: Ctrl-C");
   return lines;

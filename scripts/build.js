@@ -5,7 +5,15 @@ import { join } from "node:path";
 import { Failure } from "./failures.js";
 import { plainEnvironment } from "./settings.js";
 
-const sources = ["app", "public", "react-router.config.ts", "vite.config.ts", "tsconfig.json", "package.json", "package-lock.json"];
+const sources = [
+  "app",
+  "public",
+  "react-router.config.ts",
+  "vite.config.ts",
+  "tsconfig.json",
+  "package.json",
+  "package-lock.json",
+];
 
 /**
  * One fingerprint of everything that the build is made from: names and contents, in a fixed order.
@@ -61,5 +69,7 @@ function filesUnder(root, path) {
   const found = statSync(join(root, path), { throwIfNoEntry: false });
   if (!found) return [];
   if (!found.isDirectory()) return [path];
-  return readdirSync(join(root, path)).sort().flatMap((name) => filesUnder(root, join(path, name)));
+  return readdirSync(join(root, path))
+    .sort()
+    .flatMap((name) => filesUnder(root, join(path, name)));
 }

@@ -74,7 +74,9 @@ export async function waitUntilAnswering(program, probe, limitMs = 30_000) {
     }
     await sleep(50);
   }
-  throw new Failure(lastWords(program, program.isEnded ? "ended by itself" : `does not answer after ${limitMs / 1000} seconds`));
+  throw new Failure(
+    lastWords(program, program.isEnded ? "ended by itself" : `does not answer after ${limitMs / 1000} seconds`),
+  );
 }
 
 /**

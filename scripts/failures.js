@@ -13,7 +13,8 @@ export function sentenceFor(error) {
   const code = codeOf(error);
   const path = pathOf(error);
   if (code === "ENOSPC" || code === "EDQUOT") return "The disk is full. Free some space, then start again.";
-  if (code === "EROFS") return `${path} lies on a disk that cannot be written to. Copy the folder elsewhere, then start again.`;
+  if (code === "EROFS")
+    return `${path} lies on a disk that cannot be written to. Copy the folder elsewhere, then start again.`;
   if (code === "EACCES" || code === "EPERM") {
     return `This account may not use ${path}. Give the folder to it (chown -R "$(id -un)" .) or start as its owner.`;
   }

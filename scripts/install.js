@@ -15,7 +15,12 @@ const systemFolders = ["/usr/local/sbin", "/usr/local/bin", "/usr/sbin", "/usr/b
  */
 export function findProgram(name) {
   const folders = [...(process.env.PATH ?? "").split(":"), ...systemFolders];
-  return folders.filter(Boolean).map((folder) => join(folder, name)).find((path) => existsSync(path)) ?? null;
+  return (
+    folders
+      .filter(Boolean)
+      .map((folder) => join(folder, name))
+      .find((path) => existsSync(path)) ?? null
+  );
 }
 
 /**
@@ -29,10 +34,12 @@ export function findProgram(name) {
  */
 export function missingPackages(lock, installed) {
   const present = installed.packages ?? {};
-  return Object.entries(lock.packages ?? {})
-    // An optional package may rightly be absent: it is meant for another kind of machine.
-    .filter(([path, wanted]) => path !== "" && !wanted.optional && present[path]?.version !== wanted.version)
-    .map(([path]) => path);
+  return (
+    Object.entries(lock.packages ?? {})
+      // An optional package may rightly be absent: it is meant for another kind of machine.
+      .filter(([path, wanted]) => path !== "" && !wanted.optional && present[path]?.version !== wanted.version)
+      .map(([path]) => path)
+  );
 }
 
 /**
@@ -48,13 +55,19 @@ export function ensureNodeModules(root, say) {
   const installed = existsSync(state) ? JSON.parse(readFileSync(state, "utf8")) : {};
   if (missingPackages(lock, installed).length === 0) return;
   if (lstatSync(folder, { throwIfNoEntry: false })?.isSymbolicLink()) {
-    throw new Failure("node_modules is a link to another checkout and does not match package-lock.json. Run npm ci there.");
+    throw new Failure(
+      "node_modules is a link to another checkout and does not match package-lock.json. Run npm ci there.",
+    );
   }
   say("Installing the node modules (npm ci); the first time takes a minute …");
   // npm names itself when it runs a script; started by hand, the one on the PATH is taken.
   const npm = process.env.npm_execpath;
   const [program, first] = npm?.endsWith(".js") ? [process.execPath, [npm]] : ["npm", []];
-  const result = spawnSync(program, [...first, "ci", "--no-progress"], { cwd: root, stdio: ["ignore", "inherit", "pipe"], encoding: "utf8" });
+  const result = spawnSync(program, [...first, "ci", "--no-progress"], {
+    cwd: root,
+    stdio: ["ignore", "inherit", "pipe"],
+    encoding: "utf8",
+  });
   if (result.status === 0) return;
   process.stderr.write(result.stderr ?? "");
   throw new Failure(npmSentence(result.stderr ?? String(result.error)));
@@ -95,10 +108,14 @@ function ensureDebianPackages(title, programs, packages, say) {
   if (programs.every((program) => findProgram(program) !== null)) return;
   const command = `apt-get update && apt-get install -y --no-install-recommends ${packages.join(" ")}`;
   if (findProgram("apt-get") === null) {
-    throw new Failure(`${title} is not installed, and this is no Debian system. Install ${programs.join(", ")}, then start again.`);
+    throw new Failure(
+      `${title} is not installed, and this is no Debian system. Install ${programs.join(", ")}, then start again.`,
+    );
   }
   if (process.getuid?.() !== 0) {
-    throw new Failure(`${title} is not installed, and this account may not install it. Run once: sudo sh -c '${command}'`);
+    throw new Failure(
+      `${title} is not installed, and this account may not install it. Run once: sudo sh -c '${command}'`,
+    );
   }
   say(`Installing ${title} from Debian's packages …`);
   const wait = ["-o", "DPkg::Lock::Timeout=900", "-qq"];
@@ -130,7 +147,9 @@ export function assertDiskSpace(folder, neededMb) {
   const { bavail, bsize } = statfsSync(folder);
   const freeMb = Math.floor((bavail * bsize) / 1_000_000);
   if (freeMb >= neededMb) return;
-  throw new Failure(`Only ${freeMb} MB are free on the disk of ${folder}, and ${neededMb} MB are needed. Free some space, then start again.`);
+  throw new Failure(
+    `Only ${freeMb} MB are free on the disk of ${folder}, and ${neededMb} MB are needed. Free some space, then start again.`,
+  );
 }
 
 /** Refuse a Node that lacks what the project uses. @param {string} version such as "20.19.0" */

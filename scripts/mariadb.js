@@ -92,7 +92,10 @@ export function administer(socket, text) {
   const args = ["--no-defaults", `--socket=${socket}`, "-u", userInfo().username, "--batch", "--skip-column-names"];
   const result = spawnSync(required("mariadb"), args, { input: text, encoding: "utf8", maxBuffer: 64_000_000 });
   if (result.status !== 0) throw new Error((result.stderr ?? String(result.error)).trim());
-  return result.stdout.split("\n").filter((line) => line !== "").map((line) => line.split("\t"));
+  return result.stdout
+    .split("\n")
+    .filter((line) => line !== "")
+    .map((line) => line.split("\t"));
 }
 
 /** @param {{ folder: string, account: string, port: number, isPassing: boolean }} given @returns {Mariadb} */
@@ -200,7 +203,9 @@ function installData(folder, account) {
   );
   const output = `${result.stdout ?? ""}${result.stderr ?? ""}`;
   if (result.status !== 0) {
-    throw new Failure(sentenceForLog(output) ?? `MariaDB cannot prepare its data folder ${files.data}. It says:\n${output.trim()}`);
+    throw new Failure(
+      sentenceForLog(output) ?? `MariaDB cannot prepare its data folder ${files.data}. It says:\n${output.trim()}`,
+    );
   }
   writeFileSync(files.installed, "");
 }
@@ -216,7 +221,9 @@ function serverAccount(folder) {
   const self = userInfo();
   const present = { name: self.username, uid: null, gid: self.gid };
   if (self.uid !== 0) return present;
-  const passwd = readFileSync("/etc/passwd", "utf8").split("\n").map((line) => line.split(":"));
+  const passwd = readFileSync("/etc/passwd", "utf8")
+    .split("\n")
+    .map((line) => line.split(":"));
   const mysql = passwd.find(([name]) => name === "mysql");
   if (!mysql) return present;
   const [uid, gid] = [Number(mysql[2]), Number(mysql[3])];
@@ -245,6 +252,9 @@ function filesOf(folder) {
 /** @param {string} name */
 function required(name) {
   const path = findProgram(name);
-  if (path === null) throw new Failure(`${name} is not installed. Run: apt-get install -y --no-install-recommends mariadb-server-core mariadb-client-core`);
+  if (path === null)
+    throw new Failure(
+      `${name} is not installed. Run: apt-get install -y --no-install-recommends mariadb-server-core mariadb-client-core`,
+    );
   return path;
 }

@@ -12,7 +12,9 @@ import { Failure } from "./failures.js";
 export function portsFrom(wanted) {
   const app = wanted === undefined || wanted === "" ? 4310 : Number(wanted);
   if (!Number.isInteger(app) || app < 1 || app > 65_532) {
-    throw new Failure(`PORT is "${wanted}", which is no port. Give a whole number from 1024 to 65532: PORT=4400 npm start`);
+    throw new Failure(
+      `PORT is "${wanted}", which is no port. Give a whole number from 1024 to 65532: PORT=4400 npm start`,
+    );
   }
   return { app, idp: app + 1, mailPage: app + 2, smtp: app + 3 };
 }

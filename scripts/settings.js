@@ -76,7 +76,9 @@ export function appEnvironment({ settings, ports, mariadb, database, devPages })
 /** What a program started by us may know of the shell it was started from. */
 export function plainEnvironment() {
   const passed = ["PATH", "HOME", "USER", "LANG", "LC_ALL", "TMPDIR", "TERM"];
-  return Object.fromEntries(passed.flatMap((name) => (process.env[name] === undefined ? [] : [[name, process.env[name]]])));
+  return Object.fromEntries(
+    passed.flatMap((name) => (process.env[name] === undefined ? [] : [[name, process.env[name]]])),
+  );
 }
 
 function secret() {

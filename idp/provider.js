@@ -33,6 +33,7 @@ export function createProvider({ issuer, applicationOrigin, clientId, clientSecr
         response_types: ["code"],
         grant_types: ["authorization_code"],
         token_endpoint_auth_method: "client_secret_basic",
+        require_auth_time: true,
       },
     ],
     jwks: { keys: [keys.jwk] },

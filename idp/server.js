@@ -40,7 +40,7 @@ const server = createServer(async (request, response) => {
     await answerAsProvider(request, response);
   } catch (error) {
     // A sign-in that is over, a cookie that is gone: the page says so; the log has the rest.
-    console.error(error);
+    console.error(error.error_description ?? error);
     send(response, 400, "text/html", errorPage(PUBLIC_ORIGIN, "invalid_request"));
   }
 });
@@ -78,6 +78,8 @@ async function finish(request, response, interaction, sub) {
     session.loginAccount({ accountId: sub });
     session.authorizations = {};
     await session.persist();
+    interaction.session = { ...interaction.session, accountId: sub };
+    await interaction.persist();
   }
   await provider.interactionFinished(
     request,

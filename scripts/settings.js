@@ -69,7 +69,7 @@ export function appEnvironment({ settings, ports, mariadb, database, devPages })
     SMTP_PORT: String(ports.smtp),
     MAIL_FROM: "Commonweigh <network@commonweigh.example>",
     WORKER_TOKEN: settings.workerToken,
-    DEV_PAGES: devPages ? "1" : "",
+    DEV_PAGES: devPages ? "1" : "0",
   };
 }
 

@@ -1,5 +1,6 @@
 import { existsSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
+import { setImmediate } from "node:timers/promises";
 import { box, welcomeLines } from "./box.js";
 import { ensureBuild } from "./build.js";
 import { Failure, sentenceFor } from "./failures.js";
@@ -29,12 +30,15 @@ for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"]) {
 try {
   await main();
 } catch (error) {
-  const sentence = sentenceFor(error);
-  console.error(sentence === null ? error : `\n${sentence}`);
-  process.exitCode = 1;
+  // A Ctrl-C that fell into a step which blocks is only heard now; what broke off then was broken off on purpose.
+  await setImmediate();
+  if (!stopping.signal.aborted) {
+    const sentence = sentenceFor(error);
+    console.error(sentence === null ? error : `\n${sentence}`);
+    process.exitCode = 1;
+  }
 }
 for (const stop of started.reverse()) await stop();
-if (stopping.signal.aborted) process.exitCode = 0;
 
 async function main() {
   const ports = portsFrom(process.env.PORT);

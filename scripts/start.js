@@ -1,3 +1,4 @@
+/* global AbortController */
 import { existsSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { setImmediate } from "node:timers/promises";

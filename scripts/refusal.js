@@ -14,7 +14,8 @@ export function refusalOf({ method, url, headers }, host) {
   }
   const path = decodedPath(url);
   if (path === null) return { status: 400, sentence: "This address is malformed." };
-  if (headers.host !== host && path !== "/healthz") return { status: 421, sentence: "This address is not served here." };
+  if (headers.host !== host && path !== "/healthz")
+    return { status: 421, sentence: "This address is not served here." };
   // Without a length the application's own limits hold; with one there is no need to read the body at all.
   if (Number(headers["content-length"] ?? 0) > bodyLimitBytes) {
     return { status: 413, sentence: "This is more than 6 MB. Send a smaller file.", headers: { Connection: "close" } };

@@ -28,10 +28,10 @@ export function sentenceFor(error) {
  * @returns {string | null}
  */
 export function sentenceForLog(log) {
-  if (/No space left on device|Disk is full|ENOSPC|OS errno 28|errno: 28/i.test(log)) {
+  if (/No space left on device|Disk is full|ENOSPC|OS errno 28|errno: 28|with error 28/i.test(log)) {
     return "The disk is full. Free some space, then start again.";
   }
-  if (/Permission denied|EACCES|OS errno 13|errno: 13/i.test(log)) {
+  if (/Permission denied|EACCES|OS errno 13|errno: 13|with error 13/i.test(log)) {
     return 'This account may not use the data folder .commonweigh. Give it back (chown -R "$(id -un)" .commonweigh) or start as its owner.';
   }
   return null;

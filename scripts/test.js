@@ -5,7 +5,7 @@ import { join } from "node:path";
 import { setImmediate } from "node:timers/promises";
 import { ensureBuild } from "./build.js";
 import { sentenceFor } from "./failures.js";
-import { assertDiskSpace, assertNodeVersion, ensureChromium, ensureMariadb, ensureNodeModules } from "./install.js";
+import { assertRoom, assertNodeVersion, ensureChromium, ensureMariadb, ensureNodeModules } from "./install.js";
 import { projectFolder } from "./settings.js";
 import { checkOutcome, lastLine, vitestOutcome } from "./test-outcome.js";
 
@@ -46,7 +46,7 @@ for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"]) {
 
 try {
   assertNodeVersion(process.versions.node);
-  assertDiskSpace(projectFolder, existsSync(join(projectFolder, "node_modules")) ? 800 : 2_000);
+  assertRoom(projectFolder, existsSync(join(projectFolder, "node_modules")) ? 800 : 2_000);
   ensureNodeModules(projectFolder, say);
   ensureMariadb(say);
   ensureChromium(say);

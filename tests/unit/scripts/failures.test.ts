@@ -27,6 +27,9 @@ test("a log that tells of a full disk or a missing right gives that sentence, an
   expect(sentenceForLog("[ERROR] InnoDB: Error number 28 means 'No space left on device'")).toMatch(
     /^The disk is full/,
   );
+  expect(sentenceForLog("preallocating 100663296 bytes for file ./ib_logfile101 failed with error 28")).toMatch(
+    /^The disk/,
+  );
   expect(sentenceForLog("Can't create file './x' (errno: 13 \"Permission denied\")")).toMatch(
     /^This account may not use/,
   );

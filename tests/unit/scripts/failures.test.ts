@@ -18,6 +18,13 @@ test.each([
   expect(sentence).not.toContain("raw words");
 });
 
+test.each([
+  `Can't create table \`d\`.\`t\` (errno: 135 "No more room in record file")`,
+  "The table 'season_figure' is full",
+])("the database's %j is the full disk it means", (words) => {
+  expect(sentenceFor(new Error(words))).toMatch(/^The disk is full/);
+});
+
 test("a fault of the program keeps its stack: there is no sentence for it", () => {
   expect(sentenceFor(new TypeError("x is not a function"))).toBeNull();
   expect(sentenceFor("thrown text")).toBeNull();

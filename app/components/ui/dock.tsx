@@ -1,0 +1,26 @@
+import type { ReactNode } from "react";
+
+type Props = {
+  /** What would happen, with counts. */
+  summary: ReactNode;
+  /** The one button, and at most one quiet way out. */
+  children: ReactNode;
+  /** The id a waiting button points to for its reason. */
+  summaryId?: string;
+};
+
+/** Stays at the foot of a long page with the counts and the one decision. Sits above the bottom bar of a phone. */
+export function Dock({ summary, children, summaryId }: Props) {
+  return (
+    <div className="sticky bottom-[3.9rem] z-10 border-t border-line bg-salt pt-[3px] sm:bottom-0 print:static print:hidden">
+      <div className="border-t-4 border-line">
+        <div className="mx-auto flex w-full max-w-column flex-wrap items-center gap-x-5 gap-y-2 px-4 py-3.5 sm:px-8">
+          <p id={summaryId} className="mr-auto">
+            {summary}
+          </p>
+          {children}
+        </div>
+      </div>
+    </div>
+  );
+}

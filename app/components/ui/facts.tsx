@@ -1,0 +1,16 @@
+import type { ReactNode } from "react";
+
+export type Fact = { name: string; value: ReactNode };
+
+/** Facts beside a picture: one a line, the figure in weight. */
+export function Facts({ facts }: { facts: readonly Fact[] }) {
+  return (
+    <dl className="text-note">
+      {facts.map((fact) => (
+        <div key={fact.name}>
+          <dt className="inline text-gravel">{fact.name}</dt> <dd className="inline font-semibold">{fact.value}</dd>
+        </div>
+      ))}
+    </dl>
+  );
+}

@@ -1,0 +1,46 @@
+import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model, type NonAttribute } from "sequelize";
+import { db } from "#app/lib/db.server.ts";
+import type { Truck } from "./truck.server.ts";
+import type { Material } from "./material.server.ts";
+import type { CalibrationCount } from "./calibration-count.server.ts";
+import type { CalibrationCatch } from "./calibration-catch.server.ts";
+
+/** One truck, one material, one gate opening, one day in the yard. Approved ones are never changed. */
+export class Calibration extends Model<InferAttributes<Calibration>, InferCreationAttributes<Calibration>> {
+  declare id: CreationOptional<number>;
+  declare clientRef: string;
+  declare townId: number;
+  declare truckId: number;
+  declare materialId: number;
+  declare testedOn: string; // local date, YYYY-MM-DD
+  declare gateOpeningIn: number;
+  declare state: CreationOptional<"ready" | "approved">;
+  declare uploadId: CreationOptional<number | null>;
+  declare createdById: CreationOptional<number | null>;
+  declare createdAt: Date;
+  declare approvedAt: CreationOptional<Date | null>;
+  declare approvedById: CreationOptional<number | null>;
+  declare truck?: NonAttribute<Truck>;
+  declare material?: NonAttribute<Material>;
+  declare counts?: NonAttribute<CalibrationCount[]>;
+  declare catches?: NonAttribute<CalibrationCatch[]>;
+}
+
+Calibration.init(
+  {
+    id: { type: DataTypes.INTEGER.UNSIGNED, autoIncrement: true, primaryKey: true },
+    clientRef: { type: DataTypes.STRING(36), allowNull: false },
+    townId: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
+    truckId: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
+    materialId: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
+    testedOn: { type: DataTypes.DATEONLY, allowNull: false },
+    gateOpeningIn: { type: DataTypes.DOUBLE, allowNull: false },
+    state: DataTypes.STRING(24),
+    uploadId: DataTypes.INTEGER.UNSIGNED,
+    createdById: DataTypes.INTEGER.UNSIGNED,
+    createdAt: { type: DataTypes.DATE(3), allowNull: false },
+    approvedAt: DataTypes.DATE(3),
+    approvedById: DataTypes.INTEGER.UNSIGNED,
+  },
+  { sequelize: db, tableName: "calibration" },
+);

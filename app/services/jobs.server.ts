@@ -1,0 +1,76 @@
+import { Op, QueryTypes, type Transaction } from "sequelize";
+import { minuteMs, now } from "#app/lib/clock.server.ts";
+import { db, inTransaction } from "#app/lib/db.server.ts";
+import { log } from "#app/lib/log.server.ts";
+import { Job } from "#app/models/job.server.ts";
+
+const leaseMs = 5 * minuteMs;
+const mostAttempts = 3;
+
+export type NewJob = { kind: string; payload: Record<string, unknown>; dedupeKey: string; createdById: number };
+
+/**
+ * Put work into the queue, in the transaction that asks for it.
+ *
+ * @returns false when the same work was asked for before
+ */
+export async function queueJob(job: NewJob, transaction: Transaction): Promise<boolean> {
+  const known = await Job.count({ where: { dedupeKey: job.dedupeKey }, transaction });
+  if (known > 0) return false;
+  await Job.create({ ...job, runAfter: now(), createdAt: now() }, { transaction });
+  return true;
+}
+
+async function claimJob(): Promise<Job | null> {
+  return inTransaction(async (transaction) => {
+    // Raw, because the query builder drops SKIP LOCKED for this database.
+    const [due] = await db.query<{ id: number }>(
+      `SELECT id FROM job WHERE state = 'ready' AND run_after <= ? ORDER BY run_after, id LIMIT 1 FOR UPDATE SKIP LOCKED`,
+      { type: QueryTypes.SELECT, replacements: [now()], transaction },
+    );
+    if (!due) return null;
+    const job = await Job.findByPk(due.id, { transaction, rejectOnEmpty: true });
+    const lockedUntil = new Date(now().getTime() + leaseMs);
+    return job.update({ state: "running", attempts: job.attempts + 1, lockedUntil }, { transaction });
+  });
+}
+
+/** Does the work of one kind. */
+export type JobHandler = (payload: unknown, requestId: string) => Promise<void>;
+
+/**
+ * Run every job that is due. Handlers must be safe to run twice: a job whose process died is run again.
+ *
+ * @returns how many were finished
+ */
+export async function runDueJobs(handlers: Record<string, JobHandler>, requestId: string): Promise<number> {
+  await Job.update({ state: "ready" }, { where: { state: "running", lockedUntil: { [Op.lt]: now() } } });
+  let finished = 0;
+  for (;;) {
+    const job = await claimJob();
+    if (!job) return finished;
+    try {
+      const handler = handlers[job.kind];
+      if (!handler) throw new Error(`Nobody does jobs of the kind ${job.kind}.`);
+      await handler(job.payload, requestId);
+      await job.update({ state: "done", finishedAt: now(), lastError: null });
+      finished++;
+    } catch (error) {
+      const reason = error instanceof Error ? error.message.slice(0, 300) : "unknown";
+      log.error({ jobId: job.id, kind: job.kind, attempts: job.attempts, reason }, "job failed");
+      await job.update(
+        job.attempts >= mostAttempts
+          ? { state: "failed", lastError: reason }
+          : { state: "ready", runAfter: new Date(now().getTime() + job.attempts * minuteMs), lastError: reason },
+      );
+    }
+  }
+}
+
+export type JobLine = { id: number; kind: string; dedupeKey: string; state: Job["state"]; lastError: string | null };
+
+/** The newest jobs of one kind, newest first. */
+export async function listJobs(kind: string, limit = 20): Promise<JobLine[]> {
+  const jobs = await Job.findAll({ where: { kind }, order: [["id", "DESC"]], limit });
+  return jobs.map(({ id, dedupeKey, state, lastError }) => ({ id, kind, dedupeKey, state, lastError }));
+}

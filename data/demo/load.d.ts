@@ -1,0 +1,7 @@
+import type { Connection } from "mariadb";
+
+export function loadDemo(options: {
+  connection: Connection;
+  issuer: string;
+  now: Date;
+}): Promise<Record<string, number>>;

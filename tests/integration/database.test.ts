@@ -27,7 +27,7 @@ afterAll(async () => {
 });
 
 async function counted(query: string) {
-  const [{ count }] = (await migrator.query(query)) as [{ count: number }];
+  const [{ count }] = await migrator.query<[{ count: number }]>(query);
   return count;
 }
 

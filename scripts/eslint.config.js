@@ -20,6 +20,7 @@ export default tseslint.config(
       // Routes and middleware throw Responses and data() on purpose: the framework's own way to answer early.
       "@typescript-eslint/only-throw-error": "off",
       "@typescript-eslint/require-await": "off",
+      "@typescript-eslint/no-unused-vars": ["error", { argsIgnorePattern: "^_", varsIgnorePattern: "^_" }],
       "@typescript-eslint/restrict-template-expressions": ["error", { allowNumber: true }],
       "@typescript-eslint/consistent-type-assertions": ["error", { assertionStyle: "never" }],
       "no-restricted-properties": [

@@ -89,11 +89,12 @@ export async function readCsv(content: Uint8Array, columns: readonly string[]): 
       max_record_size: limits.recordCharacters,
     }),
   );
+  const records: AsyncIterable<string[]> = parser;
   const rows: FileRow[] = [];
   let heads: string[] | null = null;
   let row = 0;
   try {
-    for await (const record of parser as AsyncIterable<string[]>) {
+    for await (const record of records) {
       row++;
       if (record.length > limits.columns) {
         return refusal("too-wide", `Row ${row} has ${record.length} columns; ${limits.columns} are the most.`);

@@ -165,7 +165,7 @@ export type SignInOutcome =
   | { ok: false; reason: "start-again" | "refused" | "no-account" | "shut-out" | "invitation-spent" };
 
 /** Each attempt is good for one callback within five minutes. */
-async function useAttempt(state: string): Promise<SignInAttempt | null> {
+async function spendAttempt(state: string): Promise<SignInAttempt | null> {
   const stateHash = sha256(state);
   const [used] = await SignInAttempt.update(
     { usedAt: now() },
@@ -186,7 +186,7 @@ export async function finishSignIn(request: Request): Promise<SignInOutcome> {
   // RFC 9207: an answer from another issuer is refused before its code is redeemed.
   if (!state || (issuer !== null && issuer !== env.oidc.issuer)) return { ok: false, reason: "start-again" };
   if (!url.searchParams.get("code") && !url.searchParams.get("error")) return { ok: false, reason: "start-again" };
-  const attempt = await useAttempt(state);
+  const attempt = await spendAttempt(state);
   if (!attempt) return { ok: false, reason: "start-again" };
   let identity: Identity;
   try {

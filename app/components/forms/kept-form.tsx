@@ -18,16 +18,11 @@ type Props = ComponentProps<typeof Form> & {
 
 function keptValues(form: HTMLFormElement) {
   const values = [...new FormData(form)].flatMap(([name, value]) => (typeof value === "string" ? [[name, value]] : []));
-  return JSON.stringify(values);
+  return new URLSearchParams(values).toString();
 }
 
 function putBack(form: HTMLFormElement, text: string) {
-  const parsed: unknown = JSON.parse(text);
-  if (!Array.isArray(parsed)) return;
-  for (const entry of parsed) {
-    if (!Array.isArray(entry)) continue;
-    const [name, value] = entry as unknown[];
-    if (typeof name !== "string" || typeof value !== "string") continue;
+  for (const [name, value] of new URLSearchParams(text)) {
     const control = form.elements.namedItem(name);
     const isText = control instanceof HTMLInputElement && !["hidden", "file", "checkbox"].includes(control.type);
     if (isText || control instanceof HTMLTextAreaElement || control instanceof HTMLSelectElement) control.value = value;
@@ -51,8 +46,9 @@ export function KeptForm({ formKey, ownerId, onSubmit, children, ...rest }: Prop
     if (sessionStorage.getItem(armedKey) === null) return;
     sessionStorage.removeItem(armedKey);
     putBack(form.current, text);
-    // Shown once, after the first paint: the server cannot know what the tab kept.
-    setPutBack(true);
+    // After the first paint: the server cannot know what the tab kept.
+    const frame = requestAnimationFrame(() => setPutBack(true));
+    return () => cancelAnimationFrame(frame);
   }, [key]);
 
   function keep(event: SubmitEvent<HTMLFormElement>) {

@@ -15,7 +15,7 @@ function dataOf({ data, construct }: Inputs): number[] {
 }
 
 test.each(vectors)("$id: mean and standard deviation equal the certified values", ({ inputs, expected, tolerance }) => {
-  const data = dataOf(inputs as Inputs);
+  const data = dataOf(inputs);
   expect(data).toHaveLength(expected.n);
   const relativeError = (found: number, certified: number) => Math.abs(found - certified) / Math.abs(certified);
   expect(relativeError(mean(data), expected.mean)).toBeLessThanOrEqual(Math.max(tolerance.relative, 1e-15));

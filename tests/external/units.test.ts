@@ -14,7 +14,7 @@ const conversions: Record<string, (value: number) => number> = {
 };
 
 test.each(vectors)("$id: the factor equals the definition to the digits given", ({ expected }) => {
-  const [name = "", factor = NaN] = Object.entries(expected)[0] ?? [];
+  const [name = "", factor = NaN] = Object.entries<number | undefined>(expected)[0] ?? [];
   const digits = (String(factor).split(".")[1] ?? "").length;
   expect(conversions[name]?.(1)).toBeCloseTo(factor, digits);
 });

@@ -25,7 +25,9 @@ export function roundTo(value: number, base: number): number {
  * @example protectedNumber(12345, 10, 3) // 12300
  */
 export function protectedNumber(value: number, base: number, significantDigits: number): number {
-  return Number(roundTo(value, base).toPrecision(significantDigits));
+  const magnitude = value === 0 ? 0 : Math.floor(Math.log10(Math.abs(value)));
+  // One rounding only: a figure rounded twice can end up a step too high.
+  return roundTo(value, Math.max(base, 10 ** (magnitude + 1 - significantDigits)));
 }
 
 /** A half-open range between two borders, in words, with an en dash. */

@@ -41,6 +41,15 @@ test("a band whose towns all lay the same is left out, the other stays", () => {
   expect(new Set(rows.map(({ laneMileBand }) => laneMileBand))).toEqual(new Set(["150 and more"]));
 });
 
+test("a band with two figures only is left out, however far apart they are", () => {
+  const two = records([{ laneMiles: 100, towns: 30 }]).map((one, place) => ({
+    ...one,
+    values: { rate: place < 15 ? 203.3 : 417.7 },
+  }));
+  const rows = rowsOf([...two, ...records([{ laneMiles: 200, towns: 30 }])]);
+  expect(new Set(rows.map(({ laneMileBand }) => laneMileBand))).toEqual(new Set(["150 and more"]));
+});
+
 test("when no band passes, nothing goes out", () => {
   const alike = records([{ laneMiles: 100, towns: 60 }]).map((one) => ({ ...one, values: { rate: 241.7 } }));
   expect(protectedRows(alike, defaultPolicy, seededRandom(1))).toEqual({ state: "withheld", reason: "too-similar" });

@@ -16,9 +16,10 @@ function binsOfWidth(sorted: readonly number[], width: number, townsPerBin: numb
     const lastNeeded = sorted[first + townsPerBin - 1];
     if (lastNeeded === undefined) return bins;
     const to = roundTo((Math.floor(lastNeeded / width) + 1) * width, width);
-    const next = sorted.findIndex((value, place) => place >= first && value >= to);
+    let next = first;
+    while ((sorted[next] ?? Number.POSITIVE_INFINITY) < to) next++;
     // What is left must fill a bin of its own; otherwise this one takes it and stays open.
-    if (next === -1 || sorted.length - next < townsPerBin) {
+    if (sorted.length - next < townsPerBin) {
       bins.push({ from, to: null, towns: sorted.length - first });
       return bins;
     }

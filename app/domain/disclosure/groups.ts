@@ -45,12 +45,17 @@ function remainderOf<Id>(whole: readonly Id[], parts: readonly Candidate<Id>[]) 
   return whole.filter((id) => !covered.has(id));
 }
 
+function smallestOf<Id>(parts: readonly Candidate<Id>[]) {
+  return parts.reduce((least, one) => (one.members.length <= least.members.length ? one : least));
+}
+
 /**
  * The candidates that may be published together, and beside what is published already.
  *
  * They are taken in their order, one that conflicts with an earlier one is left out. Then each partition is looked at
  * as a whole: all towns without its published groups are a group too, which anyone can work out, and must pass the
- * same test. If it does not, the partition's smallest group is left out, and so on.
+ * same test. If it does not, another group of the partition is left out: the smallest that settles it, or else the
+ * smallest, and so on.
  *
  * @param candidates - in order of precedence; those of one partition do not overlap and follow each other
  * @param earlier - groups published before, of the same indicator and season
@@ -74,12 +79,14 @@ export function publishableGroups<Id extends number | string>(
       if (!conflictsWith(beside, one.members, minimumDifference)) parts.push(one);
     }
     const whole = keys.has(wholeKey) ? (candidates.find(({ groupKey }) => groupKey === wholeKey)?.members ?? []) : [];
-    let remainder = remainderOf(whole, parts);
-    while (parts.length > 0 && remainder.length > 0 && isExposed(remainder, taken, minimumDifference)) {
-      const smallest = parts.reduce((least, one) => (one.members.length <= least.members.length ? one : least));
-      parts = parts.filter((one) => one !== smallest);
-      remainder = remainderOf(whole, parts);
+    const isExposedWith = (kept: readonly Candidate<Id>[]) =>
+      isExposed(remainderOf(whole, kept), taken, minimumDifference);
+    while (parts.length > 0 && isExposedWith(parts)) {
+      const without = (left: Candidate<Id>) => parts.filter((one) => one !== left);
+      const settling = parts.filter((one) => !isExposedWith(without(one)));
+      parts = without(smallestOf(settling.length > 0 ? settling : parts));
     }
+    const remainder = remainderOf(whole, parts);
     for (const { groupKey, members } of parts) {
       keys.add(groupKey);
       taken.push(members);
@@ -94,5 +101,6 @@ function isExposed<Id extends number | string>(
   taken: readonly (readonly Id[])[],
   minimumDifference: number,
 ) {
+  if (remainder.length === 0) return false;
   return remainder.length < minimumDifference || conflictsWith(taken, remainder, minimumDifference);
 }

@@ -25,7 +25,9 @@ export function roundTo(value: number, base: number): number {
  * @example protectedNumber(12345, 10, 3) // 12300
  */
 export function protectedNumber(value: number, base: number, significantDigits: number): number {
-  return Number(roundTo(value, base).toPrecision(significantDigits));
+  const magnitude = value === 0 ? 0 : Math.floor(Math.log10(Math.abs(value)));
+  // One rounding only: a figure rounded twice can end up a step too high.
+  return roundTo(value, Math.max(base, 10 ** (magnitude + 1 - significantDigits)));
 }
 
 /** A half-open range between two borders, in words, with an en dash. */
@@ -36,14 +38,14 @@ function rangeWords(low: number, high: number | null) {
 /**
  * A number of towns as a band.
  *
- * @param towns - at least the policy's first band border
- * @throws RangeError when there are fewer
+ * @param towns - a whole number ≥ 0
  * @example townBand(17) // "15–24"
  */
 export function townBand(towns: number, { townBands }: Pick<DisclosurePolicy, "townBands"> = defaultPolicy): string {
-  const low = townBands.findLast((border) => towns >= border);
-  if (low === undefined) throw new RangeError(`${towns} towns are too few for a band`);
-  return rangeWords(low, townBands[townBands.indexOf(low) + 1] ?? null);
+  const next = townBands.findIndex((border) => towns < border);
+  if (next === 0) return `under ${townBands[0] ?? 0}`;
+  const place = next === -1 ? townBands.length : next;
+  return rangeWords(townBands[place - 1] ?? 0, townBands[place] ?? null);
 }
 
 /**

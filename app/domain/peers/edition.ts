@@ -2,7 +2,7 @@ import { type Candidate, publishableGroups } from "#app/domain/disclosure/groups
 import type { DisclosurePolicy } from "#app/domain/disclosure/policy.ts";
 import { roundTo } from "#app/domain/disclosure/rounding.ts";
 import { type ProtectedRows, protectedRows } from "#app/domain/disclosure/row-file.ts";
-import { midRank } from "#app/domain/stats/percentile-rank.ts";
+import { midRankAmong } from "#app/domain/stats/percentile-rank.ts";
 import { indicatorAxis } from "./axis.ts";
 import {
   type DownloadCell,
@@ -133,8 +133,8 @@ function cellsOf(indicator: IndicatorKey, groups: readonly Group[], policy: Disc
 }
 
 /** In steps, and never at the very ends: those would say that nobody lies beyond. */
-function placeOf(values: readonly number[], ownValue: number, step: number) {
-  return Math.min(100 - step, Math.max(step, roundTo(midRank(values, ownValue), step)));
+function placeOf(rank: number, step: number) {
+  return Math.min(100 - step, Math.max(step, roundTo(rank, step)));
 }
 
 function placesOf(
@@ -148,14 +148,14 @@ function placesOf(
     .map(({ key, members }) => ({
       key,
       contributorIds: new Set(members.map(({ contributorId }) => contributorId)),
-      values: members.map(({ value }) => value),
+      rankOf: midRankAmong(members.map(({ value }) => value)),
     }));
   return towns.flatMap((town) => {
     const ownValue = town.values[indicator];
     if (ownValue === null) return [];
     const places = placing
       .filter(({ contributorIds }) => contributorIds.has(town.contributorId))
-      .map(({ key, values }) => [key, placeOf(values, ownValue, policy.placeStep)] as const);
+      .map(({ key, rankOf }) => [key, placeOf(rankOf(ownValue), policy.placeStep)] as const);
     return [{ townId: town.townId, indicator, ownValue, places: Object.fromEntries(places) }];
   });
 }

@@ -1,5 +1,35 @@
 import { assertFinite } from "./assert-finite.ts";
 
+/** How many of the sorted values come before the first that fails `isBefore`. */
+function countBefore(sorted: readonly number[], isBefore: (value: number) => boolean) {
+  let [low, high] = [0, sorted.length];
+  while (low < high) {
+    const middle = Math.floor((low + high) / 2);
+    if (isBefore(sorted[middle] ?? Number.NaN)) low = middle + 1;
+    else high = middle;
+  }
+  return low;
+}
+
+/**
+ * A function that gives any value's mid-rank among the values: `midRank` for placing many.
+ *
+ * @param values - one or more finite numbers in any order; sorted once
+ * @returns value => 0 to 100; throws RangeError when the value is not finite
+ * @throws RangeError when the list is empty or holds anything not finite
+ * @example [1, 2, 3].map(midRankAmong([1, 2, 2, 3])) // [12.5, 50, 87.5]
+ */
+export function midRankAmong(values: readonly number[]): (value: number) => number {
+  assertFinite(values);
+  const sorted = [...values].sort((a, b) => a - b);
+  return (value) => {
+    assertFinite([value]);
+    const below = countBefore(sorted, (other) => other < value);
+    const notAbove = countBefore(sorted, (other) => other <= value);
+    return (100 * (below + notAbove)) / 2 / sorted.length;
+  };
+}
+
 /**
  * The percentile rank of a value by the mid-rank: the share of values below it, and half of the share equal to it.
  *
@@ -12,9 +42,5 @@ import { assertFinite } from "./assert-finite.ts";
  * @example midRank([1, 2, 2, 3], 2) // 50
  */
 export function midRank(values: readonly number[], value: number): number {
-  assertFinite(values);
-  assertFinite([value]);
-  const below = values.filter((other) => other < value).length;
-  const equal = values.filter((other) => other === value).length;
-  return (100 * (below + equal / 2)) / values.length;
+  return midRankAmong(values)(value);
 }

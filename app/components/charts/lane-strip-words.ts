@@ -33,6 +33,11 @@ export function heapRangeWords(heap: Heap, spec: LaneStripSpec) {
   return `${figureWords(heap.from, spec)} to ${figureWords(heap.to - 10 ** -decimalsOf(spec), spec)}`;
 }
 
+/** As in a table, where the columns are narrow: "340–379". */
+export function heapColumnWords(heap: Heap, spec: LaneStripSpec) {
+  return heapRangeWords(heap, spec).replace(" to ", "–");
+}
+
 /** "340 to 379 lb: 7 towns", for whoever runs a finger or the arrow keys along the lane. */
 export function heapWords(heap: Heap, peers: ShownPeers, spec: LaneStripSpec) {
   const about = peers.heapKind === "bars" ? "about " : "";

@@ -1,0 +1,73 @@
+import { createServer as createHttpServer } from "node:http";
+import { join } from "node:path";
+import { fileURLToPath, pathToFileURL } from "node:url";
+import { createRequestHandler } from "@react-router/express";
+import express from "express";
+import { defaultHeaders, fillInHeaders, unreadableRequestAnswer } from "./response-headers.js";
+import { projectFolder } from "./settings.js";
+import { stopOnRequest } from "./stop.js";
+
+const methods = ["GET", "HEAD", "POST", "PUT", "PATCH", "DELETE"];
+const bodyLimitBytes = 6_000_000;
+const client = join(projectFolder, "build", "client");
+
+/**
+ * The application behind plain HTTP, not listening yet.
+ *
+ * @param {{ build: import("react-router").ServerBuild, origin: string }} given origin: the public address, the only Host served
+ * @returns {import("node:http").Server}
+ */
+export function createServer({ build, origin }) {
+  const address = new URL(origin);
+  const headers = defaultHeaders(address);
+  const app = express().disable("x-powered-by").set("trust proxy", "loopback");
+  const refuse = (response, status, sentence) => response.status(status).type("text/plain").send(`${sentence}\n`);
+
+  app.use((request, response, next) => {
+    fillInHeaders(response, headers);
+    if (!methods.includes(request.method))
+      return refuse(response.set("Allow", methods.join(", ")), 405, "This method is not served.");
+    if (request.headers.host !== address.host && request.path !== "/healthz")
+      return refuse(response, 421, "This address is not served here.");
+    if (Number(request.headers["content-length"] ?? 0) > bodyLimitBytes) {
+      return refuse(response.set("Connection", "close"), 413, "This is more than 6 MB. Send a smaller file.");
+    }
+    if (!request.url.startsWith("/") || !isDecodable(request.path))
+      return refuse(response, 400, "This address is malformed.");
+    for (const name of Object.keys(request.headers))
+      if (/^x-(react-router|remix|user)-/.test(name)) delete request.headers[name];
+    // The address is the configured one, never what a header claims.
+    request.headers["x-forwarded-proto"] = address.protocol.slice(0, -1);
+    delete request.headers["x-forwarded-host"];
+    next();
+  });
+  const files = { index: false, redirect: false };
+  app.use("/assets", express.static(join(client, "assets"), { ...files, immutable: true, maxAge: "1y" }));
+  app.use(express.static(client, { ...files, maxAge: 0 }));
+  app.use(createRequestHandler({ build, mode: "production" }));
+  app.use((error, _request, response, next) => {
+    console.error(error);
+    if (response.headersSent) return next(error);
+    refuse(response, 500, "Something went wrong on our side. Nothing was stored. Try again in a minute.");
+  });
+
+  const limits = { requestTimeout: 30_000, headersTimeout: 10_000, keepAliveTimeout: 65_000 };
+  return createHttpServer(limits, app).on("clientError", (error, socket) => {
+    if (socket.writable) socket.end(unreadableRequestAnswer(error.code, headers));
+  });
+}
+
+function isDecodable(path) {
+  try {
+    return decodeURIComponent(path) !== "";
+  } catch {
+    return false;
+  }
+}
+
+if (process.argv[1] === fileURLToPath(import.meta.url)) {
+  const build = await import(pathToFileURL(join(projectFolder, "build", "server", "index.js")).href);
+  const server = createServer({ build, origin: process.env.PUBLIC_ORIGIN });
+  server.listen(Number(process.env.PORT), process.env.HOST ?? "127.0.0.1");
+  stopOnRequest(server, () => globalThis.__commonweigh?.close?.());
+}

@@ -67,7 +67,7 @@ export function laneStripSentence(spec: LaneStripSpec, size: StripSize = "desk")
     sentences.push(`Ours is ${words(own.value)} ${unit}${note}.`);
   }
   if (peers.state === "withheld") {
-    sentences.push(`The peers' figures are hidden to protect members: ${peers.reason}.`);
+    sentences.push(`The peers’ figures are hidden to protect members: ${peers.reason}.`);
   } else {
     const interval =
       peers.interval === null ? "" : `, likely between ${words(peers.interval.low)} and ${words(peers.interval.high)}`;

@@ -14,7 +14,7 @@ export function HeapTable({ spec, peers, title }: Props) {
   }));
   return (
     <div className="@container">
-      <table className="hidden w-full border-collapse text-center text-note leading-tight @min-[44rem]:table">
+      <table className="hidden w-full border-collapse text-center text-note leading-tight @min-[52rem]:table">
         <caption className="sr-only">{`${title}: towns by range`}</caption>
         <thead>
           <tr className="border-b-2 border-line align-bottom">
@@ -46,7 +46,7 @@ export function HeapTable({ spec, peers, title }: Props) {
           </tr>
         </tbody>
       </table>
-      <table className="w-full border-collapse text-table @min-[44rem]:hidden">
+      <table className="w-full border-collapse text-table @min-[52rem]:hidden">
         <caption className="sr-only">{`${title}: towns by range`}</caption>
         <thead>
           <tr className="border-b-2 border-line">

@@ -44,13 +44,9 @@ const measures = {
 
 /** Below this width a strip is laid out as on a phone. */
 export const phoneBelowPx = 600;
-export const centreShare = 0.43;
+const centreShare = 0.43;
 export const edgeInset = 4;
 const flagTurnsAt = 0.62;
-
-export function stripWidth(size: StripSize) {
-  return measures[size].width;
-}
 
 /** Where every part of the strip goes. Pure: the same spec, size and width give the same numbers. */
 export function layOutStrip(spec: LaneStripSpec, size: StripSize, widthPx: number = measures[size].width): StripLayout {

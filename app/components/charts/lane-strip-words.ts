@@ -8,7 +8,7 @@ import {
 } from "./lane-strip-spec.ts";
 
 /** Digits after the point that fit the axis: none for pounds, for per cent and wherever the axis is laid out in tens. */
-export function decimalsOf({ unit, axis }: Pick<LaneStripSpec, "unit" | "axis">) {
+function decimalsOf({ unit, axis }: Pick<LaneStripSpec, "unit" | "axis">) {
   if (/^(lb|%)/.test(unit) || axis.step >= 10) return 0;
   if (axis.step >= 1) return 1;
   return Math.min(4, Math.ceil(-Math.log10(axis.step)) + 1);
@@ -26,7 +26,7 @@ export function axisWords(value: number, spec: Pick<LaneStripSpec, "unit" | "axi
 }
 
 /** "340 to 379"; the heap's upper border belongs to the next one. */
-export function heapRangeWords(heap: Heap, spec: LaneStripSpec) {
+function heapRangeWords(heap: Heap, spec: LaneStripSpec) {
   if (heap.from === null && heap.to === null) return "all";
   if (heap.from === null) return `${figureWords(heap.to ?? 0, spec)} and less`;
   if (heap.to === null) return `${figureWords(heap.from, spec)} and more`;

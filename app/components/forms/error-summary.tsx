@@ -1,7 +1,7 @@
 import { useEffect, useRef } from "react";
 import { linkClass } from "#app/components/ui/text-link.tsx";
 
-export type FormError = { fieldId?: string; message: string };
+type FormError = { fieldId?: string; message: string };
 
 type Props = {
   errors: readonly FormError[];

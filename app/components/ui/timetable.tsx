@@ -9,7 +9,7 @@ export type Column = {
   isNumeric?: boolean;
 };
 
-export type Row = {
+type Row = {
   key: string;
   cells: Record<string, ReactNode>;
   /** Our own row, in weight on its wash. */

@@ -16,7 +16,10 @@ type Handled = { request: Request; context: Readonly<RouterContextProvider> };
 export function handleError(error: unknown, { request, context }: Handled) {
   if (request.signal.aborted || isRouteErrorResponse(error)) return;
   const requestId = context.get(requestIdContext);
-  log.error({ requestId, err: error instanceof Error ? { message: error.message, stack: error.stack } : { message: String(error) } });
+  log.error({
+    requestId,
+    err: error instanceof Error ? { message: error.message, stack: error.stack } : { message: String(error) },
+  });
 }
 
 function contentPolicy(nonce: string) {

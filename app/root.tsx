@@ -97,7 +97,8 @@ function useFrame(): FrameHandle {
     const isHandle = typeof handle === "object" && handle !== null;
     return {
       isWall: frame.isWall === true || (isHandle && "isWall" in handle && handle.isWall === true),
-      notForSharing: frame.notForSharing === true || (isHandle && "notForSharing" in handle && handle.notForSharing === true),
+      notForSharing:
+        frame.notForSharing === true || (isHandle && "notForSharing" in handle && handle.notForSharing === true),
     };
   }, {});
 }

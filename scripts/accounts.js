@@ -1,14 +1,7 @@
 import { administer } from "./mariadb.js";
 
 /** Tables whose rows are written once: the application may add to them and read them, nothing else. */
-export const writeOnceTables = [
-  "audit_entry",
-  "edition",
-  "edition_cell",
-  "edition_row",
-  "edition_member",
-  "edition_place",
-];
+const writeOnceTables = ["audit_entry", "edition", "edition_cell", "edition_row", "edition_member", "edition_place"];
 const readOnlyTables = ["schema_migration"];
 
 /**

@@ -11,7 +11,7 @@ import { projectFolder } from "./settings.js";
  * Make a database ready for the application: there, migrated, its accounts with their rights.
  *
  * @param {object} given
- * @param {import("./mariadb.js").Mariadb} given.mariadb
+ * @param {{ host: string, port: number, socket: string }} given.mariadb
  * @param {string} given.database
  * @param {{ migratorPassword: string, appPassword: string }} given.settings
  * @param {(connection: import("mariadb").Connection) => Promise<void>} [given.then] what else to do as the migrator

@@ -1,3 +1,5 @@
+const diskIsFull = "The disk is full. Free some space, then start again.";
+
 /** A problem that a person can cure: the message is one sentence with its remedy, shown without a stack. */
 export class Failure extends Error {}
 
@@ -12,7 +14,7 @@ export function sentenceFor(error) {
   if (error instanceof Failure) return error.message;
   const code = codeOf(error);
   const path = pathOf(error);
-  if (code === "ENOSPC" || code === "EDQUOT") return "The disk is full. Free some space, then start again.";
+  if (code === "ENOSPC" || code === "EDQUOT" || isFullDatabase(error)) return diskIsFull;
   if (code === "EROFS")
     return `${path} lies on a disk that cannot be written to. Copy the folder elsewhere, then start again.`;
   if (code === "EACCES" || code === "EPERM") {
@@ -28,13 +30,18 @@ export function sentenceFor(error) {
  * @returns {string | null}
  */
 export function sentenceForLog(log) {
-  if (/No space left on device|Disk is full|ENOSPC|OS errno 28|errno: 28/i.test(log)) {
-    return "The disk is full. Free some space, then start again.";
+  if (/No space left on device|Disk is full|ENOSPC|OS errno 28|errno: 28|with error 28/i.test(log)) {
+    return diskIsFull;
   }
-  if (/Permission denied|EACCES|OS errno 13|errno: 13/i.test(log)) {
+  if (/Permission denied|EACCES|OS errno 13|errno: 13|with error 13/i.test(log)) {
     return 'This account may not use the data folder .commonweigh. Give it back (chown -R "$(id -un)" .commonweigh) or start as its owner.';
   }
   return null;
+}
+
+/** How the database puts it: its errors 1005, 1021 and 1114. @param {unknown} error */
+function isFullDatabase(error) {
+  return error instanceof Error && /No more room in record file|Disk full|The table '.*' is full/.test(error.message);
 }
 
 /** @param {unknown} error */

@@ -1,5 +1,5 @@
 import { spawnSync } from "node:child_process";
-import { existsSync, lstatSync, readFileSync, statfsSync } from "node:fs";
+import { accessSync, constants, existsSync, lstatSync, readFileSync, statfsSync } from "node:fs";
 import { join } from "node:path";
 import { Failure } from "./failures.js";
 
@@ -138,12 +138,13 @@ function apt(args, title, command) {
 }
 
 /**
- * Refuse to begin on a disk that would fill up half way.
+ * Refuse to begin in a folder that cannot be written to, or on a disk that would fill up half way.
  *
- * @param {string} folder any folder on that disk
+ * @param {string} folder the checkout
  * @param {number} neededMb megabytes that must be free
  */
-export function assertDiskSpace(folder, neededMb) {
+export function assertRoom(folder, neededMb) {
+  accessSync(folder, constants.W_OK);
   const { bavail, bsize } = statfsSync(folder);
   const freeMb = Math.floor((bavail * bsize) / 1_000_000);
   if (freeMb >= neededMb) return;

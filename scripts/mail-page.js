@@ -57,7 +57,7 @@ export function mailNotFoundPage() {
  * @param {string} text
  * @returns {string} the text with everything that means something in HTML made harmless
  */
-export function escapeHtml(text) {
+function escapeHtml(text) {
   const entities = { "&": "&amp;", "<": "&lt;", ">": "&gt;", '"': "&quot;", "'": "&#39;" };
   return text.replace(/[&<>"']/g, (character) => entities[character]);
 }

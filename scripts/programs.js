@@ -12,7 +12,7 @@ import { appEnvironment, plainEnvironment } from "./settings.js";
  * @param {string} given.folder for logs, caught mail and the provider's state
  * @param {ReturnType<typeof import("./settings.js").loadSettings>} given.settings
  * @param {{ app: number, idp: number, mailPage: number, smtp: number }} given.ports
- * @param {import("./mariadb.js").Mariadb} given.mariadb
+ * @param {{ host: string, port: number }} given.mariadb
  * @param {string} given.database
  * @param {boolean} given.devPages
  * @param {boolean} given.hasDemoPeople

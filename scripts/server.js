@@ -3,12 +3,11 @@ import { join } from "node:path";
 import { fileURLToPath, pathToFileURL } from "node:url";
 import { createRequestHandler } from "@react-router/express";
 import express from "express";
+import { refusalOf } from "./refusal.js";
 import { defaultHeaders, fillInHeaders, unreadableRequestAnswer } from "./response-headers.js";
 import { projectFolder } from "./settings.js";
 import { stopOnRequest } from "./stop.js";
 
-const methods = ["GET", "HEAD", "POST", "PUT", "PATCH", "DELETE"];
-const bodyLimitBytes = 6_000_000;
 const client = join(projectFolder, "build", "client");
 
 /**
@@ -21,21 +20,14 @@ export function createServer({ build, origin }) {
   const address = new URL(origin);
   const headers = defaultHeaders(address);
   const app = express().disable("x-powered-by").set("trust proxy", "loopback");
-  const refuse = (response, status, sentence) => response.status(status).type("text/plain").send(`${sentence}\n`);
 
   app.use((request, response, next) => {
     fillInHeaders(response, headers);
-    if (!methods.includes(request.method))
-      return refuse(response.set("Allow", methods.join(", ")), 405, "This method is not served.");
-    if (request.headers.host !== address.host && request.path !== "/healthz")
-      return refuse(response, 421, "This address is not served here.");
-    if (Number(request.headers["content-length"] ?? 0) > bodyLimitBytes) {
-      return refuse(response.set("Connection", "close"), 413, "This is more than 6 MB. Send a smaller file.");
-    }
-    if (!request.url.startsWith("/") || !isDecodable(request.path))
-      return refuse(response, 400, "This address is malformed.");
-    for (const name of Object.keys(request.headers))
+    const refusal = refusalOf(request, address.host);
+    if (refusal !== null) return sendPlain(response.set(refusal.headers ?? {}), refusal.status, refusal.sentence);
+    for (const name of Object.keys(request.headers)) {
       if (/^x-(react-router|remix|user)-/.test(name)) delete request.headers[name];
+    }
     // The address is the configured one, never what a header claims.
     request.headers["x-forwarded-proto"] = address.protocol.slice(0, -1);
     delete request.headers["x-forwarded-host"];
@@ -48,7 +40,7 @@ export function createServer({ build, origin }) {
   app.use((error, _request, response, next) => {
     console.error(error);
     if (response.headersSent) return next(error);
-    refuse(response, 500, "Something went wrong on our side. Nothing was stored. Try again in a minute.");
+    sendPlain(response, 500, "Something went wrong on our side. Nothing was stored. Try again in a minute.");
   });
 
   const limits = { requestTimeout: 30_000, headersTimeout: 10_000, keepAliveTimeout: 65_000 };
@@ -57,12 +49,8 @@ export function createServer({ build, origin }) {
   });
 }
 
-function isDecodable(path) {
-  try {
-    return decodeURIComponent(path) !== "";
-  } catch {
-    return false;
-  }
+function sendPlain(response, status, sentence) {
+  response.status(status).type("text/plain").send(`${sentence}\n`);
 }
 
 if (process.argv[1] === fileURLToPath(import.meta.url)) {

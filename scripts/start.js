@@ -1,10 +1,11 @@
+/* global AbortController */
 import { existsSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { setImmediate } from "node:timers/promises";
 import { box, welcomeLines } from "./box.js";
 import { ensureBuild } from "./build.js";
 import { Failure, sentenceFor } from "./failures.js";
-import { assertDiskSpace, assertNodeVersion, ensureMariadb, ensureNodeModules } from "./install.js";
+import { assertRoom, assertNodeVersion, ensureMariadb, ensureNodeModules } from "./install.js";
 import { startMariadb } from "./mariadb.js";
 import { assertPortsFree, portsFrom } from "./ports.js";
 import { loadSettings, privateFolder, projectFolder } from "./settings.js";
@@ -43,7 +44,7 @@ for (const stop of started.reverse()) await stop();
 async function main() {
   const ports = portsFrom(process.env.PORT);
   assertNodeVersion(process.versions.node);
-  assertDiskSpace(projectFolder, existsSync(join(projectFolder, "node_modules")) ? 400 : 1_500);
+  assertRoom(projectFolder, existsSync(join(projectFolder, "node_modules")) ? 400 : 1_500);
   const settings = loadSettings(privateFolder);
   claimFolder();
   await assertPortsFree(ports);

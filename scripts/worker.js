@@ -1,3 +1,4 @@
+/* global AbortController */
 import { setTimeout as sleep } from "node:timers/promises";
 
 const usualPauseMs = 2_000;

@@ -40,11 +40,18 @@ export function seasonReturnedLetter({ townName, season, address, note, ...to }:
 }
 
 /** To every director, when an edition is out. */
-export function editionLetter({ season, number, address, ...to }: To & { season: string; number: number; address: string }): Letter {
+export function editionLetter({
+  season,
+  number,
+  address,
+  ...to
+}: To & { season: string; number: number; address: string }): Letter {
   return letter({
     ...to,
     subject: `See where you stand in ${season}, edition ${number}`,
-    paragraphs: [`Edition ${number} of ${season} is published. It shows where your town stands among its peers, and no town by name.`],
+    paragraphs: [
+      `Edition ${number} of ${season} is published. It shows where your town stands among its peers, and no town by name.`,
+    ],
     link: { label: "Open Peers", address },
   });
 }

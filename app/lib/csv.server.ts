@@ -41,16 +41,23 @@ function separatorOf(content: Uint8Array, decoder: TextDecoder) {
 }
 
 function columnName(head: string) {
-  return head.trim().toLowerCase().replace(/[\s-]+/g, "_");
+  return head
+    .trim()
+    .toLowerCase()
+    .replace(/[\s-]+/g, "_");
 }
 
 function headProblem(heads: readonly string[], columns: readonly string[]): CsvTable | null {
   const missing = columns.filter((column) => !heads.includes(column));
   const doubled = columns.filter((column) => heads.filter((head) => head === column).length > 1);
-  if (doubled.length > 0) return refusal("doubled-columns", `Two columns have the same head: ${doubled.join(", ")}. Keep one.`);
+  if (doubled.length > 0)
+    return refusal("doubled-columns", `Two columns have the same head: ${doubled.join(", ")}. Keep one.`);
   if (missing.length === 0) return null;
   if (missing.length === columns.length) {
-    return refusal("other-columns", `This file has other columns. It should begin with the heads ${columns.join(", ")}.`);
+    return refusal(
+      "other-columns",
+      `This file has other columns. It should begin with the heads ${columns.join(", ")}.`,
+    );
   }
   return refusal("missing-columns", `These columns are missing: ${missing.join(", ")}. The template has all of them.`);
 }
@@ -67,7 +74,10 @@ export async function readCsv(content: Uint8Array, columns: readonly string[]): 
   if (content.length === 0) return refusal("empty", "This file is empty. Choose the file again, or save it once more.");
   const decoder = decoderFor(content);
   if (!decoder) {
-    return refusal("not-csv", "This is not a CSV file. In a spreadsheet, save it as “CSV, comma separated” and upload that.");
+    return refusal(
+      "not-csv",
+      "This is not a CSV file. In a spreadsheet, save it as “CSV, comma separated” and upload that.",
+    );
   }
   const parser = Readable.from(pieces(content, decoder)).pipe(
     parse({
@@ -104,19 +114,29 @@ export async function readCsv(content: Uint8Array, columns: readonly string[]): 
     }
   } catch (error) {
     if (!(error instanceof CsvError)) throw error;
-    return refusal("broken", `The file cannot be read past row ${row + 1}: a quotation mark is opened and not closed, or stands inside a cell.`);
+    return refusal(
+      "broken",
+      `The file cannot be read past row ${row + 1}: a quotation mark is opened and not closed, or stands inside a cell.`,
+    );
   } finally {
     parser.destroy();
   }
   if (heads === null) return refusal("empty", "This file holds no rows. Choose the file again, or save it once more.");
   if (rows.length === 0) return refusal("only-heads", "This file has its heads but no rows under them.");
   const extra = heads.filter((head) => head !== "" && !columns.includes(head));
-  const problems: FileProblem[] = extra.length === 0 ? [] : [
-    {
-      row: 1, column: null, value: null, code: "extra-columns", severity: "check",
-      message: `These columns are not used: ${extra.slice(0, 20).join(", ")}.`,
-    },
-  ];
+  const problems: FileProblem[] =
+    extra.length === 0
+      ? []
+      : [
+          {
+            row: 1,
+            column: null,
+            value: null,
+            code: "extra-columns",
+            severity: "check",
+            message: `These columns are not used: ${extra.slice(0, 20).join(", ")}.`,
+          },
+        ];
   return { rows, problems };
 }
 
@@ -128,14 +148,4 @@ function guarded(cell: string | number | null): string | number | null {
 /** Rows as CSV after RFC 4180: CRLF line ends, quotes where needed, null as an empty cell. */
 export function writeCsv(heads: readonly string[], rows: readonly (readonly (string | number | null)[])[]): string {
   return stringify([heads, ...rows.map((row) => row.map(guarded))], { record_delimiter: "windows" });
-}
-
-/** A CSV download: never shown in the page, never kept by a shared cache. */
-export function csvResponse(fileName: string, body: string): Response {
-  return new Response(body, {
-    headers: {
-      "Content-Type": "text/csv; charset=utf-8",
-      "Content-Disposition": `attachment; filename="${fileName.replace(/[^\w.-]/g, "-")}"`,
-    },
-  });
 }

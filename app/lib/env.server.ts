@@ -1,6 +1,9 @@
 import { z } from "zod";
 
-const Port = z.string().regex(/^\d{1,5}$/).transform(Number);
+const Port = z
+  .string()
+  .regex(/^\d{1,5}$/)
+  .transform(Number);
 const Secret = z.string().min(24, "at least 24 characters");
 const Origin = z.url().refine((text) => new URL(text).origin === text, "an origin without a path");
 
@@ -49,7 +52,11 @@ function readSettings() {
       password: settings.DB_PASSWORD,
       poolMax: settings.DB_POOL_MAX,
     },
-    oidc: { issuer: settings.OIDC_ISSUER, clientId: settings.OIDC_CLIENT_ID, clientSecret: settings.OIDC_CLIENT_SECRET },
+    oidc: {
+      issuer: settings.OIDC_ISSUER,
+      clientId: settings.OIDC_CLIENT_ID,
+      clientSecret: settings.OIDC_CLIENT_SECRET,
+    },
     smtp: { host: settings.SMTP_HOST, port: settings.SMTP_PORT, from: settings.MAIL_FROM },
     workerToken: settings.WORKER_TOKEN,
     devPages: settings.DEV_PAGES === "1",

@@ -9,7 +9,12 @@ function publicError(status: number, statusText: string, code: string, message: 
 
 /** 404, also for another town's record: the answer is the same as for one that never was. */
 export function notFound(what: string) {
-  return publicError(404, "Not Found", "not-found", `There is no such ${what} here. It may have moved, or the address is mistyped.`);
+  return publicError(
+    404,
+    "Not Found",
+    "not-found",
+    `There is no such ${what} here. It may have moved, or the address is mistyped.`,
+  );
 }
 
 /** 403 */
@@ -40,8 +45,11 @@ export function unavailable(message: string) {
 /** Whether `value` is the body that the functions above make. */
 export function isPublicError(value: unknown): value is PublicError {
   return (
-    typeof value === "object" && value !== null &&
-    "code" in value && typeof value.code === "string" &&
-    "message" in value && typeof value.message === "string"
+    typeof value === "object" &&
+    value !== null &&
+    "code" in value &&
+    typeof value.code === "string" &&
+    "message" in value &&
+    typeof value.message === "string"
   );
 }

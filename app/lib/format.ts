@@ -1,4 +1,4 @@
-import { LB_PER_SHORT_TON } from "#app/domain/units.ts";
+import { lbPerShortTon } from "#app/domain/units.ts";
 
 const whole = new Intl.NumberFormat("en-US", { maximumFractionDigits: 0 });
 const oneDecimal = new Intl.NumberFormat("en-US", { minimumFractionDigits: 1, maximumFractionDigits: 1 });
@@ -6,7 +6,13 @@ const dollars = new Intl.NumberFormat("en-US", { style: "currency", currency: "U
 const day = new Intl.DateTimeFormat("en-GB", { day: "numeric", month: "long", year: "numeric", timeZone: "UTC" });
 const shortDay = new Intl.DateTimeFormat("en-GB", { day: "numeric", month: "short", year: "numeric", timeZone: "UTC" });
 const instant = new Intl.DateTimeFormat("en-GB", {
-  day: "numeric", month: "short", year: "numeric", hour: "2-digit", minute: "2-digit", timeZone: "UTC", timeZoneName: "short",
+  day: "numeric",
+  month: "short",
+  year: "numeric",
+  hour: "2-digit",
+  minute: "2-digit",
+  timeZone: "UTC",
+  timeZoneName: "short",
 });
 
 /** Pounds, pounds per lane mile and counts: whole, with thousands. A dash stands for "not reported". */
@@ -16,7 +22,7 @@ export function formatWhole(value: number | null): string {
 
 /** Pounds as short tons, one decimal. */
 export function formatTons(lb: number | null): string {
-  return lb === null ? "–" : oneDecimal.format(lb / LB_PER_SHORT_TON);
+  return lb === null ? "–" : oneDecimal.format(lb / lbPerShortTon);
 }
 
 /** Any figure to one decimal. */
@@ -59,4 +65,3 @@ export function formatShortDay(date: string): string {
 export function formatInstant(at: Date | string): string {
   return instant.format(typeof at === "string" ? new Date(at) : at);
 }
-

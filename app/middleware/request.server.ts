@@ -25,6 +25,12 @@ export const requestMiddleware: MiddlewareFunction<Response> = async ({ context,
   }
   response.headers.set("X-Request-Id", requestId);
   // The pattern, not the address: addresses of invitations hold secrets.
-  log.info({ requestId, method: request.method, pattern, status: response.status, ms: Math.round(performance.now() - startedAt) });
+  log.info({
+    requestId,
+    method: request.method,
+    pattern,
+    status: response.status,
+    ms: Math.round(performance.now() - startedAt),
+  });
   return response;
 };

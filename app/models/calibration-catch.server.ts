@@ -2,7 +2,10 @@ import { type CreationOptional, DataTypes, type InferAttributes, type InferCreat
 import { db } from "#app/lib/db.server.ts";
 
 /** Material caught over counted revolutions, and weighed. */
-export class CalibrationCatch extends Model<InferAttributes<CalibrationCatch>, InferCreationAttributes<CalibrationCatch>> {
+export class CalibrationCatch extends Model<
+  InferAttributes<CalibrationCatch>,
+  InferCreationAttributes<CalibrationCatch>
+> {
   declare id: CreationOptional<number>;
   declare calibrationId: number;
   declare position: number;

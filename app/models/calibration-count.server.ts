@@ -2,7 +2,10 @@ import { type CreationOptional, DataTypes, type InferAttributes, type InferCreat
 import { db } from "#app/lib/db.server.ts";
 
 /** Shaft revolutions counted at one feed setting. */
-export class CalibrationCount extends Model<InferAttributes<CalibrationCount>, InferCreationAttributes<CalibrationCount>> {
+export class CalibrationCount extends Model<
+  InferAttributes<CalibrationCount>,
+  InferCreationAttributes<CalibrationCount>
+> {
   declare id: CreationOptional<number>;
   declare calibrationId: number;
   declare setting: number;

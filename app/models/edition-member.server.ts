@@ -7,6 +7,7 @@ export class EditionMember extends Model<InferAttributes<EditionMember>, InferCr
   declare indicator: string;
   declare groupKey: string;
   declare contributorIds: unknown;
+  declare figures: unknown;
   declare isPublished: boolean;
 }
 
@@ -16,6 +17,7 @@ EditionMember.init(
     indicator: { type: DataTypes.STRING(40), primaryKey: true },
     groupKey: { type: DataTypes.STRING(60), primaryKey: true },
     contributorIds: { type: DataTypes.JSON, allowNull: false },
+    figures: { type: DataTypes.JSON, allowNull: false },
     isPublished: { type: DataTypes.BOOLEAN, allowNull: false },
   },
   { sequelize: db, tableName: "edition_member" },

@@ -1,13 +1,15 @@
 import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
 
+export type JobState = "ready" | "running" | "done" | "failed";
+
 /** Work that outlives a request. */
 export class Job extends Model<InferAttributes<Job>, InferCreationAttributes<Job>> {
   declare id: CreationOptional<number>;
   declare kind: string;
   declare payload: unknown;
   declare dedupeKey: string;
-  declare state: CreationOptional<"ready" | "running" | "done" | "failed">;
+  declare state: CreationOptional<JobState>;
   declare runAfter: Date;
   declare attempts: CreationOptional<number>;
   declare lockedUntil: CreationOptional<Date | null>;

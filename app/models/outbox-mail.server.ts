@@ -1,6 +1,8 @@
 import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
 
+export type MailState = "queued" | "sending" | "sent" | "uncertain" | "dead";
+
 /** A mail to be sent once. */
 export class OutboxMail extends Model<InferAttributes<OutboxMail>, InferCreationAttributes<OutboxMail>> {
   declare id: CreationOptional<number>;
@@ -11,7 +13,7 @@ export class OutboxMail extends Model<InferAttributes<OutboxMail>, InferCreation
   declare subject: string;
   declare text: string;
   declare html: string;
-  declare state: CreationOptional<"queued" | "sending" | "sent" | "uncertain" | "dead">;
+  declare state: CreationOptional<MailState>;
   declare attempts: CreationOptional<number>;
   declare runAfter: Date;
   declare lastError: CreationOptional<string | null>;

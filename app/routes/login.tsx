@@ -19,7 +19,10 @@ const problems: Record<string, { title: string; words: string }> = {
     title: "That sign-in took too long, or began in another window.",
     words: "Nothing is lost. Start again here.",
   },
-  refused: { title: "The sign-in service did not let you in.", words: "Try again, or ask whoever looks after your account there." },
+  refused: {
+    title: "The sign-in service did not let you in.",
+    words: "Try again, or ask whoever looks after your account there.",
+  },
   "no-account": {
     title: "You are signed in there, but have no place in this network yet.",
     words: "Towns and people come in by invitation. Ask your coordinator for one; it comes by mail.",
@@ -47,7 +50,11 @@ export default function Login({ loaderData: { returnTo, isExpired, problem } }: 
   }, [isExpired]);
   return (
     <Page hasBottomBar={false}>
-      <Answer>{isExpired ? "You have been signed out. Sign in, and the form is as you left it." : "Sign in to your town’s figures."}</Answer>
+      <Answer>
+        {isExpired
+          ? "You have been signed out. Sign in, and the form is as you left it."
+          : "Sign in to your town’s figures."}
+      </Answer>
       <Method>
         {isExpired
           ? "Nothing was sent, and what you typed is kept in this tab."

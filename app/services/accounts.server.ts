@@ -123,7 +123,13 @@ export async function invitePerson(actor: NetworkActor, input: NewInvitation): P
       );
       await recordAudit(
         actor,
-        { action: "invitation.send", entity: "invitation", entityId: invitation.id, townId, detail: { role: input.role } },
+        {
+          action: "invitation.send",
+          entity: "invitation",
+          entityId: invitation.id,
+          townId,
+          detail: { role: input.role },
+        },
         transaction,
       );
       const letter = invitationLetter({
@@ -141,25 +147,55 @@ export async function invitePerson(actor: NetworkActor, input: NewInvitation): P
   }
 }
 
-export type PersonLine = { id: number; name: string; email: string; role: Role; townName: string | null; isActive: boolean };
+export type PersonLine = {
+  id: number;
+  name: string;
+  email: string;
+  role: Role;
+  townName: string | null;
+  isActive: boolean;
+};
 export type InvitationLine = { id: number; name: string; role: Role; townName: string | null; expiresAt: string };
 export type TownChoice = { id: number; name: string };
 
 /** Everybody in the network, the open invitations, and the towns one can be invited for. */
-export async function listPeople(): Promise<{ people: PersonLine[]; invitations: InvitationLine[]; towns: TownChoice[] }> {
+export async function listPeople(): Promise<{
+  people: PersonLine[];
+  invitations: InvitationLine[];
+  towns: TownChoice[];
+}> {
   const [accounts, invitations, towns] = await Promise.all([
-    UserAccount.findAll({ order: [["role", "ASC"], ["name", "ASC"]], limit: 1000 }),
-    Invitation.findAll({ where: { acceptedAt: null, expiresAt: { [Op.gt]: now() } }, order: [["id", "DESC"]], limit: 200 }),
+    UserAccount.findAll({
+      order: [
+        ["role", "ASC"],
+        ["name", "ASC"],
+      ],
+      limit: 1000,
+    }),
+    Invitation.findAll({
+      where: { acceptedAt: null, expiresAt: { [Op.gt]: now() } },
+      order: [["id", "DESC"]],
+      limit: 200,
+    }),
     Town.findAll({ attributes: ["id", "name"], order: [["name", "ASC"]] }),
   ]);
   const nameOf = new Map(towns.map((town) => [town.id, town.name]));
   const townName = (townId: number | null) => (townId === null ? null : (nameOf.get(townId) ?? null));
   return {
     people: accounts.map(({ id, name, email, role, townId, isActive }) => ({
-      id, name, email, role, isActive, townName: townName(townId),
+      id,
+      name,
+      email,
+      role,
+      isActive,
+      townName: townName(townId),
     })),
     invitations: invitations.map(({ id, name, role, townId, expiresAt }) => ({
-      id, name, role, townName: townName(townId), expiresAt: expiresAt.toISOString(),
+      id,
+      name,
+      role,
+      townName: townName(townId),
+      expiresAt: expiresAt.toISOString(),
     })),
     towns: towns.map(({ id, name }) => ({ id, name })),
   };

@@ -1,6 +1,7 @@
-import { Op, type Transaction } from "sequelize";
+import { QueryTypes, type Transaction } from "sequelize";
 import type { Actor } from "#app/context.ts";
 import { now } from "#app/lib/clock.server.ts";
+import { db } from "#app/lib/db.server.ts";
 import { AuditEntry } from "#app/models/audit-entry.server.ts";
 
 type Deed = {
@@ -38,29 +39,22 @@ export async function recordAudit(actor: Actor, deed: Deed, transaction: Transac
 export type TrailEntry = {
   id: number;
   at: string;
-  actorUserId: number | null;
+  actorName: string | null;
   actorRole: string;
-  townId: number | null;
+  townName: string | null;
   action: string;
   entity: string;
   entityId: number | null;
 };
 
-/** The newest entries of the whole network's trail, newest first, at most `limit` older than `beforeId`. */
-export async function listTrail(limit = 100, beforeId: number | null = null): Promise<TrailEntry[]> {
-  const entries = await AuditEntry.findAll({
-    where: beforeId === null ? {} : { id: { [Op.lt]: beforeId } },
-    order: [["id", "DESC"]],
-    limit,
-  });
-  return entries.map((entry) => ({
-    id: entry.id,
-    at: entry.createdAt.toISOString(),
-    actorUserId: entry.actorUserId,
-    actorRole: entry.actorRole,
-    townId: entry.townId,
-    action: entry.action,
-    entity: entry.entity,
-    entityId: entry.entityId,
-  }));
+/** Entries of the whole network's trail, newest first: at most `limit`, older than `beforeId` when that is given. */
+export async function listTrail(limit: number, beforeId: number | null): Promise<TrailEntry[]> {
+  const entries = await db.query<Omit<TrailEntry, "at"> & { at: Date }>(
+    `SELECT a.id, a.created_at AS at, u.name AS actorName, a.actor_role AS actorRole, t.name AS townName, a.action,
+            a.entity, a.entity_id AS entityId
+       FROM audit_entry a LEFT JOIN user_account u ON u.id = a.actor_user_id LEFT JOIN town t ON t.id = a.town_id
+      WHERE a.id < ? ORDER BY a.id DESC LIMIT ?`,
+    { type: QueryTypes.SELECT, replacements: [beforeId ?? 4_294_967_295, limit] },
+  );
+  return entries.map(({ at, ...entry }) => ({ ...entry, at: at.toISOString() }));
 }

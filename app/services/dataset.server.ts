@@ -1,6 +1,6 @@
 import type { PersonActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
-import { indicators } from "#app/domain/peers/indicators.ts";
+import { indicatorKeys, indicators } from "#app/domain/peers/indicators.ts";
 import { writeCsv } from "#app/lib/csv.server.ts";
 import { now } from "#app/lib/clock.server.ts";
 import { inTransaction } from "#app/lib/db.server.ts";
@@ -24,10 +24,18 @@ export async function hasAcceptedTerms(actor: PersonActor): Promise<boolean> {
 export async function acceptTerms(actor: PersonActor): Promise<void> {
   await inTransaction(async (transaction) => {
     const where = { userId: actor.userId, termsVersion };
-    const [, isNew] = await TermsAcceptance.findOrCreate({ where, defaults: { ...where, acceptedAt: now() }, transaction });
+    const [, isNew] = await TermsAcceptance.findOrCreate({
+      where,
+      defaults: { ...where, acceptedAt: now() },
+      transaction,
+    });
     if (!isNew) return;
     const detail = { termsVersion };
-    await recordAudit(actor, { action: "terms.accept", entity: "user_account", entityId: actor.userId, detail }, transaction);
+    await recordAudit(
+      actor,
+      { action: "terms.accept", entity: "user_account", entityId: actor.userId, detail },
+      transaction,
+    );
   });
 }
 
@@ -40,7 +48,11 @@ const cellFields = [
   { name: "lower_quartile", type: "number", description: "A quarter of the towns lie under this; rounded" },
   { name: "median", type: "number", description: "Half of the towns lie under this; rounded" },
   { name: "upper_quartile", type: "number", description: "Three quarters of the towns lie under this; rounded" },
-  { name: "hidden", type: "string", description: "Why the figures are left out, to protect members: few, similar or close" },
+  {
+    name: "hidden",
+    type: "string",
+    description: "Why the figures are left out, to protect members: few, similar or close",
+  },
 ] as const;
 
 const hiddenCodes = { "too-few": "few", "too-similar": "similar", "too-close": "close" } as const;
@@ -59,24 +71,27 @@ function editionName({ seasonStartYear, number }: EditionSummary) {
 async function cellsCsv(edition: EditionSummary): Promise<string> {
   const cells = await listDownloadCells(edition.id);
   const rows = cells.map(({ indicator, groupKey, cell }) => {
-    const unit = indicators.find(({ key }) => key === indicator)?.unit ?? "";
+    const { unit } = indicators[indicator];
     const head = [editionName(edition), indicator, unit, groupKey];
     return cell.state === "shown"
       ? [...head, cell.townBand, cell.lowerQuartile, cell.median, cell.upperQuartile, ""]
       : [...head, "", null, null, null, hiddenCodes[cell.reason]];
   });
-  return writeCsv(cellFields.map((field) => field.name), rows);
+  return writeCsv(
+    cellFields.map((field) => field.name),
+    rows,
+  );
 }
 
 async function rowsCsv(edition: EditionSummary): Promise<string> {
   const rows = await EditionRow.findAll({ where: { editionId: edition.id }, order: [["position", "ASC"]] });
   if (rows.length === 0) throw notFound("row file: it is published only when no town can be told from five");
-  const heads = ["row", "lane_miles_band", ...indicators.map(({ key }) => key.replaceAll("-", "_") + "_lb")];
+  const heads = ["row", "lane_miles_band", ...indicatorKeys.map((key) => key.replaceAll("-", "_") + "_lb")];
   return writeCsv(
     heads,
     rows.map(({ content }) => {
       const row = Row.parse(content);
-      return [row.id, row.laneMileBand, ...indicators.map(({ key }) => row.values[key] ?? null)];
+      return [row.id, row.laneMileBand, ...indicatorKeys.map((key) => row.values[key] ?? null)];
     }),
   );
 }
@@ -135,4 +150,3 @@ export async function getDatasetFile(editionId: number, file: string): Promise<D
       throw notFound("file");
   }
 }
-

@@ -1,6 +1,7 @@
 import { z } from "zod";
 import type { TownActor } from "#app/context.ts";
-import { indicators, type IndicatorKey, isIndicatorKey } from "#app/domain/peers/indicators.ts";
+import type { WithheldReason } from "#app/domain/peers/cell.ts";
+import { type IndicatorKey, indicatorKeys, isIndicatorKey } from "#app/domain/peers/indicators.ts";
 import { notFound } from "#app/lib/errors.ts";
 import { type Audience, EditionCell } from "#app/models/edition-cell.server.ts";
 import { Edition } from "#app/models/edition.server.ts";
@@ -19,11 +20,19 @@ export type EditionSummary = {
 export async function listEditions(): Promise<EditionSummary[]> {
   const editions = await Edition.findAll({
     attributes: ["id", "seasonStartYear", "number", "publishedAt", "townCount", "contentSha256"],
-    order: [["seasonStartYear", "DESC"], ["number", "DESC"]],
+    order: [
+      ["seasonStartYear", "DESC"],
+      ["number", "DESC"],
+    ],
     limit: 200,
   });
   return editions.map(({ id, seasonStartYear, number, publishedAt, townCount, contentSha256 }) => ({
-    id, seasonStartYear, number, townCount, contentSha256, publishedAt: publishedAt.toISOString(),
+    id,
+    seasonStartYear,
+    number,
+    townCount,
+    contentSha256,
+    publishedAt: publishedAt.toISOString(),
   }));
 }
 
@@ -95,7 +104,9 @@ function readCells(editionId: number, audience: Audience): Promise<Placed<unknow
   }).then((cells) => {
     // An edition that is being written shows no cells yet: do not keep that.
     if (cells.length === 0) kept.delete(key);
-    return cells.flatMap(({ indicator, groupKey, cell }) => (isIndicatorKey(indicator) ? [{ indicator, groupKey, cell }] : []));
+    return cells.flatMap(({ indicator, groupKey, cell }) =>
+      isIndicatorKey(indicator) ? [{ indicator, groupKey, cell }] : [],
+    );
   });
   read.catch(() => kept.delete(key));
   kept.set(key, read);
@@ -137,7 +148,9 @@ type OwnPlace = { ownValue: number; places: Record<string, number> };
 
 async function readOwnPlaces(actor: TownActor, editionId: number): Promise<Map<string, OwnPlace>> {
   const places = await EditionPlace.findAll({ where: { editionId, townId: actor.townId } });
-  return new Map(places.map(({ indicator, ownValue, places: ranks }) => [indicator, { ownValue, places: Places.parse(ranks) }]));
+  return new Map(
+    places.map(({ indicator, ownValue, places: ranks }) => [indicator, { ownValue, places: Places.parse(ranks) }]),
+  );
 }
 
 export type StandingRow = {
@@ -152,7 +165,7 @@ export type Standing = {
   editions: EditionSummary[];
   groupKey: string;
   /** The menu of groups: shown with its number of towns, or withheld with the reason. */
-  groups: { key: string; label: string; towns: number | null; reason: string | null }[];
+  groups: { key: string; label: string; towns: number | null; reason: WithheldReason | null }[];
   rows: StandingRow[];
 };
 
@@ -164,7 +177,11 @@ export type Standing = {
  * @returns null while no edition is published
  * @throws 404 when there is no such edition or group
  */
-export async function getStanding(actor: TownActor, editionId: number | null, groupKey: string): Promise<Standing | null> {
+export async function getStanding(
+  actor: TownActor,
+  editionId: number | null,
+  groupKey: string,
+): Promise<Standing | null> {
   const editions = await listEditions();
   const edition = editionId === null ? editions[0] : editions.find(({ id }) => id === editionId);
   if (!edition) {
@@ -185,12 +202,17 @@ export async function getStanding(actor: TownActor, editionId: number | null, gr
       reason: shown.length > 0 ? null : reason,
     };
   });
-  const rows = indicators.flatMap(({ key }): StandingRow[] => {
+  const rows = indicatorKeys.flatMap((key): StandingRow[] => {
     const found = cells.find((cell) => cell.indicator === key && cell.groupKey === groupKey);
     if (!found) return [];
     const place = places.get(key);
     return [
-      { indicator: key, cell: found.cell, ownValue: place?.ownValue ?? null, percentile: place?.places[groupKey] ?? null },
+      {
+        indicator: key,
+        cell: found.cell,
+        ownValue: place?.ownValue ?? null,
+        percentile: place?.places[groupKey] ?? null,
+      },
     ];
   });
   return { edition, editions, groupKey, groups, rows };

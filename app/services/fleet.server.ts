@@ -44,12 +44,20 @@ export type TruckView = {
 
 /** The common-practice band of a material; null where there is none. */
 export function bandOf(kind: MaterialKind): Band | null {
-  return kind === "salt" || kind === "mix" ? commonPracticeBands[kind] : null;
+  return commonPracticeBands[kind] ?? null;
 }
 
 function calibrationView(truck: Truck, calibration: Calibration): CalibrationView {
-  const counts = (calibration.counts ?? []).map(({ setting, revolutions, seconds }) => ({ setting, revolutions, seconds }));
-  const catches = (calibration.catches ?? []).map(({ revolutions, grossLb, tareLb }) => ({ revolutions, grossLb, tareLb }));
+  const counts = (calibration.counts ?? []).map(({ setting, revolutions, seconds }) => ({
+    setting,
+    revolutions,
+    seconds,
+  }));
+  const catches = (calibration.catches ?? []).map(({ revolutions, grossLb, tareLb }) => ({
+    revolutions,
+    grossLb,
+    tareLb,
+  }));
   const kind = calibration.material?.kind ?? "salt";
   const band = bandOf(kind);
   const rate = rateAtSetting(
@@ -78,8 +86,15 @@ async function readTrucks(townId: number, truckId: number | null): Promise<Truck
   const trucks = await Truck.findAll({ where, order: [["unitNumber", "ASC"]], limit: 500 });
   const calibrations = await Calibration.findAll({
     where: truckId === null ? { townId } : { townId, truckId },
-    include: [calibrationMaterial, { association: calibrationCounts, separate: true }, { association: calibrationCatches, separate: true }],
-    order: [["testedOn", "DESC"], ["id", "DESC"]],
+    include: [
+      calibrationMaterial,
+      { association: calibrationCounts, separate: true },
+      { association: calibrationCatches, separate: true },
+    ],
+    order: [
+      ["testedOn", "DESC"],
+      ["id", "DESC"],
+    ],
     limit: 2000,
   });
   return trucks

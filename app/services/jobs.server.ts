@@ -2,7 +2,7 @@ import { Op, QueryTypes, type Transaction } from "sequelize";
 import { minuteMs, now } from "#app/lib/clock.server.ts";
 import { db, inTransaction } from "#app/lib/db.server.ts";
 import { log } from "#app/lib/log.server.ts";
-import { Job } from "#app/models/job.server.ts";
+import { Job, type JobState } from "#app/models/job.server.ts";
 
 const leaseMs = 5 * minuteMs;
 const mostAttempts = 3;
@@ -67,7 +67,7 @@ export async function runDueJobs(handlers: Record<string, JobHandler>, requestId
   }
 }
 
-export type JobLine = { id: number; kind: string; dedupeKey: string; state: Job["state"]; lastError: string | null };
+export type JobLine = { id: number; kind: string; dedupeKey: string; state: JobState; lastError: string | null };
 
 /** The newest jobs of one kind, newest first. */
 export async function listJobs(kind: string, limit = 20): Promise<JobLine[]> {

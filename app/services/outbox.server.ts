@@ -5,7 +5,7 @@ import { db, inTransaction } from "#app/lib/db.server.ts";
 import { env } from "#app/lib/env.server.ts";
 import { log } from "#app/lib/log.server.ts";
 import { sendMail } from "#app/lib/mailer.server.ts";
-import { OutboxMail } from "#app/models/outbox-mail.server.ts";
+import { type MailState, OutboxMail } from "#app/models/outbox-mail.server.ts";
 
 export type Letter = { toName: string; toAddress: string; subject: string; text: string; html: string };
 
@@ -49,7 +49,10 @@ async function claimMail(): Promise<OutboxMail | null> {
 /** The connection broke after the letter was handed over and before the answer: it may be on its way. */
 function mayHaveGoneOut(error: unknown) {
   return (
-    error instanceof Error && "command" in error && error.command === "DATA" && !("responseCode" in error && error.responseCode)
+    error instanceof Error &&
+    "command" in error &&
+    error.command === "DATA" &&
+    !("responseCode" in error && error.responseCode)
   );
 }
 
@@ -66,8 +69,8 @@ async function deliver(mail: OutboxMail): Promise<boolean> {
       mayHaveGoneOut(error)
         ? { state: "uncertain", lastError: reason }
         : wait === undefined
-        ? { state: "dead", lastError: reason }
-        : { state: "queued", runAfter: new Date(now().getTime() + wait), lastError: reason },
+          ? { state: "dead", lastError: reason }
+          : { state: "queued", runAfter: new Date(now().getTime() + wait), lastError: reason },
     );
     return false;
   }
@@ -97,7 +100,7 @@ export type OutboxLine = {
   id: number;
   toName: string;
   subject: string;
-  state: OutboxMail["state"];
+  state: MailState;
   attempts: number;
   createdAt: string;
   sentAt: string | null;

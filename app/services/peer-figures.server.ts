@@ -35,7 +35,10 @@ async function saltCalibrationsInForce(seasonStartYear: number, transaction: Tra
       materialId: materials.map((material) => material.id),
       testedOn: { [Op.between]: [`${seasonStartYear - 1}-07-01`, `${seasonStartYear + 1}-06-30`] },
     },
-    order: [["testedOn", "DESC"], ["id", "DESC"]],
+    order: [
+      ["testedOn", "DESC"],
+      ["id", "DESC"],
+    ],
     transaction,
   });
   const seen = new Set<number>();

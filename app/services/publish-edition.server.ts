@@ -5,6 +5,8 @@ import type { NetworkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { defaultPolicy, publicPolicy } from "#app/domain/disclosure/policy.ts";
 import { buildEdition, engineVersion } from "#app/domain/peers/edition.ts";
+import type { WithheldReason } from "#app/domain/peers/cell.ts";
+import { type IndicatorKey, isIndicatorKey } from "#app/domain/peers/indicators.ts";
 import { editionLetter } from "#app/emails/season.ts";
 import { now } from "#app/lib/clock.server.ts";
 import { inTransaction } from "#app/lib/db.server.ts";
@@ -22,6 +24,7 @@ import { queueMail } from "./outbox.server.ts";
 import { readPeerFigures } from "./peer-figures.server.ts";
 
 const Ids = z.array(z.number().int());
+const Figures = z.array(z.number());
 
 /** The groups that earlier editions of the season have shown: what a new group must not be subtracted from. */
 async function readRegistry(seasonStartYear: number, transaction: Transaction) {
@@ -30,11 +33,11 @@ async function readRegistry(seasonStartYear: number, transaction: Transaction) {
     where: { editionId: editions.map((edition) => edition.id), isPublished: true },
     transaction,
   });
-  return members.map(({ indicator, groupKey, contributorIds }) => ({
-    indicator,
-    groupKey,
-    contributorIds: Ids.parse(contributorIds),
-  }));
+  return members.flatMap(({ indicator, groupKey, contributorIds, figures }) =>
+    isIndicatorKey(indicator)
+      ? [{ indicator, groupKey, contributorIds: Ids.parse(contributorIds), figures: Figures.parse(figures) }]
+      : [],
+  );
 }
 
 async function computeEdition(seasonStartYear: number, transaction: Transaction) {
@@ -49,7 +52,7 @@ export type EditionPreview = {
   nextNumber: number;
   townCount: number;
   /** What members would not be shown, and why. */
-  withheld: { indicator: string; groupLabel: string; reason: string }[];
+  withheld: { indicator: IndicatorKey; groupLabel: string; reason: WithheldReason }[];
   shownCount: number;
   rows: { state: "published"; count: number } | { state: "withheld"; reason: string };
 };
@@ -88,9 +91,16 @@ export async function requestEdition(actor: NetworkActor, seasonStartYear: numbe
     if (number !== (last ?? 0) + 1) return { ok: false, reason: "published-meanwhile" } as const;
     const payload = { seasonStartYear, number, requestedById: actor.userId, isAnnounced: true };
     const dedupeKey = `publish-edition:${seasonStartYear}:${number}`;
-    const isNew = await queueJob({ kind: "publish-edition", payload, dedupeKey, createdById: actor.userId }, transaction);
+    const isNew = await queueJob(
+      { kind: "publish-edition", payload, dedupeKey, createdById: actor.userId },
+      transaction,
+    );
     if (isNew) {
-      await recordAudit(actor, { action: "edition.request", entity: "edition", entityId: null, detail: payload }, transaction);
+      await recordAudit(
+        actor,
+        { action: "edition.request", entity: "edition", entityId: null, detail: payload },
+        transaction,
+      );
     }
     return { ok: true } as const;
   });
@@ -116,8 +126,14 @@ async function storeParts(editionId: number, built: Built, transaction: Transact
     })),
     { transaction },
   );
-  await EditionMember.bulkCreate(built.members.map((member) => ({ editionId, ...member })), { transaction });
-  await EditionPlace.bulkCreate(built.places.map((place) => ({ editionId, ...place })), { transaction });
+  await EditionMember.bulkCreate(
+    built.members.map((member) => ({ editionId, ...member })),
+    { transaction },
+  );
+  await EditionPlace.bulkCreate(
+    built.places.map((place) => ({ editionId, ...place })),
+    { transaction },
+  );
   if (built.rows.state === "published") {
     await EditionRow.bulkCreate(
       built.rows.rows.map((content, index) => ({ editionId, position: index + 1, content })),

@@ -44,7 +44,9 @@ export async function getReviewQueue(_actor: NetworkActor, seasonStartYear: numb
   if (!season) throw notFound("season");
   const ofSeason = figures.filter((figure) => figure.seasonStartYear === seasonStartYear);
   const items = ofSeason.map((figure) => {
-    const earlier = figures.filter((other) => other.townId === figure.townId && other.seasonStartYear < seasonStartYear);
+    const earlier = figures.filter(
+      (other) => other.townId === figure.townId && other.seasonStartYear < seasonStartYear,
+    );
     const view = figureView(figure, earlier);
     return { figure: view, townName: figure.town?.name ?? "", doubts: doubtsOf(view) };
   });
@@ -53,7 +55,9 @@ export async function getReviewQueue(_actor: NetworkActor, seasonStartYear: numb
   return {
     seasonStartYear,
     figuresDueOn: season.figuresDueOn,
-    doubtful: sent.filter((item) => item.doubts > 0).sort((a, b) => b.doubts - a.doubts || a.townName.localeCompare(b.townName)),
+    doubtful: sent
+      .filter((item) => item.doubts > 0)
+      .sort((a, b) => b.doubts - a.doubts || a.townName.localeCompare(b.townName)),
     clean: sent.filter((item) => item.doubts === 0).sort((a, b) => a.townName.localeCompare(b.townName)),
     acceptedCount: items.filter((item) => item.figure.state === "accepted").length,
     returned: items.filter((item) => item.figure.state === "returned"),
@@ -113,7 +117,8 @@ async function settle(
     address: `${env.publicOrigin}/season/${figure.seasonStartYear}`,
   };
   for (const { userId, ...to } of await directorsOf(figure.townId, transaction)) {
-    const written = note === null ? seasonAcceptedLetter({ ...to, ...occasion }) : seasonReturnedLetter({ ...to, ...occasion, note });
+    const written =
+      note === null ? seasonAcceptedLetter({ ...to, ...occasion }) : seasonReturnedLetter({ ...to, ...occasion, note });
     await queueMail(`season-${state}:${figure.id}:${figure.version}:${userId}`, written, transaction);
   }
   return { ok: true } as const;
@@ -127,7 +132,9 @@ async function settle(
  * @throws 404 when nothing was sent under that id
  */
 export async function acceptFigure(actor: NetworkActor, figureId: number, version: number) {
-  return inTransaction((transaction) => settle(actor, figureId, version, { state: "accepted", note: null }, transaction));
+  return inTransaction((transaction) =>
+    settle(actor, figureId, version, { state: "accepted", note: null }, transaction),
+  );
 }
 
 /** Send a season back with a question, which goes to the town by mail. Returns and throws as acceptFigure. */

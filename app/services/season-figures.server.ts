@@ -111,7 +111,10 @@ export async function sendSeason(actor: TownActor, seasonStartYear: number, vers
     if (seasonFindings(amountsOf(figure), []).some((finding) => finding.severity === "error")) {
       return { ok: false, reason: "errors-stand" } as const;
     }
-    await figure.update({ state: "sent", sentAt: now(), sentById: actor.userId, version: version + 1 }, { transaction });
+    await figure.update(
+      { state: "sent", sentAt: now(), sentById: actor.userId, version: version + 1 },
+      { transaction },
+    );
     await recordAudit(
       actor,
       { action: "season-figure.send", entity: "season_figure", entityId: figure.id, detail: { ...amountsOf(figure) } },

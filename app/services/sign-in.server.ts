@@ -144,7 +144,10 @@ export async function startSignIn(request: Request, start: Start): Promise<Respo
       address.searchParams.set("login_hint", start.hint);
       address.searchParams.set("prompt", "login");
     }
-    await SignInAttempt.destroy({ where: { createdAt: { [Op.lt]: new Date(now().getTime() - 2 * attemptMs) } }, limit: 500 });
+    await SignInAttempt.destroy({
+      where: { createdAt: { [Op.lt]: new Date(now().getTime() - 2 * attemptMs) } },
+      limit: 500,
+    });
     await SignInAttempt.create({
       stateHash: sha256(state),
       returnTo: safeReturnTo(start.returnTo, env.publicOrigin),

@@ -34,7 +34,9 @@ export async function getTownToday(actor: TownActor): Promise<TownToday> {
   const fleet = trucks
     .filter((truck) => truck.isInService && truck.spreaderKind !== "liquid-tanks")
     .map((truck): FleetLine => {
-      const salt = truck.calibrations.find(({ materialKind, state }) => materialKind === "salt" && state === "approved");
+      const salt = truck.calibrations.find(
+        ({ materialKind, state }) => materialKind === "salt" && state === "approved",
+      );
       return {
         truckId: truck.id,
         unitNumber: truck.unitNumber,
@@ -48,7 +50,11 @@ export async function getTownToday(actor: TownActor): Promise<TownToday> {
   const ready = trucks.flatMap((truck) => truck.calibrations).filter(({ state }) => state === "ready");
   return {
     today,
-    season: season && { seasonStartYear: season.seasonStartYear, figuresDueOn: season.figuresDueOn, figure: season.figure },
+    season: season && {
+      seasonStartYear: season.seasonStartYear,
+      figuresDueOn: season.figuresDueOn,
+      figure: season.figure,
+    },
     readyCount: ready.length,
     fleet,
     edition: editions[0] ?? null,
@@ -56,7 +62,14 @@ export async function getTownToday(actor: TownActor): Promise<TownToday> {
 }
 
 export type NetworkToday = {
-  season: { seasonStartYear: number; doubtful: number; clean: number; accepted: number; missing: number; returned: number } | null;
+  season: {
+    seasonStartYear: number;
+    doubtful: number;
+    clean: number;
+    accepted: number;
+    missing: number;
+    returned: number;
+  } | null;
   edition: EditionSummary | null;
 };
 

@@ -78,7 +78,11 @@ export type TokenLine = { id: number; name: string; createdAt: string; expiresAt
 
 /** The actor's open tokens, newest first. */
 export async function listTokens(actor: AnalystActor): Promise<TokenLine[]> {
-  const tokens = await ApiToken.findAll({ where: { userId: actor.userId, revokedAt: null }, order: [["id", "DESC"]], limit: 100 });
+  const tokens = await ApiToken.findAll({
+    where: { userId: actor.userId, revokedAt: null },
+    order: [["id", "DESC"]],
+    limit: 100,
+  });
   return tokens.map((token) => ({
     id: token.id,
     name: token.name,

@@ -22,7 +22,14 @@ export type WorkshopLine = {
 /** The network's workshops, the latest first. Titles and days only: members may see them too. */
 export async function listWorkshops(_actor: PersonActor): Promise<WorkshopLine[]> {
   const [workshops, boards] = await Promise.all([
-    Workshop.findAll({ include: [workshopEdition], order: [["heldOn", "DESC"], ["id", "DESC"]], limit: 100 }),
+    Workshop.findAll({
+      include: [workshopEdition],
+      order: [
+        ["heldOn", "DESC"],
+        ["id", "DESC"],
+      ],
+      limit: 100,
+    }),
     Board.findAll({ attributes: ["workshopId"], limit: 5000 }),
   ]);
   return workshops.map((workshop) => ({
@@ -62,7 +69,13 @@ export async function createWorkshop(actor: NetworkActor, input: NewWorkshop): P
   }
 }
 
-export type BoardView = { position: number; indicator: IndicatorKey; groupKey: string; question: string; cell: WallCell };
+export type BoardView = {
+  position: number;
+  indicator: IndicatorKey;
+  groupKey: string;
+  question: string;
+  cell: WallCell;
+};
 export type WorkshopView = {
   id: number;
   title: string;
@@ -115,11 +128,19 @@ export async function addBoard(actor: NetworkActor, workshopId: number, input: N
       if (!workshop) throw notFound("workshop");
       const cells = await listWallCells(workshop.editionId);
       const { clientRef, indicator, groupKey, question } = input;
-      if (!cells.some((cell) => cell.indicator === indicator && cell.groupKey === groupKey)) throw notFound("peer group");
+      if (!cells.some((cell) => cell.indicator === indicator && cell.groupKey === groupKey))
+        throw notFound("peer group");
       const last = await Board.max<number | null, Board>("position", { where: { workshopId }, transaction });
       const position = (last ?? 0) + 1;
-      const board = await Board.create({ clientRef, workshopId, position, indicator, groupKey, question }, { transaction });
-      await recordAudit(actor, { action: "board.add", entity: "board", entityId: board.id, detail: { workshopId } }, transaction);
+      const board = await Board.create(
+        { clientRef, workshopId, position, indicator, groupKey, question },
+        { transaction },
+      );
+      await recordAudit(
+        actor,
+        { action: "board.add", entity: "board", entityId: board.id, detail: { workshopId } },
+        transaction,
+      );
     });
   } catch (error) {
     if (!isDuplicate(error)) throw error;

@@ -42,6 +42,7 @@ export async function up({ sql }) {
     indicator VARCHAR(40) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
     group_key VARCHAR(60) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
     contributor_ids JSON NOT NULL,
+    figures JSON NOT NULL COMMENT 'one a contributor, in the same order',
     is_published TINYINT(1) NOT NULL,
     PRIMARY KEY (edition_id, indicator, group_key),
     CONSTRAINT edition_member_of FOREIGN KEY (edition_id) REFERENCES edition (id)

@@ -7,7 +7,9 @@ export function FindingsList({ findings }: { findings: readonly Finding[] }) {
     <ul className="mt-2 max-w-method">
       {sorted.map(({ code, severity, message }) => (
         <li key={`${code} ${message}`} className="border-b border-rule py-2.5">
-          <b className={severity === "error" ? "text-rust" : ""}>{severity === "error" ? "Cannot stand: " : "Please check: "}</b>
+          <b className={severity === "error" ? "text-rust" : ""}>
+            {severity === "error" ? "Cannot stand: " : "Please check: "}
+          </b>
           {message}
         </li>
       ))}

@@ -13,7 +13,10 @@ export function groupProblems(problems: readonly FileProblem[]) {
   }
   return [...groups]
     .map(([key, own]) => ({ key: key.replaceAll(" ", "-"), severity: own[0]?.severity ?? "error", problems: own }))
-    .sort((a, b) => Number(b.severity === "error") - Number(a.severity === "error") || b.problems.length - a.problems.length);
+    .sort(
+      (a, b) =>
+        Number(b.severity === "error") - Number(a.severity === "error") || b.problems.length - a.problems.length,
+    );
 }
 
 export function groupTitle(problems: readonly FileProblem[]) {
@@ -47,7 +50,9 @@ export function ProblemGroup({ id, problems }: { id: string; problems: readonly 
         }))}
       />
       {problems.length > shown.length && (
-        <p className="mt-2 text-note text-gravel">{problems.length - shown.length} more are in the list you can download.</p>
+        <p className="mt-2 text-note text-gravel">
+          {problems.length - shown.length} more are in the list you can download.
+        </p>
       )}
     </section>
   );

@@ -30,7 +30,11 @@ export function SeasonTable({ seasons, caption }: { seasons: readonly SeasonColu
         isFolding={false}
         columns={[
           { key: "line", label: "" },
-          ...seasons.map(({ seasonStartYear }) => ({ key: String(seasonStartYear), label: seasonLabel(seasonStartYear), isNumeric: true })),
+          ...seasons.map(({ seasonStartYear }) => ({
+            key: String(seasonStartYear),
+            label: seasonLabel(seasonStartYear),
+            isNumeric: true,
+          })),
         ]}
         rows={lines.map(({ label, read }) => ({
           key: label,

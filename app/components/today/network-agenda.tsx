@@ -8,7 +8,14 @@ import { formatShortDay } from "#app/lib/format.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
 
 type Props = {
-  season: { seasonStartYear: number; doubtful: number; clean: number; accepted: number; missing: number; returned: number } | null;
+  season: {
+    seasonStartYear: number;
+    doubtful: number;
+    clean: number;
+    accepted: number;
+    missing: number;
+    returned: number;
+  } | null;
   edition: { id: number; seasonStartYear: number; number: number; publishedAt: string } | null;
 };
 
@@ -20,32 +27,53 @@ function steps({ season, edition }: Props): Step[] {
     const label = seasonLabel(season.seasonStartYear);
     if (season.doubtful > 0) {
       found.push({
-        key: "doubtful", when: "Now", whenDetail: "5 minutes each", to: "/network/review", button: "Open the review",
+        key: "doubtful",
+        when: "Now",
+        whenDetail: "5 minutes each",
+        to: "/network/review",
+        button: "Open the review",
         title: `Look at ${countWords(season.doubtful, "doubtful season", "doubtful seasons")} of ${label}`,
         children: "Most doubtful first, each with its reason and a question drafted.",
       });
     }
     if (season.clean > 0) {
       found.push({
-        key: "clean", when: "Today", whenDetail: "1 minute", to: "/network/review", button: "Open the review",
+        key: "clean",
+        when: "Today",
+        whenDetail: "1 minute",
+        to: "/network/review",
+        button: "Open the review",
         title: `Accept ${countWords(season.clean, "season that passed", "seasons that passed")} every check`,
       });
     }
     if (edition?.seasonStartYear !== season.seasonStartYear && season.accepted > 0) {
       found.push({
-        key: "edition", when: "Next", to: "/network/editions", button: "Prepare the edition", title: `Publish edition 1 of ${label}`,
+        key: "edition",
+        when: "Next",
+        to: "/network/editions",
+        button: "Prepare the edition",
+        title: `Publish edition 1 of ${label}`,
         children: `${sentenceStart(countWords(season.accepted, "town is", "towns are"))} accepted; ${countWords(season.missing, "has", "have")} not sent.`,
       });
     }
   }
   if (edition) {
     found.push({
-      key: "workshop", when: "When you like", whenDetail: `since ${formatShortDay(edition.publishedAt.slice(0, 10))}`, to: "/workshops",
+      key: "workshop",
+      when: "When you like",
+      whenDetail: `since ${formatShortDay(edition.publishedAt.slice(0, 10))}`,
+      to: "/workshops",
       button: "Prepare a workshop",
       title: `Prepare a workshop on ${seasonLabel(edition.seasonStartYear)}, edition ${edition.number}`,
     });
   }
-  found.push({ key: "people", when: "When you like", to: "/network/people", button: "Invite people", title: "Invite people of a town" });
+  found.push({
+    key: "people",
+    when: "When you like",
+    to: "/network/people",
+    button: "Invite people",
+    title: "Invite people of a town",
+  });
   return found;
 }
 
@@ -70,7 +98,9 @@ export function NetworkAgenda(props: Props) {
           <Agenda
             items={items.map(({ button, ...step }, position) => ({
               ...step,
-              ...(position === 0 && step.to !== undefined ? { action: <ButtonLink to={step.to}>{button}</ButtonLink> } : {}),
+              ...(position === 0 && step.to !== undefined
+                ? { action: <ButtonLink to={step.to}>{button}</ButtonLink> }
+                : {}),
             }))}
           />
         )}

@@ -36,20 +36,37 @@ function seasonStep({ season, isDirector, today }: Props): Step | null {
   switch (season.figure?.state) {
     case undefined:
       return {
-        key, when, whenDetail: "10 minutes", title: `Put in the figures of ${label}`, to: "/uploads?kind=season-figures",
-        button: "Upload the figures", children: `One row of a spreadsheet is enough; ${due}.`,
+        key,
+        when,
+        whenDetail: "10 minutes",
+        title: `Put in the figures of ${label}`,
+        to: "/uploads?kind=season-figures",
+        button: "Upload the figures",
+        children: `One row of a spreadsheet is enough; ${due}.`,
         sentence: `The figures of ${label} are missing.`,
       };
     case "returned":
       return {
-        key, when: "Now", whenDetail: "10 minutes", title: `Answer the coordinator about ${label}`, to, button: "Open the season",
-        children: season.figure?.reviewNote ?? "", sentence: `The coordinator has a question about ${label}.`,
+        key,
+        when: "Now",
+        whenDetail: "10 minutes",
+        title: `Answer the coordinator about ${label}`,
+        to,
+        button: "Open the season",
+        children: season.figure?.reviewNote ?? "",
+        sentence: `The coordinator has a question about ${label}.`,
       };
     case "draft":
       return {
-        key, when, whenDetail: "5 minutes", title: isDirector ? `Look over ${label} and send it in` : `${label} waits for the director`,
-        to, button: isDirector ? "Look it over" : "Open the season",
-        children: isDirector ? `The figures are in; ${due}.` : "The figures are in. The director looks them over and sends them.",
+        key,
+        when,
+        whenDetail: "5 minutes",
+        title: isDirector ? `Look over ${label} and send it in` : `${label} waits for the director`,
+        to,
+        button: isDirector ? "Look it over" : "Open the season",
+        children: isDirector
+          ? `The figures are in; ${due}.`
+          : "The figures are in. The director looks them over and sends them.",
         sentence: isDirector ? `${label} is ready for you to send in.` : `${label} is in and waits for the director.`,
       };
     default:
@@ -62,7 +79,11 @@ function fleetSteps({ fleet, readyCount, isDirector }: Props): Step[] {
   const steps: Step[] = [];
   if (readyCount > 0 && isDirector) {
     steps.push({
-      key: "approve", when: "Now", whenDetail: "5 minutes", to: "/fleet", button: "Look at them",
+      key: "approve",
+      when: "Now",
+      whenDetail: "5 minutes",
+      to: "/fleet",
+      button: "Look at them",
       title: `Approve ${countWords(readyCount, "calibration", "calibrations")}`,
       children: "They have been weighed and wait for you. What you approve is what counts for the truck.",
       sentence: `${sentenceStart(countWords(readyCount, "calibration waits", "calibrations wait"))} for you.`,
@@ -71,9 +92,14 @@ function fleetSteps({ fleet, readyCount, isDirector }: Props): Step[] {
   if (due.length > 0) {
     const names = listWords(due.map((line) => line.unitNumber));
     steps.push({
-      key: "due", when: "This week", whenDetail: "20 minutes each", to: "/uploads?kind=calibrations", button: "Upload the readings",
+      key: "due",
+      when: "This week",
+      whenDetail: "20 minutes each",
+      to: "/uploads?kind=calibrations",
+      button: "Upload the readings",
       title: `Calibrate ${due.length === 1 ? "truck" : "trucks"} ${names} for salt`,
-      children: "Each truck is weighed once before the season, and again after work on gate, hydraulics, feed or controller.",
+      children:
+        "Each truck is weighed once before the season, and again after work on gate, hydraulics, feed or controller.",
       sentence: `${sentenceStart(countWords(due.length, "truck is", "trucks are"))} due for calibration.`,
     });
   }
@@ -84,8 +110,12 @@ function editionStep({ edition }: Props): Step | null {
   if (!edition) return null;
   const label = `${seasonLabel(edition.seasonStartYear)}, edition ${edition.number}`;
   return {
-    key: "edition", when: "When you like", whenDetail: `since ${formatShortDay(edition.publishedAt.slice(0, 10))}`, to: "/peers",
-    title: `Read where you stand in ${label}`, button: "Open Peers",
+    key: "edition",
+    when: "When you like",
+    whenDetail: `since ${formatShortDay(edition.publishedAt.slice(0, 10))}`,
+    to: "/peers",
+    title: `Read where you stand in ${label}`,
+    button: "Open Peers",
     children: "Your own place among towns like yours. Nobody else sees it.",
     sentence: `Edition ${edition.number} of ${seasonLabel(edition.seasonStartYear)} shows where you stand.`,
   };
@@ -94,7 +124,10 @@ function editionStep({ edition }: Props): Step | null {
 /** What waits for a town, in the order to do it. */
 export function TownAgenda(props: Props) {
   const steps = [seasonStep(props), ...fleetSteps(props), editionStep(props)].filter((step) => step !== null);
-  const answer = steps.slice(0, 2).map((step) => step.sentence).join(" ");
+  const answer = steps
+    .slice(0, 2)
+    .map((step) => step.sentence)
+    .join(" ");
   return (
     <Page>
       <Answer>{answer === "" ? "Nothing waits for you." : answer}</Answer>
@@ -122,7 +155,9 @@ export function TownAgenda(props: Props) {
           <Agenda
             items={steps.map(({ button, sentence: _sentence, ...step }, position) => ({
               ...step,
-              ...(position === 0 && step.to !== undefined ? { action: <ButtonLink to={step.to}>{button}</ButtonLink> } : {}),
+              ...(position === 0 && step.to !== undefined
+                ? { action: <ButtonLink to={step.to}>{button}</ButtonLink> }
+                : {}),
             }))}
           />
         )}

@@ -88,7 +88,12 @@ function readReading(fileRow: FileRow, problems: FileProblem[]): { count: Count 
   const turns = { what: "revolutions", min: 0.25, max: 5000 };
   switch (cellText(fileRow, "reading").toLowerCase()) {
     case "count": {
-      const setting = cellNumber(fileRow, "setting", { what: "feed setting", min: 1, max: 40, isWhole: true }, problems);
+      const setting = cellNumber(
+        fileRow,
+        "setting",
+        { what: "feed setting", min: 1, max: 40, isWhole: true },
+        problems,
+      );
       const revolutions = cellNumber(fileRow, "revolutions", turns, problems);
       const seconds = cellNumber(fileRow, "seconds", { what: "seconds counted", min: 5, max: 3600 }, problems);
       if (problems.length > before || setting === null || revolutions === null || seconds === null) return null;
@@ -97,7 +102,12 @@ function readReading(fileRow: FileRow, problems: FileProblem[]): { count: Count 
     case "catch": {
       const revolutions = cellNumber(fileRow, "revolutions", turns, problems);
       const grossLb = cellNumber(fileRow, "gross_lb", { what: "gross weight, lb", min: 0, max: 5000 }, problems);
-      const tare = cellNumber(fileRow, "tare_lb", { what: "tare weight, lb", min: 0, max: 5000, mayBeBlank: true }, problems);
+      const tare = cellNumber(
+        fileRow,
+        "tare_lb",
+        { what: "tare weight, lb", min: 0, max: 5000, mayBeBlank: true },
+        problems,
+      );
       const tareLb = tare ?? 0;
       if (problems.length > before || revolutions === null || grossLb === null) return null;
       if (tareLb >= grossLb) {
@@ -132,10 +142,16 @@ function wholeProblems(staged: StagedCalibration, known: CalibrationKnowledge): 
     gateMaxIn: truck?.gateMaxIn ?? null,
     workingSetting: truck?.workingSetting ?? null,
   });
-  for (const { code, severity, message } of findings) problems.push({ ...at, code, severity, message: `${name}: ${message}` });
+  for (const { code, severity, message } of findings)
+    problems.push({ ...at, code, severity, message: `${name}: ${message}` });
   const key = calibrationKey(staged.truckId, staged.materialId, staged.testedOn, staged.gateOpeningIn);
   if (known.storedKeys.has(key)) {
-    problems.push({ ...at, code: "stored-already", severity: "error", message: `${name} is stored already, with this gate.` });
+    problems.push({
+      ...at,
+      code: "stored-already",
+      severity: "error",
+      message: `${name} is stored already, with this gate.`,
+    });
   }
   return problems;
 }
@@ -170,7 +186,9 @@ export function readCalibrationRows(rows: readonly FileRow[], known: Calibration
     byKey.set(key, staged);
     if ("caught" in reading) staged.catches.push(reading.caught);
     else if (staged.counts.some((other) => other.setting === reading.count.setting)) {
-      problems.push(cellProblem(fileRow, "setting", "counted-twice", "This setting is counted twice for the same calibration."));
+      problems.push(
+        cellProblem(fileRow, "setting", "counted-twice", "This setting is counted twice for the same calibration."),
+      );
     } else staged.counts.push(reading.count);
   }
   const staged = [...byKey.values()];

@@ -64,7 +64,12 @@ function readAmounts(fileRow: FileRow, problems: FileProblem[]): SeasonAmounts |
   const before = problems.length;
   const tons = { min: 0, max: 500_000 };
   const laneMiles = cellNumber(fileRow, "lane_miles", { what: "lane miles", min: 0.1, max: 10_000 }, problems);
-  const eventCount = cellNumber(fileRow, "events", { what: "number of events", min: 0, max: 120, isWhole: true }, problems);
+  const eventCount = cellNumber(
+    fileRow,
+    "events",
+    { what: "number of events", min: 0, max: 120, isWhole: true },
+    problems,
+  );
   const saltTons = cellNumber(fileRow, "salt_tons", { what: "tons of salt", ...tons }, problems);
   const mixTons = cellNumber(fileRow, "mix_tons", { what: "tons of sand and salt mix", ...tons }, problems);
   const sandTons = cellNumber(fileRow, "sand_tons", { what: "tons of sand and grit", ...tons }, problems);
@@ -114,7 +119,9 @@ export function readSeasonRows(rows: readonly FileRow[], known: SeasonKnowledge)
     const amounts = readAmounts(fileRow, problems);
     if (seasonStartYear === null || amounts === null) continue;
     if (staged.some((other) => other.seasonStartYear === seasonStartYear)) {
-      problems.push(cellProblem(fileRow, "season", "twice", `${seasonLabel(seasonStartYear)} stands twice in this file.`));
+      problems.push(
+        cellProblem(fileRow, "season", "twice", `${seasonLabel(seasonStartYear)} stands twice in this file.`),
+      );
       continue;
     }
     const earlier = known.earlier

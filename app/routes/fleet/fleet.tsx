@@ -26,7 +26,9 @@ export async function loader({ context }: Route.LoaderArgs) {
 
 export async function action({ context, request }: Route.ActionArgs) {
   const form = await request.formData();
-  const ids = form.getAll("calibrationId").flatMap((id) => (typeof id === "string" && /^[1-9]\d{0,9}$/.test(id) ? [Number(id)] : []));
+  const ids = form
+    .getAll("calibrationId")
+    .flatMap((id) => (typeof id === "string" && /^[1-9]\d{0,9}$/.test(id) ? [Number(id)] : []));
   await approveCalibrations(townActor(context), ids);
   return redirect("/fleet");
 }
@@ -70,7 +72,8 @@ export default function Fleet({ loaderData: { isDirector, today, trucks } }: Rou
       <Page>
         <Answer>No truck is in the fleet yet.</Answer>
         <EmptyState title="Trucks and their calibrations belong here">
-          The coordinator puts the first trucks in with your town. Then each truck is weighed with each material it carries.
+          The coordinator puts the first trucks in with your town. Then each truck is weighed with each material it
+          carries.
         </EmptyState>
       </Page>
     );
@@ -93,8 +96,8 @@ export default function Fleet({ loaderData: { isDirector, today, trucks } }: Rou
         {due > 0 && `${sentenceStart(countWords(due, "is", "are"))} due for calibration.`}
       </Answer>
       <Method>
-        Rates are measured: shaft turns counted at each setting, one turn’s catch weighed. The band is common practice, 250 to
-        300 lb per lane mile for straight salt; it is a yardstick and tells no driver how much to apply.
+        Rates are measured: shaft turns counted at each setting, one turn’s catch weighed. The band is common practice,
+        250 to 300 lb per lane mile for straight salt; it is a yardstick and tells no driver how much to apply.
       </Method>
       <p className="mt-4">
         <ButtonLink to="/uploads?kind=calibrations" variant={ready.length > 0 && isDirector ? "quiet" : "primary"}>

@@ -20,7 +20,9 @@ export async function loader({ context, params }: Route.LoaderArgs) {
   return { truck: await getTruck(townActor(context), idParam(params.truckId, "truck")) };
 }
 
-export const meta: Route.MetaFunction = ({ loaderData }) => [{ title: `Truck ${loaderData?.truck.unitNumber ?? ""} · Commonweigh` }];
+export const meta: Route.MetaFunction = ({ loaderData }) => [
+  { title: `Truck ${loaderData?.truck.unitNumber ?? ""} · Commonweigh` },
+];
 
 type Calibration = TruckView["calibrations"][number];
 
@@ -101,14 +103,15 @@ export default function Truck({ loaderData: { truck } }: Route.ComponentProps) {
       </Answer>
       <Method>
         Weighed {formatShortDay(newest.testedOn)} at a gate of {formatInches(newest.gateOpeningIn)} in, one{" "}
-        {truck.lanesPerPass === 1 ? "lane" : `pass over ${truck.lanesPerPass} lanes`}. Rates are yardsticks: policy, road,
-        weather and the person responsible decide how much is applied.
+        {truck.lanesPerPass === 1 ? "lane" : `pass over ${truck.lanesPerPass} lanes`}. Rates are yardsticks: policy,
+        road, weather and the person responsible decide how much is applied.
       </Method>
       <div className="mt-6 overflow-x-auto">
         <RateTable truck={truck} calibration={newest} />
       </div>
       <p className="mt-2 text-note text-gravel">
-        <InBand>in the band</InBand> &ensp; <Over>above it</Over> &ensp; <Under>under it</Under> &ensp; tinted row: the working setting
+        <InBand>in the band</InBand> &ensp; <Over>above it</Over> &ensp; <Under>under it</Under> &ensp; tinted row: the
+        working setting
       </p>
       <Heading>All calibrations</Heading>
       <Timetable

@@ -50,7 +50,9 @@ function sentence(season: Season) {
   if (!figure) return `No figures of ${label} are in yet.`;
   const { saltTonsPerLaneMile, saltLbPerLaneMileEvent } = figure.totals;
   const perEvent =
-    saltLbPerLaneMileEvent === null ? "" : `, ${formatWhole(saltLbPerLaneMileEvent)} lb in each of ${figure.amounts.eventCount} events`;
+    saltLbPerLaneMileEvent === null
+      ? ""
+      : `, ${formatWhole(saltLbPerLaneMileEvent)} lb in each of ${figure.amounts.eventCount} events`;
   return `In ${label} you used ${formatOneDecimal(saltTonsPerLaneMile)} tons of salt on each lane mile${perEvent}.`;
 }
 
@@ -118,7 +120,10 @@ export default function SeasonPage({ loaderData: { season, isDirector }, actionD
             </section>
           )}
           <Heading>The figures, beside your earlier seasons</Heading>
-          <SeasonTable seasons={[figure, ...otherSeasons.filter((other) => other.seasonStartYear < seasonStartYear).slice(0, 3)]} caption="As reported, and worked out from it" />
+          <SeasonTable
+            seasons={[figure, ...otherSeasons.filter((other) => other.seasonStartYear < seasonStartYear).slice(0, 3)]}
+            caption="As reported, and worked out from it"
+          />
         </>
       )}
       {others.length > 0 && (

@@ -1,5 +1,5 @@
 import { townActor } from "#app/context.ts";
-import { csvResponse } from "#app/lib/csv.server.ts";
+import { csvResponse } from "#app/lib/download.server.ts";
 import { idParam } from "#app/lib/params.ts";
 import { uploadProblemsCsv } from "#app/services/uploads/read.server.ts";
 import type { Route } from "./+types/upload-problems";

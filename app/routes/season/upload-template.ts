@@ -1,4 +1,4 @@
-import { csvResponse } from "#app/lib/csv.server.ts";
+import { csvResponse } from "#app/lib/download.server.ts";
 import { notFound } from "#app/lib/errors.ts";
 import { isUploadKind } from "#app/services/uploads/kinds.server.ts";
 import { uploadTemplateCsv } from "#app/services/uploads/read.server.ts";

@@ -41,13 +41,18 @@ export const meta: Route.MetaFunction = () => [{ title: "Check an upload · Comm
 type Upload = Route.ComponentProps["loaderData"]["upload"];
 
 function answer(upload: Upload, errorCount: number, checkCount: number) {
-  const things = upload.kind === "season-figures" ? countWords(upload.seasons.length, "season", "seasons") : countWords(upload.calibrations.length, "calibration", "calibrations");
-  if (upload.state === "accepted") return `Accepted: ${things} ${upload.kind === "season-figures" ? "in your figures" : "in your fleet"}.`;
+  const things =
+    upload.kind === "season-figures"
+      ? countWords(upload.seasons.length, "season", "seasons")
+      : countWords(upload.calibrations.length, "calibration", "calibrations");
+  if (upload.state === "accepted")
+    return `Accepted: ${things} ${upload.kind === "season-figures" ? "in your figures" : "in your fleet"}.`;
   if (upload.rowCount === 0) return "This file cannot be read.";
   if (errorCount > 0) {
     return `${sentenceStart(countWords(errorCount, "thing is", "things are"))} wrong in ${countWords(upload.rowCount, "row", "rows")}. Correct ${errorCount === 1 ? "it" : "them"} in your spreadsheet and upload it again.`;
   }
-  const checks = checkCount === 0 ? "" : ` ${sentenceStart(countWords(checkCount, "thing", "things"))} to look at first.`;
+  const checks =
+    checkCount === 0 ? "" : ` ${sentenceStart(countWords(checkCount, "thing", "things"))} to look at first.`;
   return `All ${countWords(upload.rowCount, "row", "rows")} can be read: ${things}.${checks}`;
 }
 
@@ -56,7 +61,11 @@ function Holds({ upload }: { upload: Upload }) {
     return (
       <SeasonTable
         caption="As read from the file, and worked out from it"
-        seasons={upload.seasons.map(({ seasonStartYear, amounts }) => ({ seasonStartYear, amounts, totals: seasonTotals(amounts) }))}
+        seasons={upload.seasons.map(({ seasonStartYear, amounts }) => ({
+          seasonStartYear,
+          amounts,
+          totals: seasonTotals(amounts),
+        }))}
       />
     );
   }
@@ -94,14 +103,19 @@ export default function UploadPage({ loaderData: { upload }, actionData }: Route
   const checks = upload.problems.filter(({ severity }) => severity === "check");
   const groups = groupProblems(upload.problems);
   const isOpen = upload.state === "checked";
-  const next = upload.kind === "season-figures" ? { to: "/season", words: "Open the season" } : { to: "/fleet", words: "Open the fleet" };
+  const next =
+    upload.kind === "season-figures"
+      ? { to: "/season", words: "Open the season" }
+      : { to: "/fleet", words: "Open the fleet" };
   return (
     <>
       <Page>
         <Answer>{answer(upload, errors.length, checks.length)}</Answer>
         <Method>
           <b className="text-asphalt">{upload.fileName}</b>, read {formatInstant(upload.createdAt)}.{" "}
-          {isOpen ? "Nothing counts until you accept, and your file is not changed. You can leave and come back." : "The file is kept as it came."}
+          {isOpen
+            ? "Nothing counts until you accept, and your file is not changed. You can leave and come back."
+            : "The file is kept as it came."}
         </Method>
         {actionData && <Notice tone="problem" title={actionData.refusal} />}
         {!isOpen && (
@@ -162,7 +176,9 @@ export default function UploadPage({ loaderData: { upload }, actionData }: Route
             Upload another file
           </TextLink>
           <Form method="post">
-            <Button notYet={errors.length > 0 && { reasonId: "dock-summary" }}>Accept {countWords(upload.rowCount, "row", "rows")}</Button>
+            <Button notYet={errors.length > 0 && { reasonId: "dock-summary" }}>
+              Accept {countWords(upload.rowCount, "row", "rows")}
+            </Button>
           </Form>
         </Dock>
       )}

@@ -36,14 +36,23 @@ async function readForm(request: Request) {
     const file = form.get("file");
     const kind = form.get("kind");
     if (!isUploadKind(kind)) return { ok: false, status: 400, message: "Choose what the file holds." } as const;
-    if (!(file instanceof File) || file.name === "") return { ok: false, status: 400, message: "Choose a file first." } as const;
+    if (!(file instanceof File) || file.name === "")
+      return { ok: false, status: 400, message: "Choose a file first." } as const;
     return { ok: true, kind, file } as const;
   } catch (error) {
     if (error instanceof MaxFileSizeExceededError) {
-      return { ok: false, status: 413, message: "This file is over 5 MB. Split it, or leave out what is not needed." } as const;
+      return {
+        ok: false,
+        status: 413,
+        message: "This file is over 5 MB. Split it, or leave out what is not needed.",
+      } as const;
     }
     if (error instanceof FormDataParseError) {
-      return { ok: false, status: 400, message: "The file did not arrive whole. Choose it again and send it once more." } as const;
+      return {
+        ok: false,
+        status: 400,
+        message: "The file did not arrive whole. Choose it again and send it once more.",
+      } as const;
     }
     throw error;
   }
@@ -76,8 +85,16 @@ export default function Uploads({ loaderData, actionData }: Route.ComponentProps
           : `${open === 1 ? "One file waits" : `${open} files wait`} for you to put right or accept.`}
       </Answer>
       <Method>A CSV file of at most 5 MB, as any spreadsheet saves it. The file is kept as it came.</Method>
-      {actionData && <ErrorSummary key={actionData.message} errors={[{ fieldId: "file", message: actionData.message }]} />}
-      <KeptForm formKey="upload" ownerId={userId} method="post" encType="multipart/form-data" className="mt-6 grid gap-5">
+      {actionData && (
+        <ErrorSummary key={actionData.message} errors={[{ fieldId: "file", message: actionData.message }]} />
+      )}
+      <KeptForm
+        formKey="upload"
+        ownerId={userId}
+        method="post"
+        encType="multipart/form-data"
+        className="mt-6 grid gap-5"
+      >
         <SelectField key={kind} name="kind" label="What it holds" choices={kinds} defaultValue={kind} />
         <FileField
           name="file"

@@ -20,14 +20,20 @@ async function storeSeasons(actor: TownActor, upload: Upload, transaction: Trans
     const where = { townId: actor.townId, seasonStartYear };
     const figure = await SeasonFigure.findOne({ where, lock: transaction.LOCK.UPDATE, transaction });
     if (figure && figure.state !== "draft" && figure.state !== "returned") {
-      throw conflict("This season was sent in meanwhile, so the file was not taken. Ask the coordinator to send it back first.");
+      throw conflict(
+        "This season was sent in meanwhile, so the file was not taken. Ask the coordinator to send it back first.",
+      );
     }
     const before = figure ? { version: figure.version, saltLb: figure.saltLb, laneMiles: figure.laneMiles } : null;
     const saved = figure
       ? await figure.update({ ...amounts, uploadId: upload.id, version: figure.version + 1 }, { transaction })
       : await SeasonFigure.create({ ...where, ...amounts, uploadId: upload.id, createdAt: now() }, { transaction });
     const detail = { seasonStartYear, before, after: amounts };
-    await recordAudit(actor, { action: "season-figure.fill", entity: "season_figure", entityId: saved.id, detail }, transaction);
+    await recordAudit(
+      actor,
+      { action: "season-figure.fill", entity: "season_figure", entityId: saved.id, detail },
+      transaction,
+    );
   }
 }
 
@@ -56,13 +62,20 @@ async function storeCalibrations(actor: TownActor, upload: Upload, transaction: 
       { transaction },
     );
     const calibrationId = calibration.id;
-    await CalibrationCount.bulkCreate(counts.map((count) => ({ calibrationId, ...count })), { transaction });
+    await CalibrationCount.bulkCreate(
+      counts.map((count) => ({ calibrationId, ...count })),
+      { transaction },
+    );
     await CalibrationCatch.bulkCreate(
       catches.map((caught, index) => ({ calibrationId, position: index + 1, ...caught })),
       { transaction },
     );
     const detail = { truckId, materialId, testedOn, gateOpeningIn };
-    await recordAudit(actor, { action: "calibration.store", entity: "calibration", entityId: calibrationId, detail }, transaction);
+    await recordAudit(
+      actor,
+      { action: "calibration.store", entity: "calibration", entityId: calibrationId, detail },
+      transaction,
+    );
   }
 }
 
@@ -89,7 +102,8 @@ export async function acceptUpload(actor: TownActor, uploadId: number) {
       return { ok: true, kind: upload.kind } as const;
     });
   } catch (error) {
-    if (isDuplicate(error)) throw conflict("Some of this was stored meanwhile by somebody else. Upload the file again to see what is left.");
+    if (isDuplicate(error))
+      throw conflict("Some of this was stored meanwhile by somebody else. Upload the file again to see what is left.");
     throw error;
   }
 }

@@ -76,7 +76,11 @@ async function checkSeasons(actor: TownActor, rows: readonly FileRow[], transact
   });
 }
 
-async function checkCalibrations(actor: TownActor, rows: readonly FileRow[], transaction: Transaction): Promise<Checked> {
+async function checkCalibrations(
+  actor: TownActor,
+  rows: readonly FileRow[],
+  transaction: Transaction,
+): Promise<Checked> {
   const where = { townId: actor.townId };
   const [trucks, materials, calibrations] = await Promise.all([
     Truck.findAll({ where, transaction }),
@@ -84,7 +88,12 @@ async function checkCalibrations(actor: TownActor, rows: readonly FileRow[], tra
     Calibration.findAll({ where, attributes: ["truckId", "materialId", "testedOn", "gateOpeningIn"], transaction }),
   ]);
   return readCalibrationRows(rows, {
-    trucks: trucks.map(({ id, unitNumber, gateMaxIn, workingSetting }) => ({ id, unitNumber, gateMaxIn, workingSetting })),
+    trucks: trucks.map(({ id, unitNumber, gateMaxIn, workingSetting }) => ({
+      id,
+      unitNumber,
+      gateMaxIn,
+      workingSetting,
+    })),
     materials: materials.map(({ id, name }) => ({ id, name })),
     storedKeys: new Set(
       calibrations.map((stored) =>

@@ -91,7 +91,13 @@ export async function listUploads(actor: TownActor): Promise<UploadLine[]> {
 /** What is wrong with a file, as CSV: row, column, what it says, and what to do. @throws 404 as getUpload */
 export async function uploadProblemsCsv(actor: TownActor, uploadId: number): Promise<string> {
   const upload = await findUpload(actor, uploadId);
-  const rows = storedProblems(upload).map(({ row, column, value, severity, message }) => [row, column, value, severity, message]);
+  const rows = storedProblems(upload).map(({ row, column, value, severity, message }) => [
+    row,
+    column,
+    value,
+    severity,
+    message,
+  ]);
   return writeCsv(["row", "column", "your_file_says", "kind", "what_to_do"], rows);
 }
 

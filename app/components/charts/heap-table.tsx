@@ -1,5 +1,5 @@
 import type { LaneStripSpec, ShownPeers } from "./lane-strip-spec.ts";
-import { heapRangeWords, isOwnHeap } from "./lane-strip-words.ts";
+import { heapColumnWords, isOwnHeap } from "./lane-strip-words.ts";
 import { townsInHeap } from "./lane-strip-spec.ts";
 
 type Props = { spec: LaneStripSpec; peers: ShownPeers; title: string };
@@ -8,13 +8,13 @@ type Props = { spec: LaneStripSpec; peers: ShownPeers; title: string };
 export function HeapTable({ spec, peers, title }: Props) {
   const towns = peers.heapKind === "bars" ? "towns, about" : "towns";
   const cells = peers.heaps.map((heap) => ({
-    words: heapRangeWords(heap, spec),
+    words: heapColumnWords(heap, spec),
     townCount: townsInHeap(peers, heap),
     isOurs: isOwnHeap(heap, spec.own),
   }));
   return (
-    <>
-      <table className="hidden w-full border-collapse text-center text-note leading-tight sm:table">
+    <div className="@container">
+      <table className="hidden w-full border-collapse text-center text-note leading-tight @min-[52rem]:table">
         <caption className="sr-only">{`${title}: towns by range`}</caption>
         <thead>
           <tr className="border-b-2 border-line align-bottom">
@@ -46,7 +46,7 @@ export function HeapTable({ spec, peers, title }: Props) {
           </tr>
         </tbody>
       </table>
-      <table className="w-full border-collapse text-table sm:hidden">
+      <table className="w-full border-collapse text-table @min-[52rem]:hidden">
         <caption className="sr-only">{`${title}: towns by range`}</caption>
         <thead>
           <tr className="border-b-2 border-line">
@@ -73,7 +73,7 @@ export function HeapTable({ spec, peers, title }: Props) {
           ))}
         </tbody>
       </table>
-    </>
+    </div>
   );
 }
 

@@ -44,13 +44,9 @@ const measures = {
 
 /** Below this width a strip is laid out as on a phone. */
 export const phoneBelowPx = 600;
-export const centreShare = 0.43;
+const centreShare = 0.43;
 export const edgeInset = 4;
 const flagTurnsAt = 0.62;
-
-export function stripWidth(size: StripSize) {
-  return measures[size].width;
-}
 
 /** Where every part of the strip goes. Pure: the same spec, size and width give the same numbers. */
 export function layOutStrip(spec: LaneStripSpec, size: StripSize, widthPx: number = measures[size].width): StripLayout {
@@ -188,13 +184,15 @@ function layOutPlate(spec: LaneStripSpec, base: Base, flag: FlagLayout | null) {
   const words = base.size === "phone" ? figure : (medianWords ?? `median ${figure}`);
   const wide = textWidthPx(words, base.labelPx, true) + 14 * base.scale;
   const tickX = base.x(median);
-  let middle = tickX;
-  const clear = wide / 2 + 12;
-  if (flag !== null && Math.abs(flag.x - tickX) < clear) {
-    const isLeft = flag.x >= tickX ? flag.x - clear - wide / 2 >= 0 : flag.x + clear + wide / 2 > base.widthPx;
-    middle = isLeft ? flag.x - clear : flag.x + clear;
-  }
-  middle = Math.min(Math.max(middle, wide / 2 + 4), base.widthPx - wide / 2 - 4);
+  const reach = wide / 2;
+  const inside = (at: number) => Math.min(Math.max(at, reach + 4), base.widthPx - reach - 4);
+  const clear = reach + 12;
+  const places = flag === null ? [tickX] : [tickX, flag.x - clear, flag.x + clear];
+  const middle =
+    places
+      .map((place) => inside(place))
+      .filter((place) => flag === null || Math.abs(place - flag.x) >= clear - 1)
+      .sort((a, b) => Math.abs(a - tickX) - Math.abs(b - tickX))[0] ?? inside(tickX);
   return { x1: middle - wide / 2, x2: middle + wide / 2, tickX, height: base.size === "wall" ? 43.7 : 20.8, words };
 }
 

@@ -1,5 +1,5 @@
 /** The interval, the middle half, or the band: both ends in the strip's unit. */
-export type Range = { low: number; high: number };
+type Range = { low: number; high: number };
 
 /** Several towns together. `null` marks the open end of the first and the last heap. */
 export type Heap = { from: number | null; to: number | null; count: number };

@@ -7,7 +7,7 @@ const { document } = parseHTML("<!doctype html><html><body></body></html>");
 /** A tenth of a px is finer than any screen; more digits only make the page heavier. */
 const longFigure = /="(-?\d+\.\d{2,})"/g;
 
-const keptCount = 400;
+const keptCount = 200;
 const kept = new Map<string, string>();
 
 /**

@@ -8,7 +8,7 @@ import {
 } from "./lane-strip-spec.ts";
 
 /** Digits after the point that fit the axis: none for pounds, for per cent and wherever the axis is laid out in tens. */
-export function decimalsOf({ unit, axis }: Pick<LaneStripSpec, "unit" | "axis">) {
+function decimalsOf({ unit, axis }: Pick<LaneStripSpec, "unit" | "axis">) {
   if (/^(lb|%)/.test(unit) || axis.step >= 10) return 0;
   if (axis.step >= 1) return 1;
   return Math.min(4, Math.ceil(-Math.log10(axis.step)) + 1);
@@ -26,11 +26,16 @@ export function axisWords(value: number, spec: Pick<LaneStripSpec, "unit" | "axi
 }
 
 /** "340 to 379"; the heap's upper border belongs to the next one. */
-export function heapRangeWords(heap: Heap, spec: LaneStripSpec) {
+function heapRangeWords(heap: Heap, spec: LaneStripSpec) {
   if (heap.from === null && heap.to === null) return "all";
   if (heap.from === null) return `${figureWords(heap.to ?? 0, spec)} and less`;
   if (heap.to === null) return `${figureWords(heap.from, spec)} and more`;
   return `${figureWords(heap.from, spec)} to ${figureWords(heap.to - 10 ** -decimalsOf(spec), spec)}`;
+}
+
+/** As in a table, where the columns are narrow: "340–379". */
+export function heapColumnWords(heap: Heap, spec: LaneStripSpec) {
+  return heapRangeWords(heap, spec).replace(" to ", "–");
 }
 
 /** "340 to 379 lb: 7 towns", for whoever runs a finger or the arrow keys along the lane. */
@@ -62,7 +67,7 @@ export function laneStripSentence(spec: LaneStripSpec, size: StripSize = "desk")
     sentences.push(`Ours is ${words(own.value)} ${unit}${note}.`);
   }
   if (peers.state === "withheld") {
-    sentences.push(`The peers' figures are hidden to protect members: ${peers.reason}.`);
+    sentences.push(`The peers’ figures are hidden to protect members: ${peers.reason}.`);
   } else {
     const interval =
       peers.interval === null ? "" : `, likely between ${words(peers.interval.low)} and ${words(peers.interval.high)}`;

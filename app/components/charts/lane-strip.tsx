@@ -70,7 +70,7 @@ export function StripPicture({ spec, svg, title }: Pick<Props, "spec" | "svg" | 
         )}
       </div>
       {quiet !== null && (
-        <p className="mt-0.5 min-h-[1.45em] text-note text-gravel">
+        <p className="mt-2 flex min-h-target items-start pr-28 text-note text-gravel print:min-h-0">
           {heap === undefined || peers === null ? (
             quiet
           ) : (
@@ -82,25 +82,30 @@ export function StripPicture({ spec, svg, title }: Pick<Props, "spec" | "svg" | 
   );
 }
 
+/** The toggle stands at the end of the line under the strip. Without heaps there is no table, and the facts say it all. */
 function StripTable({ spec, title, tableNote, downloadTo, isTableOpen = false }: Props) {
   const peers = spec.peers.state === "shown" && spec.peers.heaps.length > 0 ? spec.peers : null;
-  if (peers === null && tableNote === undefined && downloadTo === undefined) return null;
-  return (
-    <details open={isTableOpen} className="group mt-1 print:hidden">
-      <summary className="inline-flex min-h-target list-none items-center text-note font-semibold text-spruce underline decoration-1 underline-offset-3 hover:decoration-2">
-        <span className="group-open:hidden">Table</span>
-        <span className="hidden group-open:inline">Hide the table</span>
-        <span className="sr-only">: {title}</span>
-      </summary>
-      {peers !== null && <HeapTable spec={spec} peers={peers} title={title} />}
+  const footnote =
+    tableNote === undefined && downloadTo === undefined ? null : (
       <p className="mt-2 mb-1 text-note text-gravel">
         {tableNote}{" "}
         {downloadTo !== undefined && (
           <TextLink to={downloadTo} isDocument>
-            Download this table (CSV)
+            Download these figures (CSV)
           </TextLink>
         )}
       </p>
+    );
+  if (peers === null) return footnote;
+  return (
+    <details open={isTableOpen} className="group -mt-11 print:mt-0">
+      <summary className="relative -top-2.5 ml-auto flex min-h-target w-fit list-none items-center text-note font-semibold text-spruce underline decoration-1 underline-offset-3 hover:decoration-2 print:hidden">
+        <span className="group-open:hidden">Table</span>
+        <span className="hidden group-open:inline">Hide the table</span>
+        <span className="sr-only">: {title}</span>
+      </summary>
+      <HeapTable spec={spec} peers={peers} title={title} />
+      {footnote}
     </details>
   );
 }

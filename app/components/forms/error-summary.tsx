@@ -1,7 +1,7 @@
 import { useEffect, useRef } from "react";
 import { linkClass } from "#app/components/ui/text-link.tsx";
 
-export type FormError = { fieldId?: string; message: string };
+type FormError = { fieldId?: string; message: string };
 
 type Props = {
   errors: readonly FormError[];
@@ -20,7 +20,7 @@ export function ErrorSummary({ errors, title = errorTitle(errors.length) }: Prop
       ref={box}
       role="alert"
       tabIndex={-1}
-      className="my-5 max-w-measure border-t-4 border-b border-rust border-b-rule py-3"
+      className="my-5 max-w-measure border-t-4 border-b border-rust border-b-rule py-3 focus-visible:outline-offset-8"
     >
       <h2 className="text-head font-bold text-rust">
         <svg viewBox="0 0 10 10" aria-hidden="true" className="mr-2 inline-block size-[0.72em] fill-current">

@@ -1,7 +1,7 @@
 import type { ComponentProps } from "react";
 import { FieldFrame, fieldLook, fieldTies, type FieldWords } from "./field-frame.tsx";
 
-export type Choice = { value: string; label: string };
+type Choice = { value: string; label: string };
 
 type SelectProps = FieldWords &
   Omit<ComponentProps<"select">, keyof FieldWords | "className" | "children"> & {

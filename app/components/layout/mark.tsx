@@ -10,7 +10,7 @@ export function Mark() {
           d="M14.1 6.6h3.8L25.4 30H6.6zM15.4 10.4h1.2v3.4h-1.2zM15 16.4h2v4.2h-2zM14.5 23.4h3V30h-3z"
         />
       </svg>
-      <span>Commonweigh</span>
+      <span className="sm:max-md:sr-only">Commonweigh</span>
     </>
   );
 }

@@ -27,7 +27,7 @@ export function TopBar({ areas, place, period, person, notForSharing = false }: 
           <Link to="/today" className={brandClass}>
             <Mark />
           </Link>
-          <nav aria-label="Areas" className="hidden items-stretch gap-4 sm:flex md:gap-5.5">
+          <nav aria-label="Areas" className="hidden items-stretch gap-3.5 text-table sm:flex md:gap-5 md:text-m">
             {areas.map((area) => (
               <NavLink
                 key={area.to}
@@ -38,29 +38,22 @@ export function TopBar({ areas, place, period, person, notForSharing = false }: 
               </NavLink>
             ))}
           </nav>
-          <div className="ml-auto flex min-w-0 flex-wrap items-center justify-end gap-x-4.5 py-1 text-right text-note leading-tight sm:hidden lg:flex lg:text-m">
-            <p className="min-w-0">
-              <span className="block lg:inline">{place}</span>
-              <span className="hidden lg:inline"> · </span>
-              <b className="block font-semibold lg:inline">{period}</b>
+          <div className="ml-auto flex min-w-0 flex-col justify-center py-1 text-right text-note leading-tight lg:flex-row lg:items-center lg:justify-end lg:gap-4.5 lg:text-m">
+            <p>
+              <span className="max-sm:block">{place}</span>
+              <span className="max-sm:hidden"> · </span>
+              <b className="font-semibold max-sm:block">{period}</b>
             </p>
-            <PersonLink person={person} className="hidden lg:flex" />
+            <Link
+              to="/account"
+              className="hidden text-asphalt no-underline underline-offset-4 hover:underline sm:block lg:flex lg:min-h-target lg:items-center"
+            >
+              {person}
+            </Link>
           </div>
-          <PersonLink person={person} className="ml-auto hidden sm:flex lg:hidden" />
         </DoubleRule>
       </header>
       <BottomBar areas={areas} person={person} />
     </>
-  );
-}
-
-function PersonLink({ person, className }: { person: string; className: string }) {
-  return (
-    <Link
-      to="/account"
-      className={`${className} min-h-target items-center text-asphalt no-underline underline-offset-4 hover:underline`}
-    >
-      {person}
-    </Link>
   );
 }

@@ -5,7 +5,7 @@ import { SelectField } from "#app/components/forms/select-field.tsx";
 import { TextArea } from "#app/components/forms/text-area.tsx";
 import { Heading } from "#app/components/layout/answer.tsx";
 
-const gateError = "1.83 in is not on a sixteenth. Did you mean 1 11/16?";
+const gateError = "1.83 in is not on a sixteenth. Did you mean 1\u00a011/16?";
 const trucks = [
   { value: "12", label: "Truck 12" },
   { value: "14", label: "Truck 14" },

@@ -43,12 +43,12 @@ function AgendaRow({ item, isFirst }: { item: AgendaItem; isFirst: boolean }) {
           </span>
         )}
       </p>
-      <div aria-hidden="true" className="absolute top-0 -left-10 h-full w-6.5 sm:static sm:h-auto print:hidden">
+      <div aria-hidden="true" className="absolute top-0 -left-10 h-full w-6.5 sm:static sm:h-auto print:invisible">
         <span className="relative block h-full">
           <span className={`absolute top-5.25 block ${stop}`} />
         </span>
       </div>
-      <div className={`pb-5 sm:border-b sm:border-rule ${isFirst ? "sm:pt-2" : "sm:pt-3"}`}>
+      <div className={`pb-5 sm:border-b sm:border-rule [li:last-child>&]:border-0 ${isFirst ? "sm:pt-2" : "sm:pt-3"}`}>
         <AgendaTitle item={item} isFirst={isFirst} />
         {item.children !== undefined && (
           <div className="mt-0.5 max-w-measure text-pretty text-gravel">{item.children}</div>

@@ -7,12 +7,17 @@ type Props = {
   children: ReactNode;
   /** The id a waiting button points to for its reason. */
   summaryId?: string;
+  /** Names the landmark. */
+  label?: string;
 };
 
 /** Stays at the foot of a long page with the counts and the one decision. Sits above the bottom bar of a phone. */
-export function Dock({ summary, children, summaryId }: Props) {
+export function Dock({ summary, children, summaryId, label = "What is left, and the decision" }: Props) {
   return (
-    <div className="sticky bottom-[3.9rem] z-10 border-t border-line bg-salt pt-[3px] sm:bottom-0 print:static print:hidden">
+    <section
+      aria-label={label}
+      className="sticky bottom-[3.9rem] z-10 border-t border-line bg-salt pt-[3px] sm:bottom-0 print:static print:hidden"
+    >
       <div className="border-t-4 border-line">
         <div className="mx-auto flex w-full max-w-column flex-wrap items-center gap-x-5 gap-y-2 px-4 py-3.5 sm:px-8">
           <p id={summaryId} className="mr-auto">
@@ -21,6 +26,6 @@ export function Dock({ summary, children, summaryId }: Props) {
           {children}
         </div>
       </div>
-    </div>
+    </section>
   );
 }

@@ -17,7 +17,7 @@ export function GroupSwitch({ label, choices }: { label: string; choices: readon
     <nav aria-label={label} className="mt-6 border-b border-line print:hidden">
       <ul className="-mb-px flex flex-wrap gap-x-7">
         {choices.map((choice) => (
-          <li key={choice.key}>
+          <li key={choice.key} className="max-sm:w-full max-sm:border-b max-sm:border-rule max-sm:last:border-0">
             <Choice choice={choice} />
           </li>
         ))}
@@ -41,7 +41,7 @@ function Choice({ choice }: { choice: GroupChoice }) {
       to={choice.to}
       preventScrollReset
       aria-current={choice.isCurrent === true ? "true" : undefined}
-      className="relative flex min-h-target items-center gap-1.75 text-gravel no-underline underline-offset-4 hover:underline aria-[current=true]:font-bold aria-[current=true]:text-asphalt aria-[current=true]:no-underline aria-[current=true]:after:absolute aria-[current=true]:after:inset-x-0 aria-[current=true]:after:-bottom-0.5 aria-[current=true]:after:h-1.25 aria-[current=true]:after:bg-spruce"
+      className="relative flex w-fit min-h-target items-center gap-1.75 text-gravel no-underline underline-offset-4 hover:underline aria-[current=true]:font-bold aria-[current=true]:text-asphalt aria-[current=true]:no-underline aria-[current=true]:after:absolute aria-[current=true]:after:inset-x-0 aria-[current=true]:after:-bottom-0.5 aria-[current=true]:after:h-1.25 aria-[current=true]:after:bg-spruce"
     >
       {choice.label}
       {count}

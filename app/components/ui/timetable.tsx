@@ -9,7 +9,7 @@ export type Column = {
   isNumeric?: boolean;
 };
 
-export type Row = {
+type Row = {
   key: string;
   cells: Record<string, ReactNode>;
   /** Our own row, in weight on its wash. */
@@ -68,7 +68,7 @@ type CellProps = { column: Column; isRowHead: boolean; children: ReactNode };
 
 function TimetableCell({ column, isRowHead, children }: CellProps) {
   const align = column.isNumeric === true ? "text-right" : "text-left";
-  const look = `py-1.75 pr-3 align-baseline last:pr-0 ${align}`;
+  const look = `py-1.75 pr-3 max-sm:in-[.timetable-fold]:py-0.5 max-sm:in-[.timetable-fold]:pr-0 align-baseline last:pr-0 ${align}`;
   if (isRowHead) {
     return (
       <th scope="row" className={`${look} font-bold`}>

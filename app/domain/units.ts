@@ -13,13 +13,13 @@ export type LbPerLaneMile = In<"lb per lane mile">;
 export type ShortTon = In<"short ton">;
 
 /** Exact. Source: international yard and pound agreement, 1959. */
-export const kgPerLb = 0.45359237;
+const kgPerLb = 0.45359237;
 /** Exact. Source: international yard and pound agreement, 1959 (5,280 ft of 0.3048 m). */
-export const kmPerMile = 1.609344;
+const kmPerMile = 1.609344;
 /** Exact. Source: international yard and pound agreement, 1959. */
-export const mmPerInch = 25.4;
+const mmPerInch = 25.4;
 /** Exact. Source: the US liquid gallon is 231 cubic inches. */
-export const litresPerGallon = 3.785411784;
+const litresPerGallon = 3.785411784;
 /** Exact. Source: definition of the short ton. */
 export const lbPerShortTon = 2000;
 /** Exact. Source: definition of the hour. */

@@ -37,11 +37,6 @@ export function badRequest(message: string) {
   return publicError(400, "Bad Request", "bad-request", message);
 }
 
-/** 503: something this service needs is away. */
-export function unavailable(message: string) {
-  return publicError(503, "Service Unavailable", "unavailable", message);
-}
-
 /** Whether `value` is the body that the functions above make. */
 export function isPublicError(value: unknown): value is PublicError {
   return (

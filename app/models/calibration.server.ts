@@ -7,7 +7,6 @@ import {
   type NonAttribute,
 } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
-import type { Truck } from "./truck.server.ts";
 import type { Material } from "./material.server.ts";
 import type { CalibrationCount } from "./calibration-count.server.ts";
 import type { CalibrationCatch } from "./calibration-catch.server.ts";
@@ -27,7 +26,6 @@ export class Calibration extends Model<InferAttributes<Calibration>, InferCreati
   declare createdAt: Date;
   declare approvedAt: CreationOptional<Date | null>;
   declare approvedById: CreationOptional<number | null>;
-  declare truck?: NonAttribute<Truck>;
   declare material?: NonAttribute<Material>;
   declare counts?: NonAttribute<CalibrationCount[]>;
   declare catches?: NonAttribute<CalibrationCatch[]>;

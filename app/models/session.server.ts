@@ -1,13 +1,5 @@
-import {
-  type CreationOptional,
-  DataTypes,
-  type InferAttributes,
-  type InferCreationAttributes,
-  Model,
-  type NonAttribute,
-} from "sequelize";
+import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
-import type { UserAccount } from "./user-account.server.ts";
 
 /** A signed-in browser. Holds the hash of the cookie, never the cookie. */
 export class Session extends Model<InferAttributes<Session>, InferCreationAttributes<Session>> {
@@ -19,7 +11,6 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
   declare expiresAt: Date;
   declare authenticatedAt: Date;
   declare device: CreationOptional<string>;
-  declare user?: NonAttribute<UserAccount>;
 }
 
 Session.init(

@@ -1,14 +1,6 @@
-import {
-  type CreationOptional,
-  DataTypes,
-  type InferAttributes,
-  type InferCreationAttributes,
-  Model,
-  type NonAttribute,
-} from "sequelize";
+import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import type { Role } from "#app/context.ts";
 import { db } from "#app/lib/db.server.ts";
-import type { Town } from "./town.server.ts";
 
 /** A person known by issuer and subject, with one role. */
 export class UserAccount extends Model<InferAttributes<UserAccount>, InferCreationAttributes<UserAccount>> {
@@ -21,7 +13,6 @@ export class UserAccount extends Model<InferAttributes<UserAccount>, InferCreati
   declare townId: CreationOptional<number | null>;
   declare isActive: CreationOptional<boolean>;
   declare createdAt: Date;
-  declare town?: NonAttribute<Town | null>;
 }
 
 UserAccount.init(

@@ -13,7 +13,7 @@ import { recordAudit } from "./audit.server.ts";
 import { type EditionSummary, getEdition, listDownloadCells } from "./editions.server.ts";
 
 /** The terms now in force. A new version asks everybody again. */
-export const termsVersion = "2026-12";
+const termsVersion = "2026-12";
 
 /** Whether the actor accepted the terms now in force. */
 export async function hasAcceptedTerms(actor: PersonActor): Promise<boolean> {

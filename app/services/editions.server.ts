@@ -121,7 +121,7 @@ async function cellsAs<Cell>(editionId: number, audience: Audience, shape: z.Zod
 }
 
 /** What members may see of an edition, in the order of its menu of groups. */
-export async function listMemberCells(editionId: number): Promise<Placed<MemberCell>[]> {
+async function listMemberCells(editionId: number): Promise<Placed<MemberCell>[]> {
   return cellsAs(editionId, "member", MemberCellShape);
 }
 

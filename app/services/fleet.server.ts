@@ -43,7 +43,7 @@ export type TruckView = {
 };
 
 /** The common-practice band of a material; null where there is none. */
-export function bandOf(kind: MaterialKind): Band | null {
+function bandOf(kind: MaterialKind): Band | null {
   return commonPracticeBands[kind] ?? null;
 }
 

@@ -48,7 +48,7 @@ export function LaneStrip(props: Props) {
 }
 
 /** The strip alone, for pages that say the rest in their own words. Static first, alive once the page is. */
-export function StripPicture({ spec, svg, title }: Pick<Props, "spec" | "svg" | "title">) {
+function StripPicture({ spec, svg, title }: Pick<Props, "spec" | "svg" | "title">) {
   const { frame, layout } = useLiveStrip(spec);
   const [at, setAt] = useState<number | null>(null);
   const peers = spec.peers.state === "shown" ? spec.peers : null;

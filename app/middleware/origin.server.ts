@@ -4,7 +4,7 @@ import { badRequest, forbidden } from "#app/lib/errors.ts";
 import { log } from "#app/lib/log.server.ts";
 
 const safeMethods = ["GET", "HEAD"];
-const formTypes = ["application/x-www-form-urlencoded", "multipart/form-data"];
+const bodyTypes = ["application/x-www-form-urlencoded", "multipart/form-data", "application/json"];
 
 /**
  * Refuse changes that another site asks for. The framework checks pages only; this covers every address, every unsafe
@@ -24,6 +24,6 @@ export const originMiddleware: MiddlewareFunction<Response> = ({ request }) => {
       throw forbidden("This change was asked for by another site, so it was not made.");
     }
     const type = request.headers.get("content-type")?.split(";")[0]?.trim() ?? "";
-    if (!formTypes.includes(type)) throw badRequest("Only forms are taken here.");
+    if (!bodyTypes.includes(type)) throw badRequest("Only forms and JSON are taken here.");
   }
 };

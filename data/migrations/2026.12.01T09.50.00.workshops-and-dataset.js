@@ -45,5 +45,6 @@ export async function up({ sql }) {
 }
 
 export async function down({ sql }) {
-  for (const table of ["api_token", "terms_acceptance", "board", "workshop"]) await sql(`DROP TABLE IF EXISTS ${table}`);
+  for (const table of ["api_token", "terms_acceptance", "board", "workshop"])
+    await sql(`DROP TABLE IF EXISTS ${table}`);
 }

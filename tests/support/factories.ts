@@ -2,6 +2,7 @@ import { createHash, randomBytes, randomUUID } from "node:crypto";
 import type { Role } from "#app/context.ts";
 import type { TestApp } from "./app.ts";
 import { cookieOf } from "./http.ts";
+import { type App, insert, minutesFromNow, rows } from "./rows.ts";
 
 type Value = string | number | Buffer | null;
 type App = Pick<TestApp, "db" | "issuer">;

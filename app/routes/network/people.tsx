@@ -152,7 +152,7 @@ function Invite({ loaderData, actionData }: Pick<Route.ComponentProps, "loaderDa
     lastResult: actionData,
     constraint: getZodConstraint(InvitationForm),
     onValidate: ({ formData }) => parseWithZod(formData, { schema: InvitationForm }),
-    shouldRevalidate: "onBlur",
+    shouldRevalidate: "onInput",
   });
   return (
     <KeptForm

@@ -60,7 +60,7 @@ export default function WorkshopPage({ loaderData, actionData }: Route.Component
     lastResult: actionData,
     constraint: getZodConstraint(BoardForm),
     onValidate: ({ formData }) => parseWithZod(formData, { schema: BoardForm }),
-    shouldRevalidate: "onBlur",
+    shouldRevalidate: "onInput",
   });
   const groupLabel = (key: string) => workshop.choices.find(({ groupKey }) => groupKey === key)?.groupLabel ?? key;
   return (

@@ -112,7 +112,7 @@ function NewWorkshop({ loaderData, actionData }: Pick<Route.ComponentProps, "loa
     lastResult: actionData,
     constraint: getZodConstraint(WorkshopForm),
     onValidate: ({ formData }) => parseWithZod(formData, { schema: WorkshopForm }),
-    shouldRevalidate: "onBlur",
+    shouldRevalidate: "onInput",
   });
   return (
     <section>

@@ -129,9 +129,12 @@ function wordsIn(units: "us" | "si") {
     at: (speedMph: number) => `${plain(speed(speedMph))} ${speedUnit}`,
     /** Whole speeds inside the stretch, so that both named ends are in the band; tenths when no two wholes fit. */
     fromTo: ({ slowestMph, fastestMph }: { slowestMph: number; fastestMph: number }) => {
-      const [slowest, fastest] = [Math.ceil(speed(slowestMph) - 1e-9), Math.floor(speed(fastestMph) + 1e-9)];
-      if (slowest < fastest) return `from ${slowest} to ${fastest} ${speedUnit}`;
-      return `from ${plain(speed(slowestMph))} to ${plain(speed(fastestMph))} ${speedUnit}`;
+      const inside = (parts: number) => [
+        Math.ceil(speed(slowestMph) * parts - 1e-9) / parts,
+        Math.floor(speed(fastestMph) * parts + 1e-9) / parts,
+      ];
+      const [from = 0, to = 0] = [inside(1), inside(10)].find(([low = 0, high = 0]) => low < high) ?? [];
+      return from < to ? `from ${from} to ${to} ${speedUnit}` : `at ${plain(speed(slowestMph))} ${speedUnit}`;
     },
     rate: (rateLbPerLaneMile: number) => {
       const value = units === "us" ? rateLbPerLaneMile : lbPerLaneMileToKgPerLaneKm(rateLbPerLaneMile);

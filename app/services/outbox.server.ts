@@ -59,8 +59,6 @@ function mayHaveGoneOut(error: unknown) {
 async function deliver(mail: OutboxMail): Promise<boolean> {
   try {
     await sendMail(mail);
-    await mail.update({ state: "sent", sentAt: now(), lastError: null });
-    return true;
   } catch (error) {
     const wait = waits[mail.attempts - 1];
     const reason = error instanceof Error ? error.message.slice(0, 300) : "unknown";
@@ -74,6 +72,9 @@ async function deliver(mail: OutboxMail): Promise<boolean> {
     );
     return false;
   }
+  // Outside the try: a mail that went out is not queued again because the note of it failed.
+  await mail.update({ state: "sent", sentAt: now(), lastError: null });
+  return true;
 }
 
 /**

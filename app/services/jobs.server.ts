@@ -1,6 +1,7 @@
 import { Op, QueryTypes, type Transaction } from "sequelize";
 import { minuteMs, now } from "#app/lib/clock.server.ts";
 import { db, inTransaction } from "#app/lib/db.server.ts";
+import { reasonOf } from "#app/lib/error-reason.ts";
 import { log } from "#app/lib/log.server.ts";
 import { Job, type JobState } from "#app/models/job.server.ts";
 
@@ -56,7 +57,7 @@ export async function runDueJobs(handlers: Record<string, JobHandler>, requestId
       await job.update({ state: "done", finishedAt: now(), lastError: null });
       finished++;
     } catch (error) {
-      const reason = error instanceof Error ? error.message.slice(0, 300) : "unknown";
+      const reason = reasonOf(error);
       log.error({ jobId: job.id, kind: job.kind, attempts: job.attempts, reason }, "job failed");
       await job.update(
         job.attempts >= mostAttempts

@@ -62,7 +62,9 @@ async function deliver(mail: OutboxMail): Promise<boolean> {
   } catch (error) {
     const wait = waits[mail.attempts - 1];
     const reason = error instanceof Error ? error.message.slice(0, 300) : "unknown";
-    log.warn({ mailId: mail.id, attempts: mail.attempts, reason }, "mail not sent");
+    // The server's own words may repeat the address, so the log gets the code alone.
+    const code = error instanceof Error && "code" in error ? error.code : "unknown";
+    log.warn({ mailId: mail.id, attempts: mail.attempts, code }, "mail not sent");
     await mail.update(
       mayHaveGoneOut(error)
         ? { state: "uncertain", lastError: reason }

@@ -89,7 +89,8 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
       {actionData && <Notice tone="problem" title={actionData.refusal} />}
       {failure !== null && !isComputing && (
         <Notice tone="problem" title="The last edition could not be computed.">
-          {failure} Nothing of it was published.
+          Nothing of it was published. Publish it again; if that fails too, tell whoever runs this service what it says:
+          “{failure}”
         </Notice>
       )}
       {isComputing && (

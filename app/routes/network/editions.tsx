@@ -29,17 +29,18 @@ export async function loader({ context }: Route.LoaderArgs) {
   const actor = networkActor(context);
   const startYear = await workingSeason();
   const [editions, jobs] = await Promise.all([listEditions(), listJobs("publish-edition")]);
-  const plan =
-    startYear === null
-      ? null
-      : { preview: await previewEdition(actor, startYear), queue: await getReviewQueue(actor, startYear) };
+  const isComputing = jobs.some(({ state }) => state === "ready" || state === "running");
+  // While one is computed the page asks again each second, and shows no preview.
+  const preview = startYear === null || isComputing ? null : await previewEdition(actor, startYear);
+  const queue = startYear === null ? null : await getReviewQueue(actor, startYear);
+  const [latestJob] = jobs;
   return {
     editions,
-    preview: plan?.preview ?? null,
-    waiting: plan ? plan.queue.doubtful.length + plan.queue.clean.length : 0,
-    missing: plan?.queue.missingTowns.length ?? 0,
-    isComputing: jobs.some(({ state }) => state === "ready" || state === "running"),
-    failure: jobs.find(({ state }) => state === "failed")?.lastError ?? null,
+    preview,
+    waiting: queue ? queue.doubtful.length + queue.clean.length : 0,
+    missing: queue?.missingTowns.length ?? 0,
+    isComputing,
+    failure: latestJob?.state === "failed" ? latestJob.lastError : null,
   };
 }
 
@@ -93,7 +94,8 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
       {actionData && <Notice tone="problem" title={actionData.refusal} />}
       {failure !== null && !isComputing && (
         <Notice tone="problem" title="The last edition could not be computed.">
-          {failure} Nothing of it was published.
+          Nothing of it was published. Publish it again; if that fails too, tell whoever runs this service what it says:
+          “{failure}”
         </Notice>
       )}
       {isComputing && (

@@ -10,7 +10,8 @@ import { inventedRegion, seededRandom } from "../region.ts";
 const indicator = "rate-at-working-setting";
 
 function build(towns: readonly TownInput[], registry: readonly RegisteredGroup[] = []) {
-  return buildEdition({ seasonStartYear: 2025, towns, registry, policy: defaultPolicy, random: seededRandom(3) });
+  const random = seededRandom(3);
+  return buildEdition({ seasonStartYear: 2025, towns, registry, hasEarlierRows: false, policy: defaultPolicy, random });
 }
 
 function memberCellOf(edition: ReturnType<typeof build>, groupKey: string) {

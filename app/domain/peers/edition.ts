@@ -113,7 +113,9 @@ function publishedNumbers(cell: MemberCell): number[] {
 }
 
 function cellsOf(indicator: IndicatorKey, groups: readonly Group[], policy: DisclosurePolicy): EditionCell[] {
-  const region = groups.find(({ key }) => key === "all")?.members.map(({ value }) => value) ?? [];
+  // A region that is withheld must not show in the scale either.
+  const whole = groups.find(({ key, reason }) => key === "all" && reason === null);
+  const region = whole?.members.map(({ value }) => value) ?? [];
   const band = indicators[indicator].band;
   const valuesOf = (group: Group) => group.members.map(({ value }) => value);
   const firstAxis = indicatorAxis(region, band, policy, []);

@@ -156,6 +156,20 @@ test("an earlier edition without figures is compared by its towns alone", () => 
   expect(build(inventedRegion(), registry).cells).toEqual(first.cells);
 });
 
+test("while the region is held back, its newcomer does not show in the scale either", () => {
+  const first = build(plainTowns(12, spread));
+  const published = first.members.filter(({ isPublished }) => isPublished);
+  const [low, high] = [101.3, 2931.7].map((late) => {
+    const second = build(
+      plainTowns(13, (place) => (place < 12 ? spread(place) : late)),
+      published,
+    );
+    return memberCellOf(second, "all");
+  });
+  expect(low).toMatchObject({ state: "withheld", reason: "too-close" });
+  expect(high).toEqual(low);
+});
+
 test("all groups of an indicator share one axis, in fifties, that ends at nobody's figure", () => {
   const edition = build(inventedRegion());
   const axes = edition.cells.flatMap((cell) =>

@@ -26,11 +26,15 @@ import { readPeerFigures } from "./peer-figures.server.ts";
 const Ids = z.array(z.number().int());
 const Figures = z.array(z.number());
 
-/** The groups that earlier editions of the season have shown: what a new group must not be subtracted from. */
-async function readRegistry(seasonStartYear: number, transaction: Transaction) {
+async function readEarlierEditionIds(seasonStartYear: number, transaction: Transaction) {
   const editions = await Edition.findAll({ attributes: ["id"], where: { seasonStartYear }, transaction });
+  return editions.map((edition) => edition.id);
+}
+
+/** The groups that earlier editions of the season have shown: what a new group must not be subtracted from. */
+async function readRegistry(editionIds: readonly number[], transaction: Transaction) {
   const members = await EditionMember.findAll({
-    where: { editionId: editions.map((edition) => edition.id), isPublished: true },
+    where: { editionId: [...editionIds], isPublished: true },
     transaction,
   });
   return members.flatMap(({ indicator, groupKey, contributorIds, figures }) =>
@@ -42,9 +46,12 @@ async function readRegistry(seasonStartYear: number, transaction: Transaction) {
 
 async function computeEdition(seasonStartYear: number, transaction: Transaction) {
   const towns = await readPeerFigures(seasonStartYear, transaction);
-  const registry = await readRegistry(seasonStartYear, transaction);
+  const earlierIds = await readEarlierEditionIds(seasonStartYear, transaction);
+  const registry = await readRegistry(earlierIds, transaction);
+  const hasEarlierRows = (await EditionRow.count({ where: { editionId: earlierIds }, transaction })) > 0;
   const random = () => randomInt(2 ** 32) / 2 ** 32;
-  return { towns, built: buildEdition({ seasonStartYear, towns, registry, policy: defaultPolicy, random }) };
+  const policy = defaultPolicy;
+  return { towns, built: buildEdition({ seasonStartYear, towns, registry, hasEarlierRows, policy, random }) };
 }
 
 export type EditionPreview = {

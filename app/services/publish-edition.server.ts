@@ -11,12 +11,14 @@ import { editionLetter } from "#app/emails/season.ts";
 import { now } from "#app/lib/clock.server.ts";
 import { inTransaction, isDuplicate } from "#app/lib/db.server.ts";
 import { env } from "#app/lib/env.server.ts";
+import { notFound } from "#app/lib/errors.ts";
 import { sha256 } from "#app/lib/secrets.server.ts";
 import { Edition } from "#app/models/edition.server.ts";
 import { EditionCell } from "#app/models/edition-cell.server.ts";
 import { EditionMember } from "#app/models/edition-member.server.ts";
 import { EditionPlace } from "#app/models/edition-place.server.ts";
 import { EditionRow } from "#app/models/edition-row.server.ts";
+import { Season } from "#app/models/season.server.ts";
 import { recordAudit } from "./audit.server.ts";
 import { queueJob } from "./jobs.server.ts";
 import { allDirectors } from "./mail-recipients.server.ts";
@@ -92,9 +94,11 @@ export async function previewEdition(_actor: NetworkActor, seasonStartYear: numb
  *
  * @param number - the number the coordinator was shown
  * @returns `{ ok: false }` when another edition was published meanwhile
+ * @throws 404 when the network has not opened that season
  */
 export async function requestEdition(actor: NetworkActor, seasonStartYear: number, number: number) {
   const request = async (transaction: Transaction) => {
+    if (!(await Season.findByPk(seasonStartYear, { transaction }))) throw notFound("season");
     const last = await Edition.max<number | null, Edition>("number", { where: { seasonStartYear }, transaction });
     if (number !== (last ?? 0) + 1) return { ok: false, reason: "published-meanwhile" } as const;
     const payload = { seasonStartYear, number, requestedById: actor.userId, isAnnounced: true };

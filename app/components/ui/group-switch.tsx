@@ -24,7 +24,7 @@ export function GroupSwitch({ label, choices }: Props) {
   return (
     <>
       <p className="mt-3 hidden print:block">
-        {label}: <b>{current?.label}</b>
+        Compared with: <b>{current?.label}</b>
         {current?.townCountWords !== undefined && `, ${current.townCountWords} towns`}
       </p>
       <nav aria-label={label} className="mt-5 border-b border-line print:hidden">

@@ -115,7 +115,7 @@ export default function Truck({ loaderData: { truck } }: Route.ComponentProps) {
         {truck.lanesPerPass === 1 ? "lane" : `pass over ${truck.lanesPerPass} lanes`}. Rates are yardsticks: policy,
         road, weather and the person responsible decide how much is applied.
       </Method>
-      <div className="mt-6">
+      <div className="mt-6 max-sm:[&_:is(th,td)]:pr-1! max-sm:[&_table]:text-s">
         <RateTable truck={truck} calibration={newest} />
       </div>
       <p className="mt-2 text-note text-gravel">

@@ -136,7 +136,7 @@ export default function Peers({ loaderData: { standing } }: Route.ComponentProps
 
 function partWords(groupKey: string) {
   if (groupKey.startsWith("size-")) return "by size";
-  return groupKey.startsWith("district-") ? "by district" : "all";
+  return groupKey.startsWith("district-") ? "by district" : "compare with";
 }
 
 type Strips = NonNullable<Route.ComponentProps["loaderData"]["standing"]>["strips"];

@@ -18,7 +18,7 @@ import type { Route } from "./+types/components";
 export function loader() {
   if (!env.devPages) throw notFound("page");
   return {
-    strips: stripSamples.map((sample) => ({ ...sample, svg: laneStripSvgs(sample.spec) })),
+    strips: stripSamples,
     front: laneStripSvgs(exampleStrip),
     wall: laneStripSvg(wallSample, "wall"),
   };

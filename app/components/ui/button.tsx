@@ -12,8 +12,7 @@ const sizes: Record<Size, string> = {
   yard: "min-h-target-yard px-5 py-2 text-head",
 };
 const looks: Record<Variant, string> = {
-  primary:
-    "bg-spruce text-on-spruce hover:bg-spruce-deep active:bg-asphalt active:text-salt",
+  primary: "bg-spruce text-on-spruce hover:bg-spruce-deep active:bg-asphalt active:text-salt",
   quiet:
     "border-[1.5px] border-spruce text-spruce hover:bg-spruce-wash active:bg-asphalt active:border-asphalt active:text-salt",
 };

@@ -27,13 +27,6 @@ export class Calibration extends Model<InferAttributes<Calibration>, InferCreati
   declare sameDayNumber: CreationOptional<number>;
   declare note: CreationOptional<string>;
   declare state: CreationOptional<"ready" | "approved">;
-  declare method: CreationOptional<"counts" | "timed-catch">;
-  declare gateScaleMark: CreationOptional<string | null>;
-  /** Whose counts were used again after a gate change. */
-  declare countsFromCalibrationId: CreationOptional<number | null>;
-  /** Above 1 when the same truck, material and gate were weighed again on the same day. */
-  declare sameDayNumber: CreationOptional<number>;
-  declare note: CreationOptional<string>;
   declare uploadId: CreationOptional<number | null>;
   declare createdById: CreationOptional<number | null>;
   declare createdAt: Date;
@@ -59,11 +52,6 @@ Calibration.init(
     sameDayNumber: DataTypes.INTEGER.UNSIGNED,
     note: DataTypes.STRING(500),
     state: DataTypes.STRING(24),
-    method: DataTypes.STRING(16),
-    gateScaleMark: DataTypes.STRING(20),
-    countsFromCalibrationId: DataTypes.INTEGER.UNSIGNED,
-    sameDayNumber: DataTypes.INTEGER.UNSIGNED,
-    note: DataTypes.STRING(500),
     uploadId: DataTypes.INTEGER.UNSIGNED,
     createdById: DataTypes.INTEGER.UNSIGNED,
     createdAt: { type: DataTypes.DATE(3), allowNull: false },

@@ -101,10 +101,6 @@ async function save(step: Step, existing: StoredWorksheet | null) {
   if (!isSameSheet(SheetSchema.parse(existing.content), sheet)) {
     await existing.update({ ...content, ...stamp, version: existing.version + 1 }, { transaction });
   }
-  await WorksheetVersion.update(
-    { settledAt: now() },
-    { where: { worksheetId: existing.id, id: request.settles, settledAt: null }, transaction },
-  );
   return existing;
 }
 
@@ -120,6 +116,10 @@ async function settle(step: Step): Promise<Answered> {
     const isSame = isSameSheet(SheetSchema.parse(existing.content), request.sheet);
     const isBehind = existing.version !== request.baseVersion || existing.state === "finished";
     if (isBehind && !isSame) return keepBoth(step, existing);
+    await WorksheetVersion.update(
+      { settledAt: now() },
+      { where: { worksheetId: existing.id, id: request.settles, settledAt: null }, transaction },
+    );
     if (existing.state === "finished" && existing.calibrationId !== null) {
       const { version, calibrationId } = existing;
       return { status: 200, body: { outcome: "finished", version, calibrationId } satisfies SyncAnswer };

@@ -1,0 +1,24 @@
+import { townActor } from "#app/context.ts";
+import { notFound } from "#app/lib/errors.ts";
+import { receiveWorksheet } from "#app/services/worksheets/sync.server.ts";
+import { SyncRequest } from "#app/services/worksheets/sheet-schema.server.ts";
+import type { Route } from "./+types/worksheet-sync";
+
+const mostBytes = 200_000;
+
+export function loader() {
+  throw notFound("page");
+}
+
+/** Takes one worksheet from a phone. */
+export async function action({ context, request }: Route.ActionArgs) {
+  if (Number(request.headers.get("content-length") ?? Number.POSITIVE_INFINITY) > mostBytes) {
+    return Response.json({ outcome: "refused", message: "This worksheet is too large to be one." }, { status: 413 });
+  }
+  const parsed = SyncRequest.safeParse(await request.json().catch(() => null));
+  if (!parsed.success) {
+    return Response.json({ outcome: "refused", message: "This is not a worksheet as this page sends it." }, { status: 400 });
+  }
+  const { status, body } = await receiveWorksheet(townActor(context), parsed.data);
+  return Response.json(body, { status });
+}

@@ -35,7 +35,7 @@ export function createServer({ build, origin }) {
   });
   const files = { index: false, redirect: false };
   app.use("/assets", express.static(join(client, "assets"), { ...files, immutable: true, maxAge: "1y" }));
-  app.use(express.static(client, { ...files, maxAge: 0 }));
+  app.use(express.static(client, { ...files, maxAge: 0, setHeaders: allowWorkerItsFetches }));
   app.use(createRequestHandler({ build, mode: "production" }));
   app.use((error, _request, response, next) => {
     console.error(error);
@@ -47,6 +47,12 @@ export function createServer({ build, origin }) {
   return createHttpServer(limits, app).on("clientError", (error, socket) => {
     if (socket.writable) socket.end(unreadableRequestAnswer(error.code, headers));
   });
+}
+
+/** The service worker's own policy rules what it may fetch: this origin, and nothing else. */
+function allowWorkerItsFetches(response, path) {
+  if (path !== join(client, "sw.js")) return;
+  response.set("Content-Security-Policy", "default-src 'none'; connect-src 'self'; frame-ancestors 'none'");
 }
 
 function sendPlain(response, status, sentence) {

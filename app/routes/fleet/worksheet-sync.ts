@@ -1,5 +1,5 @@
 import { townActor } from "#app/context.ts";
-import { notFound } from "#app/lib/errors.ts";
+import { forbidden, notFound } from "#app/lib/errors.ts";
 import { receiveWorksheet } from "#app/services/worksheets/sync.server.ts";
 import { SyncRequest } from "#app/services/worksheets/sheet-schema.server.ts";
 import type { Route } from "./+types/worksheet-sync";
@@ -19,6 +19,10 @@ export async function action({ context, request }: Route.ActionArgs) {
   if (!parsed.success) {
     return Response.json({ outcome: "refused", message: "This is not a worksheet as this page sends it." }, { status: 400 });
   }
-  const { status, body } = await receiveWorksheet(townActor(context), parsed.data);
+  const actor = townActor(context);
+  if (parsed.data.owner !== `${actor.userId}:${actor.townId}`) {
+    throw forbidden("This worksheet is another person’s. It stays on the phone until that person signs in.");
+  }
+  const { status, body } = await receiveWorksheet(actor, parsed.data);
   return Response.json(body, { status });
 }

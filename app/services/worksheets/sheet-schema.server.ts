@@ -53,6 +53,8 @@ export const SheetSchema = z.strictObject({
 export const SyncRequest = z
   .strictObject({
     opId: z.uuid(),
+    /** Whose phone's draft it is, as "person:town": it must be the one who is signed in. */
+    owner: z.string().regex(/^\d{1,10}:\d{1,10}$/),
     clientRef: z.uuid(),
     /** The server's version that the sheet grew from; 0 when the server has not had it yet. */
     baseVersion: z.int().min(0).max(1_000_000),

@@ -4,7 +4,7 @@ import { fileURLToPath, pathToFileURL } from "node:url";
 import { createRequestHandler } from "@react-router/express";
 import express from "express";
 import { refusalOf } from "./refusal.js";
-import { defaultHeaders, fillInHeaders, unreadableRequestAnswer } from "./response-headers.js";
+import { defaultHeaders, fillInHeaders, headersFor, unreadableRequestAnswer } from "./response-headers.js";
 import { projectFolder } from "./settings.js";
 import { stopOnRequest } from "./stop.js";
 
@@ -22,7 +22,7 @@ export function createServer({ build, origin }) {
   const app = express().disable("x-powered-by").set("trust proxy", "loopback");
 
   app.use((request, response, next) => {
-    fillInHeaders(response, headers);
+    fillInHeaders(response, headersFor(headers, request.path));
     const refusal = refusalOf(request, address.host);
     if (refusal !== null) return sendPlain(response.set(refusal.headers ?? {}), refusal.status, refusal.sentence);
     for (const name of Object.keys(request.headers)) {
@@ -35,7 +35,7 @@ export function createServer({ build, origin }) {
   });
   const files = { index: false, redirect: false };
   app.use("/assets", express.static(join(client, "assets"), { ...files, immutable: true, maxAge: "1y" }));
-  app.use(express.static(client, { ...files, maxAge: 0, setHeaders: allowWorkerItsFetches }));
+  app.use(express.static(client, { ...files, maxAge: 0 }));
   app.use(createRequestHandler({ build, mode: "production" }));
   app.use((error, _request, response, next) => {
     console.error(error);
@@ -47,12 +47,6 @@ export function createServer({ build, origin }) {
   return createHttpServer(limits, app).on("clientError", (error, socket) => {
     if (socket.writable) socket.end(unreadableRequestAnswer(error.code, headers));
   });
-}
-
-/** The service worker's own policy rules what it may fetch: this origin, and nothing else. */
-function allowWorkerItsFetches(response, path) {
-  if (path !== join(client, "sw.js")) return;
-  response.set("Content-Security-Policy", "default-src 'none'; connect-src 'self'; frame-ancestors 'none'");
 }
 
 function sendPlain(response, status, sentence) {

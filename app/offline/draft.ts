@@ -2,11 +2,17 @@ import type { Worksheet } from "#app/domain/calibration/worksheet.ts";
 import type { SyncAnswer, WorksheetCopy } from "#app/domain/calibration/worksheet-sync.ts";
 import type { Finding } from "#app/domain/finding.ts";
 
-/** A count by the clock that is going on: kept, so that a page opened again goes on with it. */
-export type RunningCount = { setting: string; seconds: number; startedAtMs: number; turns: number };
+import type { RunningCount } from "#app/components/worksheet/running-count.ts";
 
 /** Two versions that met. `theirs` is the one that stands on the server; ours is the draft's sheet. */
-export type Conflict = Omit<Extract<SyncAnswer, { outcome: "conflict" }>, "outcome">;
+export type Conflict = {
+  theirs: Worksheet;
+  version: number;
+  device: string;
+  /** Where the server keeps ours meanwhile; null when ours has not been sent. */
+  keptVersionId: number | null;
+  calibrationId: number | null;
+};
 
 /** A worksheet on this phone. */
 export type Draft = {
@@ -125,12 +131,23 @@ export function afterAnswer(draft: Draft, message: Message, answer: SyncAnswer):
     settles: draft.settles.filter((id) => !message.settles.includes(id)),
   };
   if (answer.outcome === "finished") {
-    // The calibration is made of what was sent; what was typed after it could only become another one.
-    return { ...heard, sheet: message.sheet, isDirty: false, wantsFinish: false, calibrationId: answer.calibrationId };
+    const done = { ...heard, isDirty: false, wantsFinish: false };
+    if (isSameSheet(draft.sheet, message.sheet)) return { ...done, calibrationId: answer.calibrationId };
+    // The calibration is made of what was sent. What was typed while it was on its way is not lost: a person decides.
+    const { version, calibrationId } = answer;
+    return {
+      ...done,
+      conflict: { theirs: message.sheet, version, device: message.device, keptVersionId: null, calibrationId },
+    };
   }
   const isAllSent = isSameSheet(draft.sheet, message.sheet) && draft.wantsFinish === message.isFinish;
   if (answer.outcome === "not-finished") {
-    return { ...heard, isDirty: !isSameSheet(draft.sheet, message.sheet), wantsFinish: false, problems: answer.problems };
+    return {
+      ...heard,
+      isDirty: !isSameSheet(draft.sheet, message.sheet),
+      wantsFinish: false,
+      problems: answer.problems,
+    };
   }
   return { ...heard, isDirty: !isAllSent };
 }
@@ -146,8 +163,8 @@ export function settled(draft: Draft, sheet: Worksheet, nowMs: number): Draft {
     baseVersion: conflict.version,
     calibrationId: conflict.calibrationId,
     conflict: null,
-    isDirty: true,
-    settles: [...draft.settles, conflict.keptVersionId],
+    isDirty: conflict.keptVersionId !== null || !isSameSheet(sheet, conflict.theirs),
+    settles: conflict.keptVersionId === null ? draft.settles : [...draft.settles, conflict.keptVersionId],
     editedAtMs: nowMs,
   };
 }

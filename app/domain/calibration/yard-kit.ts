@@ -6,6 +6,7 @@ import type { Count } from "./count-rate.ts";
 export type KitTruck = {
   id: number;
   unitNumber: string;
+  isInService: boolean;
   spreaderKind: "tailgate-auger" | "hopper-auger" | "conveyor" | "liquid-tanks";
   control: "manual" | "ground-speed";
   lanesPerPass: number;

@@ -17,7 +17,10 @@ export async function action({ context, request }: Route.ActionArgs) {
   }
   const parsed = SyncRequest.safeParse(await request.json().catch(() => null));
   if (!parsed.success) {
-    return Response.json({ outcome: "refused", message: "This is not a worksheet as this page sends it." }, { status: 400 });
+    return Response.json(
+      { outcome: "refused", message: "This is not a worksheet as this page sends it." },
+      { status: 400 },
+    );
   }
   const actor = townActor(context);
   if (parsed.data.owner !== `${actor.userId}:${actor.townId}`) {

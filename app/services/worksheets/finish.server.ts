@@ -102,7 +102,8 @@ async function storeReadings(calibrationId: number, readings: WorksheetReadings,
 export async function storeCalibration(actor: TownActor, sheet: Worksheet, transaction: Transaction): Promise<Stored> {
   // A yard west of Greenwich is a day behind in the evening, never ahead by more than one.
   const lastDay = new Date(now().getTime() + dayMs).toISOString().slice(0, 10);
-  if (sheet.testedOn > lastDay) return refused("future", "testedOn", "This day has not come yet. Give the day of the test.");
+  if (sheet.testedOn > lastDay)
+    return refused("future", "testedOn", "This day has not come yet. Give the day of the test.");
   const readings = worksheetReadings(sheet);
   if (!readings) {
     return refused(

@@ -53,13 +53,13 @@ async function listCalibrations(townId: number): Promise<KitCalibration[]> {
 }
 
 /**
- * All that a phone of this person needs in the yard, for every truck in service of the town.
+ * All that a phone of this person needs in the yard, for every truck of the town.
  *
  * @returns figures in lb, inches, seconds, mph; bands in lb per lane mile, null where a kind of material has none
  */
 export async function yardKit(actor: TownActor): Promise<YardKit> {
   const { townId } = actor;
-  const trucks = await Truck.findAll({ where: { townId, isInService: true }, order: [["unitNumber", "ASC"]], limit: 500 });
+  const trucks = await Truck.findAll({ where: { townId }, order: [["unitNumber", "ASC"]], limit: 500 });
   const [materials, carried, bands, percent, calibrations] = await Promise.all([
     Material.findAll({ attributes: ["id", "name", "kind"], where: { townId }, order: [["name", "ASC"]], limit: 100 }),
     TruckMaterial.findAll({ attributes: ["truckId", "materialId"], where: { truckId: trucks.map(({ id }) => id) } }),
@@ -76,6 +76,7 @@ export async function yardKit(actor: TownActor): Promise<YardKit> {
       .map((truck) => ({
         id: truck.id,
         unitNumber: truck.unitNumber,
+        isInService: truck.isInService,
         spreaderKind: truck.spreaderKind,
         control: truck.control,
         lanesPerPass: truck.lanesPerPass,

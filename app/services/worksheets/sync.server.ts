@@ -87,7 +87,15 @@ async function save(step: Step, existing: StoredWorksheet | null) {
   const stamp = { updatedById: actor.userId, updatedAt: now() };
   if (!existing) {
     const created = await StoredWorksheet.create(
-      { townId: actor.townId, clientRef, version: 1, ...content, ...stamp, createdById: actor.userId, createdAt: now() },
+      {
+        townId: actor.townId,
+        clientRef,
+        version: 1,
+        ...content,
+        ...stamp,
+        createdById: actor.userId,
+        createdAt: now(),
+      },
       { transaction },
     );
     const detail = { truckId: sheet.truckId, materialId: sheet.materialId };

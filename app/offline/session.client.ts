@@ -32,6 +32,8 @@ export function openYard(clientRef: string | null) {
   /** Typed and not yet written; the newest only. */
   let unwritten: Draft | null = null;
   let isWriting = false;
+  /** Counts what was typed, so that what was read before it is known to be old. */
+  let editCount = 0;
   let sendTimer: ReturnType<typeof setTimeout> | undefined;
   let isOpen = false;
   let interval: ReturnType<typeof setInterval> | undefined;
@@ -46,10 +48,12 @@ export function openYard(clientRef: string | null) {
 
   async function reread() {
     if (owner === null) return;
+    const before = editCount;
     const drafts = (await listDrafts(owner)).sort((a, b) => b.editedAtMs - a.editedAtMs);
     const stored = drafts.find((one) => one.clientRef === clientRef) ?? null;
-    // What is being typed is newer than what is stored.
-    show({ drafts, draft: unwritten ?? stored ?? snapshot.draft });
+    // What was typed meanwhile is newer than what was read: the writing shows it, with whatever the sender has noted.
+    if (unwritten || editCount !== before) return show({ drafts });
+    show({ drafts, draft: stored ?? snapshot.draft });
   }
 
   async function write() {
@@ -81,6 +85,7 @@ export function openYard(clientRef: string | null) {
 
   function keep(draft: Draft) {
     unwritten = draft;
+    editCount += 1;
     show({ draft });
     void write();
   }

@@ -60,11 +60,13 @@ type DeskProps = {
 };
 
 /** What is not typed yet counts as wrong, and is left unsaid until somebody wants to go on. */
+const afterTapMs = 300;
 const notYetCodes = ["blank", "not-ticked", "no-count", "no-catch"];
 
 function useEditor({ yard, draft, kit, truck, material }: DeskProps) {
   const { sheet } = draft;
   const [focused, setFocused] = useState<string | null>(null);
+  const leaving = useRef<ReturnType<typeof setTimeout>>(undefined);
   const [attempted, setAttempted] = useState<readonly WorksheetStep[]>([]);
   const problems = useMemo(() => worksheetProblems(sheet, truck), [sheet, truck]);
   const earlier = useMemo(
@@ -92,7 +94,17 @@ function useEditor({ yard, draft, kit, truck, material }: DeskProps) {
     isFinished: draft.calibrationId !== null,
     problemOf: (field) => byField.get(field) ?? null,
   };
-  return { editor, problems, setFocused, attempt: (step: WorksheetStep) => setAttempted([...attempted, step]) };
+  function enter(target: EventTarget) {
+    if (!(target instanceof HTMLInputElement)) return;
+    clearTimeout(leaving.current);
+    setFocused(target.name);
+  }
+  /** A little later, or the sentence that appears would push the key away from under the finger that is on it. */
+  function leave() {
+    clearTimeout(leaving.current);
+    leaving.current = setTimeout(() => setFocused(null), afterTapMs);
+  }
+  return { editor, problems, enter, leave, attempt: (step: WorksheetStep) => setAttempted([...attempted, step]) };
 }
 
 const groups: { group: string; steps: readonly WorksheetStep[] }[] = [
@@ -139,7 +151,7 @@ function Desk(props: DeskProps) {
   const { yard, snapshot, draft, truck, material } = props;
   const { sheet, running, calibrationId } = draft;
   const { step, go } = useStep(draft, truck);
-  const { editor, problems, setFocused, attempt } = useEditor(props);
+  const { editor, problems, enter, leave, attempt } = useEditor(props);
   const needsWork = step === "rates" || step === "decision" || step === "card";
   const worked = useMemo(
     () => (needsWork ? workedOut({ sheet, truck, band: editor.band, earlier: editor.earlier }) : null),
@@ -196,10 +208,7 @@ function Desk(props: DeskProps) {
       }
     >
       <SendNotice snapshot={snapshot} draft={draft} />
-      <div
-        onFocus={({ target }) => setFocused(target instanceof HTMLInputElement ? target.name : null)}
-        onBlur={() => setFocused(null)}
-      >
+      <div onFocus={({ target }) => enter(target)} onBlur={leave}>
         <Step
           {...props}
           step={step}

@@ -1,5 +1,5 @@
 import { useState } from "react";
-import { settingsWithLimit } from "#app/domain/calibration/count-rate.ts";
+import { fallsInCount, settingsWithLimit } from "#app/domain/calibration/count-rate.ts";
 import { readableReadings, type WorksheetCount } from "#app/domain/calibration/worksheet.ts";
 import { readNumber } from "#app/domain/readings.ts";
 import { listWords } from "#app/lib/words.ts";
@@ -32,7 +32,9 @@ function nextSetting(counts: readonly WorksheetCount[]) {
 /** The settings that turn no faster, in a sentence; null when none is found yet. */
 function limitWords(editor: Editor) {
   try {
-    const settings = settingsWithLimit(readableReadings(editor.sheet).counts);
+    const { counts } = readableReadings(editor.sheet);
+    if (fallsInCount(counts).length > 0) return null;
+    const settings = settingsWithLimit(counts);
     const limited = settings.filter(({ isAtHydraulicLimit }) => isAtHydraulicLimit).map(({ setting }) => setting);
     const last = settings.filter(({ isAtHydraulicLimit }) => !isAtHydraulicLimit).at(-1);
     if (!last || limited.length === 0) return null;
@@ -213,7 +215,7 @@ function CountRows({ editor, rpm, setting, onAdd }: RowsProps) {
       {sheet.counts.length > 0 && (
         <div
           aria-hidden="true"
-          className="mt-1.5 grid grid-cols-[3.4rem_1fr_1fr_1fr_2.75rem] gap-x-1.5 text-right text-note text-gravel"
+          className="mt-1.5 grid grid-cols-[2.75rem_4.5rem_1fr_4.5rem_3rem] gap-x-1.5 text-right text-note text-gravel"
         >
           {fields.map((name) => (
             <span key={name} className="pr-2">
@@ -225,7 +227,7 @@ function CountRows({ editor, rpm, setting, onAdd }: RowsProps) {
       <ul className="grid gap-2">
         {sheet.counts.map((count, place) => (
           <li key={count.id}>
-            <div className="grid grid-cols-[3.4rem_1fr_1fr_1fr_2.75rem] gap-x-1.5">
+            <div className="grid grid-cols-[2.75rem_4.5rem_1fr_4.5rem_3rem] gap-x-1.5">
               {fields.map((name) => (
                 <Figure
                   key={name}

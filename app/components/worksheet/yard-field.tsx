@@ -35,7 +35,7 @@ export function Figure({ editor, field, name, value, onText, mode = "decimal" }:
       value={value}
       disabled={editor.isFinished}
       onChange={(event) => onText(event.target.value)}
-      className={`${box} px-2 text-right text-l font-semibold tabular-nums ${problem?.severity === "error" ? "border-rust" : "border-rule-field"}`}
+      className={`${box} px-1.75 text-right text-head font-semibold tabular-nums ${problem?.severity === "error" ? "border-rust" : "border-rule-field"}`}
     />
   );
 }

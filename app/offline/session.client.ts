@@ -155,6 +155,8 @@ export function openYard(clientRef: string | null) {
 
   function wake() {
     if (document.visibilityState !== "visible") return;
+    // Somebody may have signed in elsewhere on this phone, or signal may have come back.
+    if (snapshot.phase === "absent") return void hearServer();
     void reread();
     sendSoon(0);
   }

@@ -90,10 +90,18 @@ export function StepCounts({ editor, running, onRun }: Props) {
               rpm,
             });
             onRun(null);
+            focusSoon("step-heading");
           }}
         />
         <div className="mt-2 grid">
-          <YardKey onClick={() => onRun(null)}>Leave without this count</YardKey>
+          <YardKey
+            onClick={() => {
+              onRun(null);
+              focusSoon("step-heading");
+            }}
+          >
+            Leave without this count
+          </YardKey>
         </div>
         <Tally counts={sheet.counts} now={running} />
       </>

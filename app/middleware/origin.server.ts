@@ -15,10 +15,9 @@ function hasBody({ headers }: Request) {
  * method. A program with a bearer token has no cookie to abuse and sends no Origin: it is let through to its own door.
  */
 export const originMiddleware: MiddlewareFunction<Response> = ({ request }) => {
+  const hasToken = /^bearer /i.test(request.headers.get("authorization") ?? "");
+  if (hasToken && request.headers.has("cookie")) throw badRequest("Send a token or a session, not both.");
   if (safeMethods.includes(request.method)) return;
-  const hasToken = request.headers.has("authorization");
-  const hasCookie = request.headers.has("cookie");
-  if (hasToken && hasCookie) throw badRequest("Send a token or a session, not both.");
   if (!hasToken) {
     const origin = request.headers.get("origin");
     const site = request.headers.get("sec-fetch-site");

@@ -17,6 +17,10 @@ export default [
   route("account", "routes/account/account.tsx"),
 
   route("fleet", "routes/fleet/fleet.tsx"),
+  route("fleet/worksheets", "routes/fleet/worksheets.tsx"),
+  route("fleet/worksheets/kit", "routes/fleet/worksheet-kit.ts"),
+  route("fleet/worksheets/sync", "routes/fleet/worksheet-sync.ts"),
+  route("fleet/worksheets/:clientRef", "routes/fleet/worksheet.tsx"),
   route("fleet/:truckId", "routes/fleet/truck.tsx"),
 
   route("season", "routes/season/latest-season.ts"),

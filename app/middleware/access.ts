@@ -31,6 +31,11 @@ const access: Record<Page, Rule> = {
   "/account": session(everyone, everyone),
 
   "/fleet": session(town, ["director"]),
+  "/fleet/worksheets": session(town),
+  "/fleet/worksheets/kit": session(town),
+  "/fleet/worksheets/sync": session([], town),
+  // Holds no data of its own, so that a phone may keep it and open it without signal; what it shows is on the phone.
+  "/fleet/worksheets/:clientRef": "public",
   "/fleet/:truckId": session(town),
   "/season": session(town),
   "/season/:seasonStartYear": session(town, ["director"]),

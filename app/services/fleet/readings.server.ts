@@ -1,0 +1,103 @@
+import { QueryTypes } from "sequelize";
+import type { Catch } from "#app/domain/calibration/catch-weight.ts";
+import type { Count } from "#app/domain/calibration/count-rate.ts";
+import type { TimedCatch } from "#app/domain/calibration/timed-catch.ts";
+import { db } from "#app/lib/db.server.ts";
+import { CalibrationCatch } from "#app/models/calibration-catch.server.ts";
+import { CalibrationCount } from "#app/models/calibration-count.server.ts";
+
+/** What was counted and caught in the yard, as it was read. A calibration has counts and catches, or timed catches. */
+export type Readings = {
+  counts: Count[];
+  catches: Catch[];
+  timedCatches: (TimedCatch & { setting: number })[];
+};
+
+function grouped<Row extends { calibrationId: number }>(rows: readonly Row[]): Map<number, Row[]> {
+  const groups = new Map<number, Row[]>();
+  for (const row of rows) {
+    const group = groups.get(row.calibrationId);
+    if (group) group.push(row);
+    else groups.set(row.calibrationId, [row]);
+  }
+  return groups;
+}
+
+type TimedRow = TimedCatch & { calibrationId: number; setting: number };
+
+async function timedRows(ids: readonly number[]): Promise<TimedRow[]> {
+  return db.query<TimedRow>(
+    `SELECT calibration_id AS calibrationId, setting, seconds, gross_lb AS grossLb, tare_lb AS tareLb
+       FROM calibration_timed_catch WHERE calibration_id IN (?) ORDER BY calibration_id, position`,
+    { type: QueryTypes.SELECT, replacements: [ids] },
+  );
+}
+
+/**
+ * The raw readings of calibrations, in the order in which they were taken.
+ *
+ * @param ids - calibrations that the caller has already found to be the town's
+ * @returns one entry for each id, with empty lists where there are no readings
+ */
+export async function readingsOf(ids: readonly number[]): Promise<Map<number, Readings>> {
+  if (ids.length === 0) return new Map();
+  const where = { calibrationId: [...ids] };
+  const [counts, catches, timed] = await Promise.all([
+    CalibrationCount.findAll({ where, order: ["setting"], raw: true }),
+    CalibrationCatch.findAll({ where, order: ["position"], raw: true }),
+    timedRows(ids),
+  ]);
+  const [countsById, catchesById, timedById] = [grouped(counts), grouped(catches), grouped(timed)];
+  return new Map(
+    ids.map((id) => [
+      id,
+      {
+        counts: (countsById.get(id) ?? []).map(({ setting, revolutions, seconds }) => ({
+          setting,
+          revolutions,
+          seconds,
+        })),
+        catches: (catchesById.get(id) ?? []).map(({ revolutions, grossLb, tareLb }) => ({
+          revolutions,
+          grossLb,
+          tareLb,
+        })),
+        timedCatches: (timedById.get(id) ?? []).map(({ setting, seconds, grossLb, tareLb }) => ({
+          setting,
+          seconds,
+          grossLb,
+          tareLb,
+        })),
+      },
+    ]),
+  );
+}
+
+export type Verification = TimedCatch & { speedMph: number; commandedLbPerLaneMile: number };
+export type LiquidReading = {
+  kind: "prewet" | "direct";
+  gallons: number;
+  seconds: number;
+  speedMph: number | null;
+  lanes: number | null;
+  dryLbPerMin: number | null;
+};
+
+/** The readings at simulated speeds of one calibration, in their order; empty where there are none. */
+export async function verificationsOf(calibrationId: number): Promise<Verification[]> {
+  return db.query<Verification>(
+    `SELECT speed_mph AS speedMph, commanded_lb_per_lane_mile AS commandedLbPerLaneMile, seconds,
+            gross_lb AS grossLb, tare_lb AS tareLb
+       FROM calibration_verification WHERE calibration_id = ? ORDER BY position`,
+    { type: QueryTypes.SELECT, replacements: [calibrationId] },
+  );
+}
+
+/** The liquid readings of one calibration, in their order; empty where there are none. */
+export async function liquidsOf(calibrationId: number): Promise<LiquidReading[]> {
+  return db.query<LiquidReading>(
+    `SELECT kind, gallons, seconds, speed_mph AS speedMph, lanes, dry_lb_per_min AS dryLbPerMin
+       FROM calibration_liquid WHERE calibration_id = ? ORDER BY position`,
+    { type: QueryTypes.SELECT, replacements: [calibrationId] },
+  );
+}

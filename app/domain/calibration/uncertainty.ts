@@ -20,7 +20,7 @@ function studentT(degreesOfFreedom: number) {
 }
 
 /** Coverage factor for about 95 %. Source: NIST Technical Note 1297 (1994), section 6. */
-const coverageFactor = 2;
+export const coverageFactor = 2;
 /** Whole revolutions are counted: the true number lies within half a one, evenly likely. */
 const countHalfWidthRev = 0.5;
 

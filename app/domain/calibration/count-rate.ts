@@ -50,6 +50,23 @@ export function settingsWithLimit(counts: readonly Count[]): SettingCount[] {
 }
 
 /**
+ * Where the hydraulics give no more.
+ *
+ * @param settings - as `settingsWithLimit` gives them
+ * @returns the last setting whose count still rose, its count, and the settings above that give no more than it; null
+ *   when every count rises
+ * @example counts of 10, 20 and 20 at settings 1 to 3 // { lastRisingSetting: 2, revPerMin: 20, limitedSettings: [3] }
+ */
+export function hydraulicLimit(
+  settings: readonly SettingCount[],
+): { lastRisingSetting: number; revPerMin: number; limitedSettings: number[] } | null {
+  const limitedSettings = settings.filter((one) => one.isAtHydraulicLimit).map(({ setting }) => setting);
+  const lastRising = settings.filter((one) => !one.isAtHydraulicLimit).at(-1);
+  if (!lastRising || limitedSettings.length === 0) return null;
+  return { lastRisingSetting: lastRising.setting, revPerMin: lastRising.revPerMin, limitedSettings };
+}
+
+/**
  * The places at which the count falls though the setting rises, by more than counting can be wrong.
  *
  * @param counts - in any order, each above 0

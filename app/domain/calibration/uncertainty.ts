@@ -25,7 +25,7 @@ export const coverageFactor = 2;
 const countHalfWidthRev = 0.5;
 
 /** Standard uncertainty of an error that is evenly likely within ± the half-width. Source: NIST TN 1297, section 4.6. */
-function rectangular(halfWidth: number) {
+export function rectangular(halfWidth: number) {
   return halfWidth / Math.sqrt(3);
 }
 

@@ -1,12 +1,12 @@
 import { TextLink } from "#app/components/ui/text-link.tsx";
-import type { DueReasonCode, DueStateOfLine } from "./due-words.ts";
-import { dueReasonWords, dueWords } from "./due-words.ts";
+import type { DueReason } from "#app/domain/calibration/due.ts";
+import { dueReasonWords, type DueStateOfLine, dueWords } from "./due-words.ts";
 
 const glyphs: Record<DueStateOfLine, string> = {
   "in-date": "M1.2 5.4 4 8.4 9 2l1 1L4 10.4.2 6.4z",
-  due: "M5 0a5 5 0 1 1 0 10A5 5 0 0 1 5 0zm0 1.6v6.8a3.4 3.4 0 0 0 0-6.8z",
-  overdue: "M5 0a5 5 0 1 1 0 10A5 5 0 0 1 5 0z",
-  never: "M5 0a5 5 0 1 1 0 10A5 5 0 0 1 5 0zm0 1.6a3.4 3.4 0 1 0 0 6.8 3.4 3.4 0 0 0 0-6.8z",
+  due: "M5 .5a5 5 0 1 1 0 10 5 5 0 0 1 0-10zm0 1.7v6.6a3.3 3.3 0 0 0 0-6.6z",
+  overdue: "M5 .5a5 5 0 1 1 0 10 5 5 0 0 1 0-10z",
+  never: "M.5 4.7h9v1.6h-9z",
 };
 
 const looks: Record<DueStateOfLine, string> = {
@@ -16,19 +16,38 @@ const looks: Record<DueStateOfLine, string> = {
   never: "text-gravel",
 };
 
-type Props = { state: DueStateOfLine; reason?: DueReasonCode | null; to?: string };
+type Props = {
+  due: DueReason;
+  /** Where the state is explained or mended. */
+  to?: string;
+  isReasonShown?: boolean;
+};
 
 /** Whether a truck is to be weighed with a material: a shape, a word, and the reason where there is one. */
-export function DueMark({ state, reason = null, to }: Props) {
+export function DueMark({ due, to, isReasonShown = true }: Props) {
+  const reason = isReasonShown ? dueReasonWords(due) : "";
   return (
-    <span className={`whitespace-nowrap ${looks[state]}`}>
-      <svg viewBox="0 0 10 11" aria-hidden="true" className="mr-1.5 inline-block size-[0.76em] fill-current">
-        <path d={glyphs[state]} />
-      </svg>
-      {to === undefined ? dueWords[state] : <TextLink to={to}>{dueWords[state]}</TextLink>}
-      {reason !== null && dueReasonWords[reason] !== "" && (
-        <span className="block text-note font-normal whitespace-normal text-gravel">{dueReasonWords[reason]}</span>
-      )}
+    <span>
+      <span className={`whitespace-nowrap ${looks[due.state]}`}>
+        <svg viewBox="0 0 10 11" aria-hidden="true" className="mr-1.5 inline-block h-[0.8em] w-[0.73em] fill-current">
+          <path d={glyphs[due.state]} />
+        </svg>
+        {to === undefined ? dueWords[due.state] : <TextLink to={to}>{dueWords[due.state]}</TextLink>}
+      </span>
+      {reason !== "" && <span className="block text-note leading-snug text-gravel">{reason}</span>}
     </span>
+  );
+}
+
+/** What the shapes stand for. */
+export function DueKey() {
+  const states: DueStateOfLine[] = ["in-date", "due", "overdue", "never"];
+  const plain = { reason: null, dueSince: null };
+  return (
+    <p className="mt-2 flex flex-wrap gap-x-5 text-note text-gravel">
+      {states.map((state) => (
+        <DueMark key={state} due={{ state, ...plain }} />
+      ))}
+    </p>
   );
 }

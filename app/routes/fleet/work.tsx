@@ -72,10 +72,17 @@ export default function Work({ loaderData, actionData, params }: Route.Component
     <Page>
       <Answer>What was worked on in truck {unitNumber}?</Answer>
       <Method>
-        After work on gate, hydraulics, feed or controller the truck lays something else than before. Entered here, every
-        calibration up to that day is due again at once.
+        After work on gate, hydraulics, feed or controller the truck lays something else than before. Entered here,
+        every calibration up to that day is due again at once.
       </Method>
-      <KeptForm formKey="work" ownerId={userId} method="post" {...getFormProps(form)} noValidate className="mt-6 grid gap-5">
+      <KeptForm
+        formKey="work"
+        ownerId={userId}
+        method="post"
+        {...getFormProps(form)}
+        noValidate
+        className="mt-6 grid gap-5"
+      >
         <input type="hidden" name="clientRef" value={clientRef} />
         <SelectField
           {...fieldWords(fields.part)}

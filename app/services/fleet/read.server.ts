@@ -12,7 +12,7 @@ import { Truck } from "#app/models/truck.server.ts";
 import { TruckMaterial } from "#app/models/truck-material.server.ts";
 import { TruckWork, type WorkPart } from "#app/models/truck-work.server.ts";
 import { type BandInForce, bandsOfTown, type TownBands } from "../bands.server.ts";
-import { type Readings, readingsOf } from "./readings.server.ts";
+import { dischargeReadings, type Readings, readingsOf } from "./readings.server.ts";
 
 export type WorkingRate = {
   lbPerLaneMile: number;
@@ -57,18 +57,16 @@ type TruckPoint = Pick<TruckFacts, "lanesPerPass" | "workingSpeedMph" | "working
  * @returns lb per lane mile with its ± and place; null when that setting was not measured
  */
 export function workingRateOf(truck: TruckPoint, readings: Readings, band: BandInForce): WorkingRate | null {
-  const isTimed = readings.timedCatches.length > 0;
-  if (!isTimed && (readings.counts.length === 0 || readings.catches.length === 0)) return null;
+  const measured = dischargeReadings(readings);
+  if (measured === null) return null;
   const rows = rateSheet({
-    ...(isTimed ? { timedCatches: readings.timedCatches } : { counts: readings.counts, catches: readings.catches }),
+    ...measured,
     lanesPerPass: truck.lanesPerPass,
     speedsMph: [truck.workingSpeedMph],
     band,
   });
   const cell = rows.find(({ setting }) => setting === truck.workingSetting)?.cells[0];
-  return cell
-    ? { lbPerLaneMile: cell.lbPerLaneMile, plusMinusLbPerLaneMile: cell.plusMinus, place: cell.place }
-    : null;
+  return cell ? { lbPerLaneMile: cell.lbPerLaneMile, plusMinusLbPerLaneMile: cell.plusMinus, place: cell.place } : null;
 }
 
 /** A truck's facts, as every page of the fleet shows them. */
@@ -147,9 +145,7 @@ function calibrationLine(truck: Truck, calibration: Calibration, { readings, ban
 }
 
 function materialLine(truck: Truck, material: Material, all: Gathered, today: string): MaterialLine {
-  const own = all.calibrations.filter(
-    ({ truckId, materialId }) => truckId === truck.id && materialId === material.id,
-  );
+  const own = all.calibrations.filter(({ truckId, materialId }) => truckId === truck.id && materialId === material.id);
   const approved = own.find(({ state }) => state === "approved");
   const sinceOn =
     all.carried.find(({ truckId, materialId }) => truckId === truck.id && materialId === material.id)?.sinceOn ?? null;

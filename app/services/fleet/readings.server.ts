@@ -13,6 +13,12 @@ export type Readings = {
   timedCatches: (TimedCatch & { setting: number })[];
 };
 
+/** The readings as the rates take them; null where there are none to make rates of. */
+export function dischargeReadings({ counts, catches, timedCatches }: Readings) {
+  if (timedCatches.length > 0) return { timedCatches };
+  return counts.length > 0 && catches.length > 0 ? { counts, catches } : null;
+}
+
 function grouped<Row extends { calibrationId: number }>(rows: readonly Row[]): Map<number, Row[]> {
   const groups = new Map<number, Row[]>();
   for (const row of rows) {

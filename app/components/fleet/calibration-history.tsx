@@ -1,0 +1,97 @@
+import { DriftChart } from "#app/components/charts/drift-chart.tsx";
+import type { DriftSpec } from "#app/components/charts/drift-spec.ts";
+import { Heading } from "#app/components/layout/answer.tsx";
+import { TextLink } from "#app/components/ui/text-link.tsx";
+import { Timetable } from "#app/components/ui/timetable.tsx";
+import { formatInches, formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
+import { WorkingRateWords } from "./rate-words.tsx";
+
+type Line = {
+  id: number;
+  testedOn: string;
+  gateOpeningIn: number;
+  state: "ready" | "approved";
+  working: Parameters<typeof WorkingRateWords>[0]["working"];
+  driftPercent: number | null;
+  isDriftClear: boolean | null;
+};
+
+type Props = {
+  /** Oldest first. */
+  lines: readonly Line[];
+  ownId: number;
+  inForceId: number | null;
+  chart: { spec: DriftSpec; svg: { desk: string; phone: string } } | null;
+  workingWords: string;
+};
+
+function signed(percent: number) {
+  return `${percent > 0 ? "+" : percent < 0 ? "−" : ""}${formatOneDecimal(Math.abs(percent))} %`;
+}
+
+function driftWords({ driftPercent, isDriftClear }: Line) {
+  if (driftPercent === null) return "–";
+  if (isDriftClear === null) return signed(driftPercent);
+  return (
+    <>
+      {isDriftClear ? <b>{signed(driftPercent)}</b> : signed(driftPercent)}
+      <span className="block text-note text-gravel">{isDriftClear ? "more than the ± explains" : "within the ±"}</span>
+    </>
+  );
+}
+
+function stateWords({ id, state }: Line, inForceId: number | null) {
+  if (state === "ready") return <b>waits for approval</b>;
+  return id === inForceId ? "in force" : <span className="text-gravel">history</span>;
+}
+
+function sentence(lines: readonly Line[], ownId: number) {
+  const own = lines.find(({ id }) => id === ownId);
+  if (!own || own.driftPercent === null) return "There is no earlier calibration to compare this one with.";
+  const how =
+    own.isDriftClear === null
+      ? ""
+      : own.isDriftClear
+        ? " That is more than the two measurements can be wrong."
+        : " That is no more than the two measurements can be wrong.";
+  return `Against the calibration before, it moved by ${signed(own.driftPercent)}.${how}`;
+}
+
+/** Earlier calibrations of the same truck and material, with how far each moved. */
+export function CalibrationHistory({ lines, ownId, inForceId, chart, workingWords }: Props) {
+  return (
+    <section>
+      <Heading>Over the years</Heading>
+      <p className="mb-4 max-w-measure">{sentence(lines, ownId)}</p>
+      {chart && <DriftChart spec={chart.spec} svg={chart.svg} title={`Rates at ${workingWords} over the years`} />}
+      <div className="mt-4">
+        <Timetable
+          caption={`Every calibration with this material, newest first, at ${workingWords}`}
+          columns={[
+            { key: "day", label: "weighed" },
+            { key: "gate", label: "gate", unit: "in", isNumeric: true },
+            { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
+            { key: "drift", label: "drift", isNumeric: true },
+            { key: "state", label: "state" },
+          ]}
+          rows={[...lines].reverse().map((line) => ({
+            key: String(line.id),
+            isOurs: line.id === ownId,
+            cells: {
+              day:
+                line.id === ownId ? (
+                  formatShortDay(line.testedOn)
+                ) : (
+                  <TextLink to={`/fleet/calibrations/${line.id}`}>{formatShortDay(line.testedOn)}</TextLink>
+                ),
+              gate: formatInches(line.gateOpeningIn),
+              lays: <WorkingRateWords working={line.working} />,
+              drift: driftWords(line),
+              state: stateWords(line, inForceId),
+            },
+          }))}
+        />
+      </div>
+    </section>
+  );
+}

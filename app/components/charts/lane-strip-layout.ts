@@ -193,7 +193,11 @@ function layOutPlate(spec: LaneStripSpec, base: Base, flag: FlagLayout | null) {
       .map((place) => inside(place))
       .filter((place) => flag === null || Math.abs(place - flag.x) >= clear - 1)
       .sort((a, b) => Math.abs(a - tickX) - Math.abs(b - tickX))[0] ?? inside(tickX);
-  return { x1: middle - wide / 2, x2: middle + wide / 2, tickX, height: base.size === "wall" ? 43.7 : 20.8, words };
+  return { x1: middle - wide / 2, x2: middle + wide / 2, tickX, height: plateHeightPx(base.size), words };
+}
+
+function plateHeightPx(size: StripSize) {
+  return size === "wall" ? 43.7 : 20.8;
 }
 
 function layOutHeaps(spec: LaneStripSpec, base: Base) {
@@ -216,7 +220,8 @@ function layOutHeaps(spec: LaneStripSpec, base: Base) {
     );
     return { ...empty, grains, grainRadius, notches };
   }
-  const roomPx = base.laneHeight * (1 - centreShare) - (edgeInset + 8) * base.scale;
+  // From the foot of the heaps up to the lower edge of the plate, which no bar may touch.
+  const roomPx = base.laneHeight * (1 - centreShare) - (edgeInset + 5) * base.scale - plateHeightPx(base.size) / 2;
   const pitch = Math.min(12.35 * base.scale, roomPx / Math.max(1, ...counts));
   const halfWidth = Math.min(narrowest - 3 * base.scale, 35 * base.scale) / 2;
   const foot = base.laneBottom - (edgeInset + 3) * base.scale;

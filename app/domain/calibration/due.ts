@@ -28,7 +28,7 @@ export const dueReasonWords: Record<DueReasonCode, string> = {
 };
 
 /** Day of the year on which the season opens for the trucks: 1 November unless the network says otherwise. */
-export const defaultOpeningDay = "11-01";
+const defaultOpeningDay = "11-01";
 
 export type DueReason = {
   state: "in-date" | "due" | "overdue" | "never";

@@ -4,8 +4,8 @@ import { type Band, type BandPlace, bandPlace, distanceFromBand } from "./band.t
 import { type DischargeReadings, type SettingDischarge, settingDischarges } from "./discharge.ts";
 
 /** The speeds of a rate sheet: those at which spreaders work. */
-export const slowestSpeedMph = 5;
-export const fastestSpeedMph = 45;
+const slowestSpeedMph = 5;
+const fastestSpeedMph = 45;
 const leastStepMph = 0.5;
 
 /** One rate; `plusMinus` is in lb per lane mile (k = 2, about 95 %), null after a single catch. */
@@ -129,9 +129,12 @@ function wordsIn(units: "us" | "si") {
     at: (speedMph: number) => `${plain(speed(speedMph))} ${speedUnit}`,
     /** Whole speeds inside the stretch, so that both named ends are in the band; tenths when no two wholes fit. */
     fromTo: ({ slowestMph, fastestMph }: { slowestMph: number; fastestMph: number }) => {
-      const [slowest, fastest] = [Math.ceil(speed(slowestMph) - 1e-9), Math.floor(speed(fastestMph) + 1e-9)];
-      if (slowest < fastest) return `from ${slowest} to ${fastest} ${speedUnit}`;
-      return `from ${plain(speed(slowestMph))} to ${plain(speed(fastestMph))} ${speedUnit}`;
+      const inside = (parts: number) => [
+        Math.ceil(speed(slowestMph) * parts - 1e-9) / parts,
+        Math.floor(speed(fastestMph) * parts + 1e-9) / parts,
+      ];
+      const [from = 0, to = 0] = [inside(1), inside(10)].find(([low = 0, high = 0]) => low < high) ?? [];
+      return from < to ? `from ${from} to ${to} ${speedUnit}` : `at ${plain(speed(slowestMph))} ${speedUnit}`;
     },
     rate: (rateLbPerLaneMile: number) => {
       const value = units === "us" ? rateLbPerLaneMile : lbPerLaneMileToKgPerLaneKm(rateLbPerLaneMile);

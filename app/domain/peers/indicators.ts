@@ -8,7 +8,7 @@ export type IndicatorKey = (typeof indicatorKeys)[number];
 export type Indicator = {
   key: IndicatorKey;
   name: string;
-  /** The figure's name inside a sentence. */
+  /** The figure's name inside a wall's sentence. */
   sentenceName: string;
   unit: "lb per lane mile and event" | "lb per lane mile";
   /** How it is worked out, in words. */
@@ -39,7 +39,7 @@ export const indicators: Record<IndicatorKey, Indicator> = {
   "rate-at-working-setting": {
     key: "rate-at-working-setting",
     name: "Application rate at the working setting",
-    sentenceName: "salt on a lane mile at the working setting",
+    sentenceName: "salt on a lane mile",
     unit: "lb per lane mile",
     formula:
       "For each truck's salt calibration in force: pounds per revolution times revolutions a minute at the working setting times 60, divided by the working speed in mph and the lanes covered in one pass. The town's figure is the median of its trucks.",

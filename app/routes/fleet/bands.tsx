@@ -9,6 +9,7 @@ import { Page } from "#app/components/layout/page.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { townActor } from "#app/context.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatWhole } from "#app/lib/format.ts";
 import { type BandInForce, bandsOfNetwork, bandsOfTown, setTownBands } from "#app/services/bands.server.ts";
 import type { Route } from "./+types/bands";
@@ -20,7 +21,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const { typed, errors, bands } = readBandForm(await request.formData());
+  const { typed, errors, bands } = readBandForm(await readForm(request));
   if (Object.keys(errors).length > 0) return data({ typed, errors }, { status: 400 });
   await setTownBands(townActor(context), bands);
   return redirect("/fleet/bands");

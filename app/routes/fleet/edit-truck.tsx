@@ -7,6 +7,7 @@ import { Answer, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { townActor } from "#app/context.ts";
 import { carriedMaterials } from "#app/domain/fleet/carried.ts";
+import { readForm } from "#app/lib/form.ts";
 import { idParam } from "#app/lib/params.ts";
 import { todaysDate } from "#app/services/fleet/read.server.ts";
 import { changeTruck, getTruckForm } from "#app/services/fleet/register.server.ts";
@@ -30,7 +31,7 @@ const refusals = {
 export async function action({ context, params, request }: Route.ActionArgs) {
   const actor = townActor(context);
   const truckId = idParam(params.truckId, "truck");
-  const form = await request.formData();
+  const form = await readForm(request);
   const submission = parseWithZod(form, { schema: TruckFormSchema });
   const now = await getTruckForm(actor, truckId);
   const typedMaterials = readMaterials(form, now.materials);

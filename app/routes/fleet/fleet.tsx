@@ -13,6 +13,7 @@ import { EmptyState } from "#app/components/ui/empty-state.tsx";
 import { Over } from "#app/components/ui/state-mark.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { townActor } from "#app/context.ts";
+import { readForm } from "#app/lib/form.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { approveCalibrations } from "#app/services/fleet/approve.server.ts";
 import { listFleet, type TruckLine } from "#app/services/fleet/read.server.ts";
@@ -28,7 +29,7 @@ export async function loader({ context, url }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const ids = form
     .getAll("calibrationId")
     .flatMap((id) => (typeof id === "string" && /^[1-9]\d{0,9}$/.test(id) ? [Number(id)] : []));

@@ -19,7 +19,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 
 export async function action({ context, request }: Route.ActionArgs) {
   const actor = townActor(context);
-  const form = await request.formData();
+  const form = await readForm(request);
   const submission = parseWithZod(form, { schema: TruckFormSchema });
   const typedMaterials = readMaterials(form, (await getTruckForm(actor, null)).materials);
   const { materials, errors: sinceErrors } = carriedMaterials(typedMaterials, todaysDate());

@@ -16,6 +16,7 @@ import { Button } from "#app/components/ui/button.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { townActor } from "#app/context.ts";
 import { isLocalDate } from "#app/domain/dates.ts";
+import { readForm } from "#app/lib/form.ts";
 import { idParam } from "#app/lib/params.ts";
 import { getTruck, todaysDate } from "#app/services/fleet/read.server.ts";
 import { enterWork } from "#app/services/fleet/work.server.ts";
@@ -45,7 +46,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 }
 
 export async function action({ context, params, request }: Route.ActionArgs) {
-  const submission = parseWithZod(await request.formData(), { schema: WorkForm });
+  const submission = parseWithZod(await readForm(request), { schema: WorkForm });
   if (submission.status !== "success") return data(submission.reply(), { status: 400 });
   if (submission.value.doneOn > todaysDate()) {
     return data(submission.reply({ fieldErrors: { doneOn: ["This day has not come yet."] } }), { status: 400 });

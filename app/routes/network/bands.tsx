@@ -9,6 +9,7 @@ import { Page } from "#app/components/layout/page.tsx";
 import { NetworkPages } from "#app/components/network/network-pages.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import { networkActor } from "#app/context.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatWhole } from "#app/lib/format.ts";
 import { typedNumber } from "#app/lib/typed-figures.ts";
 import { bandsOfNetwork, practiceBands, setNetworkBands, tolerancePercent } from "#app/services/bands.server.ts";
@@ -23,7 +24,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const { typed, errors, bands } = readBandForm(form);
   const text = form.get("tolerance");
   typed.tolerance = typeof text === "string" ? text : "";

@@ -5,14 +5,25 @@ import { WallStrip } from "#app/components/charts/wall-strip.tsx";
 import { wallStripSpec } from "#app/components/peers/strip-specs.ts";
 import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
-import { indicators } from "#app/domain/peers/indicators.ts";
+import { type IndicatorKey, indicators } from "#app/domain/peers/indicators.ts";
 import { sentenceText, wallSentence } from "#app/domain/peers/sentence.ts";
 import { notFound } from "#app/lib/errors.ts";
 import { idParam } from "#app/lib/params.ts";
+import type { WallCell } from "#app/services/editions.server.ts";
 import { getWorkshop } from "#app/services/workshops.server.ts";
 import type { Route } from "./+types/board";
 
 export const handle = { isWall: true };
+
+/** Whose figures they are, and how many towns as a band: one line under the sentence. */
+function basisWords(indicator: IndicatorKey, cell: WallCell) {
+  const setting = indicator === "rate-at-working-setting" ? "; at the working setting" : "";
+  if (cell.state === "withheld") return `${cell.groupLabel}${setting}`;
+  const towns = cell.townBand.endsWith(" and more")
+    ? cell.townBand.replace(" and", " towns and")
+    : `${cell.townBand} towns`;
+  return `${cell.groupLabel}, ${towns}; each bar about three${setting}`;
+}
 
 export async function loader({ context, params }: Route.LoaderArgs) {
   const workshop = await getWorkshop(networkActor(context), idParam(params.workshopId, "workshop"));
@@ -29,7 +40,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
     boardCount: workshop.boards.length,
     question,
     sentence: sentenceText(wallSentence({ indicator, cell, band: indicators[indicator].band })),
-    unit: `${indicators[indicator].name}, lb. ${cell.groupLabel}${cell.state === "shown" ? `, ${cell.townBand} towns; each bar about three` : ""}`,
+    basis: basisWords(indicator, cell),
     svg: laneStripSvg(spec, "wall"),
   };
 }
@@ -39,7 +50,7 @@ export const meta: Route.MetaFunction = ({ loaderData }) => [
 ];
 
 export default function BoardPage({ loaderData }: Route.ComponentProps) {
-  const { workshopId, position, boardCount, edition, question, sentence, unit, svg } = loaderData;
+  const { workshopId, position, boardCount, edition, question, sentence, basis, svg } = loaderData;
   const navigate = useNavigate();
   const to = (next: number) => `/workshops/${workshopId}/boards/${next}`;
 
@@ -62,7 +73,7 @@ export default function BoardPage({ loaderData }: Route.ComponentProps) {
       <h1 className="max-w-[24em] text-[clamp(1.75rem,3.6vw,4.2rem)] leading-[1.12] font-bold tracking-[-0.02em] text-balance">
         {sentence}
       </h1>
-      <p className="mt-2 text-gravel">{unit}</p>
+      <p className="mt-2 text-gravel">{basis}</p>
       <figure className="mt-4">
         <WallStrip svg={svg} />
       </figure>

@@ -36,8 +36,8 @@ const answerSizes = [
   [44, "text-[4.4cqw]"],
 ] as const;
 const rowSizes = [
-  [6, "text-[9.2cqw]"],
-  [8, "text-[7.6cqw]"],
+  [6, "text-[8.2cqw]"],
+  [8, "text-[7.4cqw]"],
   [10, "text-[6cqw]"],
   [14, "text-[4.3cqw]"],
 ] as const;
@@ -74,7 +74,7 @@ export function CabCard({ printed }: Props) {
           {card.words.band}
         </p>
         <Legend {...printed} />
-        <table className="min-h-0 w-full flex-1 table-fixed border-collapse leading-none">
+        <table className="min-h-0 w-full flex-1 table-fixed border-collapse leading-none proportional-nums">
           <caption className="sr-only">Pounds per lane mile by feed setting and speed</caption>
           <thead>
             <tr>
@@ -103,7 +103,7 @@ export function CabCard({ printed }: Props) {
                   {row.setting}
                 </th>
                 {row.cells.map((cell) => (
-                  <td key={cell.mph} className={`h-0 p-[0.5cqw] text-center align-middle tracking-[-0.03em] ${size}`}>
+                  <td key={cell.mph} className={`h-0 p-[0.5cqw] text-center align-middle tracking-[-0.035em] ${size}`}>
                     <Cell cell={cell} band={printed.band} />
                   </td>
                 ))}

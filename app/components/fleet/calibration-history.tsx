@@ -5,6 +5,7 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { formatInches, formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
 import { WorkingRateWords } from "./rate-words.tsx";
+import { rateUnitWords, type UnitChoice } from "./shown-units.ts";
 
 type Line = {
   id: number;
@@ -23,6 +24,7 @@ type Props = {
   inForceId: number | null;
   chart: { spec: DriftSpec; svg: { desk: string; phone: string } } | null;
   workingWords: string;
+  units: UnitChoice;
 };
 
 function signed(percent: number) {
@@ -33,10 +35,12 @@ function driftWords({ driftPercent, isDriftClear }: Line) {
   if (driftPercent === null) return "–";
   if (isDriftClear === null) return signed(driftPercent);
   return (
-    <>
+    <span>
       {isDriftClear ? <b>{signed(driftPercent)}</b> : signed(driftPercent)}
-      <span className="block text-note text-gravel">{isDriftClear ? "more than the ± explains" : "within the ±"}</span>
-    </>
+      <span className="block text-note font-normal text-gravel">
+        {isDriftClear ? "more than the ± explains" : "within the ±"}
+      </span>
+    </span>
   );
 }
 
@@ -58,7 +62,7 @@ function sentence(lines: readonly Line[], ownId: number) {
 }
 
 /** Earlier calibrations of the same truck and material, with how far each moved. */
-export function CalibrationHistory({ lines, ownId, inForceId, chart, workingWords }: Props) {
+export function CalibrationHistory({ lines, ownId, inForceId, chart, workingWords, units }: Props) {
   return (
     <section>
       <Heading>Over the years</Heading>
@@ -70,7 +74,7 @@ export function CalibrationHistory({ lines, ownId, inForceId, chart, workingWord
           columns={[
             { key: "day", label: "weighed" },
             { key: "gate", label: "gate", unit: "in", isNumeric: true },
-            { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
+            { key: "lays", label: "lays", unit: rateUnitWords({ units, basis: "lane" }), isNumeric: true },
             { key: "drift", label: "drift", isNumeric: true },
             { key: "state", label: "state" },
           ]}
@@ -85,7 +89,7 @@ export function CalibrationHistory({ lines, ownId, inForceId, chart, workingWord
                   <TextLink to={`/fleet/calibrations/${line.id}`}>{formatShortDay(line.testedOn)}</TextLink>
                 ),
               gate: formatInches(line.gateOpeningIn),
-              lays: <WorkingRateWords working={line.working} />,
+              lays: <WorkingRateWords working={line.working} units={units} />,
               drift: driftWords(line),
               state: stateWords(line, inForceId),
             },

@@ -2,9 +2,20 @@ import { Heading } from "#app/components/layout/answer.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import type { GateAdvice } from "#app/domain/calibration/gate-advice.ts";
 import type { Savings } from "#app/domain/calibration/savings.ts";
+import { lbPerShortTon, milesToKm } from "#app/domain/units.ts";
 import { formatInches, formatOneDecimal, formatWhole } from "#app/lib/format.ts";
+import { listWords } from "#app/lib/words.ts";
 import { GateDrawing } from "./gate-drawing.tsx";
 import { WorkingRateWords } from "./rate-words.tsx";
+import {
+  rateUnitWords,
+  shownRate,
+  shownWeight,
+  speedUnitWords,
+  speedWords,
+  type UnitChoice,
+  weightUnitWords,
+} from "./shown-units.ts";
 
 type Place = "under" | "in" | "over" | null;
 type Working = { lbPerLaneMile: number; plusMinusLbPerLaneMile: number | null; place: Place };
@@ -20,6 +31,9 @@ type Props = {
   working: Working | null;
   truck: { workingSetting: number; workingSpeedMph: number; gateMaxIn: number | null };
   eventCount: number | null;
+  /** Settings that lie in the band at the working speed with the gate as it is. */
+  inBandSettings: readonly number[];
+  units: UnitChoice;
 };
 
 const noAdvice = {
@@ -32,7 +46,8 @@ const noAdvice = {
 };
 
 /** What to do about the gate. A yardstick: the director decides. */
-export function Decision({ decision, gateOpeningIn, working, truck, eventCount }: Props) {
+export function Decision(props: Props) {
+  const { decision, gateOpeningIn, truck, units } = props;
   return (
     <section>
       <Heading id="gate">The gate</Heading>
@@ -41,10 +56,10 @@ export function Decision({ decision, gateOpeningIn, working, truck, eventCount }
       ) : decision.kind === "leave" ? (
         <p className="max-w-measure">
           <b>Leave the gate at {formatInches(gateOpeningIn)} in.</b> Setting {truck.workingSetting} is in the band at{" "}
-          {truck.workingSpeedMph} mph.
+          {speedWords(truck.workingSpeedMph, units)} {speedUnitWords(units)}.
         </p>
       ) : (
-        <Move {...{ decision, gateOpeningIn, working, truck, eventCount }} />
+        <Move {...props} decision={decision} />
       )}
     </section>
   );
@@ -56,6 +71,8 @@ function Move({
   working,
   truck,
   eventCount,
+  inBandSettings,
+  units,
 }: Props & { decision: Extract<DecisionView, { kind: "move" }> }) {
   const to = advice.nearestSixteenthIn;
   const verb = to < gateOpeningIn ? "Close" : "Open";
@@ -69,10 +86,17 @@ function Move({
             : `${verb} the gate to about ${formatInches(to)} in`}
         </h3>
         <p className="mt-1 max-w-measure text-pretty">
-          Setting {truck.workingSetting} then lays about {formatWhole(expected.lbPerLaneMile)} lb per lane mile at{" "}
-          {truck.workingSpeedMph} mph. Stop everything first. The counts stay good: only the catch is weighed again.
+          Setting {truck.workingSetting} then lays about {formatWhole(shownRate(expected.lbPerLaneMile, units))}{" "}
+          {rateUnitWords({ units, basis: "lane" })} at {speedWords(truck.workingSpeedMph, units)}{" "}
+          {speedUnitWords(units)}. Stop everything first. The counts stay good: only the catch is weighed again.
         </p>
         <p className="mt-2 max-w-measure text-note text-pretty text-gravel">{howWords(advice)}</p>
+        {inBandSettings.length > 0 && (
+          <p className="mt-2 max-w-measure text-pretty">
+            With the gate as it is, setting {listWords(inBandSettings.map(String))} lies in the band at that speed
+            already.
+          </p>
+        )}
         {advice.isBeyondMax && (
           <p className="mt-2 max-w-measure font-semibold text-rust">
             That is wider than this truck’s gate opens ({formatInches(truck.gateMaxIn ?? 0)} in). Another setting or
@@ -88,8 +112,9 @@ function Move({
               working: { ...expected, plusMinusLbPerLaneMile: null },
             }}
             savings={savings}
+            units={units}
           />
-          <SavingsWords savings={savings} eventCount={eventCount} isExpected />
+          <SavingsWords savings={savings} eventCount={eventCount} units={units} isExpected />
         </div>
       </div>
     </div>
@@ -106,6 +131,11 @@ function howWords({ method, reach, isBeyondReach }: GateAdvice) {
     : `By a line through the openings weighed this season, ${range}. This one lies between them.`;
 }
 
+/** What falls on a lane mile, on a lane kilometre when those are shown. */
+function perShownLength(onEachMile: number, units: UnitChoice) {
+  return units === "us" ? onEachMile : onEachMile / milesToKm(1);
+}
+
 type Side = { name: string; working: Working | null };
 
 /** Two openings side by side, at the working setting and speed. */
@@ -114,11 +144,13 @@ export function BeforeAfter({
   before,
   after,
   savings,
+  units,
 }: {
   caption: string;
   before: Side;
   after: Side;
   savings: Savings;
+  units: UnitChoice;
 }) {
   const money = (cents: number | null) => (cents === null ? "–" : `$${(cents / 100).toFixed(2)}`);
   return (
@@ -127,7 +159,7 @@ export function BeforeAfter({
       isCaptionHidden
       isFolding={false}
       columns={[
-        { key: "what", label: "on each lane mile" },
+        { key: "what", label: units === "us" ? "on each lane mile" : "on each lane km" },
         { key: "before", label: before.name, isNumeric: true },
         { key: "after", label: after.name, isNumeric: true },
         { key: "saved", label: "saved", isNumeric: true },
@@ -136,15 +168,26 @@ export function BeforeAfter({
         {
           key: "material",
           cells: {
-            what: "material, lb",
-            before: <WorkingRateWords working={before.working} />,
-            after: <WorkingRateWords working={after.working} />,
-            saved: `${formatWhole(savings.savedLbPerLaneMile)} (${formatWhole(savings.savedPercent)} %)`,
+            what: `material, ${weightUnitWords(units)}`,
+            before: <WorkingRateWords working={before.working} units={units} />,
+            after: <WorkingRateWords working={after.working} units={units} />,
+            saved: (
+              <span className="whitespace-nowrap">
+                {formatWhole(shownRate(savings.savedLbPerLaneMile, units))} ({formatWhole(savings.savedPercent)} %)
+              </span>
+            ),
           },
         },
         {
           key: "money",
-          cells: { what: "money", before: "", after: "", saved: money(savings.savedCentsPerLaneMile) },
+          cells: {
+            what: "money",
+            before: "",
+            after: "",
+            saved: money(
+              savings.savedCentsPerLaneMile === null ? null : perShownLength(savings.savedCentsPerLaneMile, units),
+            ),
+          },
         },
       ]}
     />
@@ -154,20 +197,28 @@ export function BeforeAfter({
 export function SavingsWords({
   savings: { season, savedLbPerLaneMile },
   eventCount,
+  units,
   isExpected = false,
 }: {
   savings: Savings;
   eventCount: number | null;
+  units: UnitChoice;
   isExpected?: boolean;
 }) {
   if (season === null || eventCount === null) return null;
-  const tons = formatOneDecimal(Math.abs(season.savedTons));
-  const dollars = season.savedCents === null ? "" : `, $${formatWhole(Math.abs(season.savedCents) / 100)}`;
+  const savedLb = perShownLength(Math.abs(season.savedTons) * lbPerShortTon, units);
+  const tons =
+    units === "us"
+      ? `${formatOneDecimal(savedLb / lbPerShortTon)} tons`
+      : `${formatOneDecimal(shownWeight(savedLb, units) / 1000)} tonnes`;
+  const dollars =
+    season.savedCents === null ? "" : `, $${formatWhole(perShownLength(Math.abs(season.savedCents), units) / 100)}`;
   const word = savedLbPerLaneMile < 0 ? "more" : "less";
   return (
     <p className="mt-2 max-w-measure text-note text-gravel">
-      Over a season of {formatWhole(eventCount)} events, one pass each: {tons} tons {word}
-      {dollars}, on every lane mile this truck does.{isExpected && " Expected, not measured."}
+      Over a season of {formatWhole(eventCount)} events, one pass each: {tons} {word}
+      {dollars}, on every lane {units === "us" ? "mile" : "km"} this truck does.
+      {isExpected && " Expected, not measured."}
     </p>
   );
 }

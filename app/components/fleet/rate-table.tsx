@@ -39,7 +39,7 @@ export function RateTable({ rows, view, workingSetting, workingSpeedMph, caption
   const hasCounts = rows.some(({ revPerMin }) => revPerMin !== null);
   const weightUnit = view.units === "us" ? "lb" : "kg";
   return (
-    <div className="overflow-x-auto" tabIndex={0} role="region" aria-label={caption}>
+    <div className="relative overflow-x-auto" tabIndex={0} role="region" aria-label={caption}>
       <table className="w-full border-collapse text-table">
         <caption className="sr-only">{caption}</caption>
         <thead>
@@ -51,11 +51,11 @@ export function RateTable({ rows, view, workingSetting, workingSpeedMph, caption
               setting
             </th>
             {hasCounts && (
-              <th scope="col" className="border-b-2 border-line py-1.5 pr-3 text-right font-semibold">
+              <th scope="col" className="border-b-2 border-line py-1.5 pr-3 text-right font-semibold max-sm:hidden">
                 turns a minute
               </th>
             )}
-            <th scope="col" className="border-b-2 border-line py-1.5 pr-3 text-right font-semibold">
+            <th scope="col" className="border-b-2 border-line py-1.5 pr-3 text-right font-semibold max-sm:hidden">
               {weightUnit} a minute
             </th>
             {speeds.map((speedMph) => (
@@ -83,11 +83,11 @@ export function RateTable({ rows, view, workingSetting, workingSpeedMph, caption
                 {row.isAtHydraulicLimit && <span className="block text-s font-normal text-gravel">at the limit</span>}
               </th>
               {hasCounts && (
-                <td className="py-2.5 pr-3 text-right text-gravel">
+                <td className="py-2.5 pr-3 text-right text-gravel max-sm:hidden">
                   {row.revPerMin === null ? "–" : formatOneDecimal(row.revPerMin)}
                 </td>
               )}
-              <td className="py-2.5 pr-3 text-right text-gravel">
+              <td className="py-2.5 pr-3 text-right text-gravel max-sm:hidden">
                 {formatOneDecimal(shownWeight(row.lbPerMin, view.units))}
               </td>
               {row.cells.map((cell) => (

@@ -1,5 +1,6 @@
 import { InBand, Over, Under } from "#app/components/ui/state-mark.tsx";
 import { formatWhole } from "#app/lib/format.ts";
+import { shownRate, type UnitChoice } from "./shown-units.ts";
 
 type Working = {
   lbPerLaneMile: number;
@@ -8,14 +9,16 @@ type Working = {
 } | null;
 
 /** A rate with its ± and the shape that says where it lies; bare where there is no band, a dash where there is none. */
-export function WorkingRateWords({ working }: { working: Working }) {
+export function WorkingRateWords({ working, units = "us" }: { working: Working; units?: UnitChoice }) {
   if (working === null) return "–";
   const { lbPerLaneMile, plusMinusLbPerLaneMile: plusMinus, place } = working;
   const words = (
-    <>
-      {formatWhole(lbPerLaneMile)}
-      {plusMinus !== null && <span className="font-normal text-gravel"> ± {formatWhole(plusMinus)}</span>}
-    </>
+    <span className="whitespace-nowrap">
+      {formatWhole(shownRate(lbPerLaneMile, units))}
+      {plusMinus !== null && (
+        <span className="font-normal text-gravel"> ± {formatWhole(shownRate(plusMinus, units))}</span>
+      )}
+    </span>
   );
   if (place === "over") return <Over isWordHidden>{words}</Over>;
   if (place === "under") return <Under isWordHidden>{words}</Under>;

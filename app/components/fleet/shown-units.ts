@@ -55,3 +55,7 @@ export function speedWords(speedMph: number, units: UnitChoice) {
   const speed = shownSpeed(speedMph, units);
   return String(Number(speed.toFixed(1)));
 }
+
+export function weightUnitWords(units: UnitChoice) {
+  return units === "us" ? "lb" : "kg";
+}

@@ -136,7 +136,7 @@ export function TruckForm(props: Props) {
         )}
         <div className="mt-8 flex flex-wrap items-center gap-x-5 gap-y-3">
           <Button busy={isSending && "Saving"}>{button}</Button>
-          <TextLink to={backTo}>Leave it as it is</TextLink>
+          <TextLink to={backTo}>{truck === null ? "Back to the fleet" : "Leave it as it is"}</TextLink>
         </div>
       </KeptForm>
     </>

@@ -11,16 +11,18 @@ import { workingPointWords } from "#app/components/fleet/fleet-words.ts";
 import { PlaceKey } from "#app/components/fleet/rate-words.tsx";
 import { RateTable } from "#app/components/fleet/rate-table.tsx";
 import { LiquidSection, RawReadings, VerificationSection } from "#app/components/fleet/reading-tables.tsx";
-import { rateUnitWords, readRateView } from "#app/components/fleet/shown-units.ts";
+import { rateUnitWords, readRateView, shownRate, type UnitChoice } from "#app/components/fleet/shown-units.ts";
 import { ViewSwitch } from "#app/components/fleet/view-switch.tsx";
 import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { Button, ButtonLink } from "#app/components/ui/button.tsx";
 import { Notice } from "#app/components/ui/notice.tsx";
+import { Over, Under } from "#app/components/ui/state-mark.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { townActor } from "#app/context.ts";
-import { bandSentence } from "#app/domain/calibration/rate-sheet.ts";
-import { formatInches, formatShortDay } from "#app/lib/format.ts";
+import { distanceFromBand } from "#app/domain/calibration/band.ts";
+import { bandSentence, type BandSummary } from "#app/domain/calibration/rate-sheet.ts";
+import { formatInches, formatShortDay, formatWhole } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
 import { countWords } from "#app/lib/words.ts";
 import { approveCalibration } from "#app/services/fleet/approve.server.ts";
@@ -99,7 +101,14 @@ export default function Calibration({ loaderData, actionData }: Route.ComponentP
         {formatShortDay(calibration.testedOn)}
       </p>
       <Answer>
-        {rates ? <BandSentenceWords sentence={bandSentence(rates.summary, view.units)} /> : "No setting was measured."}
+        {rates ? (
+          <>
+            <BandSentenceWords sentence={bandSentence(rates.summary, view.units)} />
+            <OwnSetting truck={truck} summary={rates.summary} units={view.units} />
+          </>
+        ) : (
+          "No setting was measured."
+        )}
       </Answer>
       <Method>
         {basisWords(calibration)} {stateWords(calibration)}
@@ -144,6 +153,8 @@ export default function Calibration({ loaderData, actionData }: Route.ComponentP
             working={own?.working ?? null}
             truck={truck}
             eventCount={calibration.eventCount}
+            inBandSettings={rates.summary?.inBandSettings ?? []}
+            units={view.units}
           />
         </>
       )}
@@ -158,8 +169,9 @@ export default function Calibration({ loaderData, actionData }: Route.ComponentP
             }}
             after={{ name: `now, ${formatInches(calibration.gateOpeningIn)} in`, working: own.working }}
             savings={changed.savings}
+            units={view.units}
           />
-          <SavingsWords savings={changed.savings} eventCount={calibration.eventCount} />
+          <SavingsWords savings={changed.savings} eventCount={calibration.eventCount} units={view.units} />
         </section>
       )}
       <VerificationSection
@@ -174,9 +186,33 @@ export default function Calibration({ loaderData, actionData }: Route.ComponentP
         inForceId={calibration.inForceId}
         chart={drift}
         workingWords={workingPointWords(truck)}
+        units={view.units}
       />
       <RawReadings {...calibration.readings} />
     </Page>
+  );
+}
+
+/** Where the setting that the truck works at lies, when others are in the band and it is not. */
+function OwnSetting({
+  truck,
+  summary,
+  units,
+}: {
+  truck: CalibrationDetail["truck"];
+  summary: BandSummary | null;
+  units: UnitChoice;
+}) {
+  const own = summary?.settings.find(({ setting }) => setting === truck.workingSetting);
+  if (!summary || !own || own.place === "in" || summary.inBandSettings.length === 0) return null;
+  const off = shownRate(Math.abs(distanceFromBand(own.lbPerLaneMile, summary.band)), units);
+  const words = `${formatWhole(Math.max(1, off))} ${own.place === "over" ? "above it" : "under it"}`;
+  return (
+    <>
+      {" "}
+      The working setting, {own.setting}, lays {formatWhole(shownRate(own.lbPerLaneMile, units))}:{" "}
+      {own.place === "over" ? <Over>{words}</Over> : <Under>{words}</Under>}.
+    </>
   );
 }
 

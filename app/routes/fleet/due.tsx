@@ -1,5 +1,5 @@
 import { DueKey, DueMark } from "#app/components/fleet/due-mark.tsx";
-import { mostUrgent } from "#app/components/fleet/due-words.ts";
+import { dueReasonWords, mostUrgent } from "#app/components/fleet/due-words.ts";
 import { FleetPages } from "#app/components/fleet/fleet-pages.tsx";
 import { WorkingRateWords } from "#app/components/fleet/rate-words.tsx";
 import { Answer, Method } from "#app/components/layout/answer.tsx";
@@ -97,40 +97,41 @@ export default function DuePage({ loaderData: { trucks } }: Route.ComponentProps
 
 function Cell({ truck, materialId }: { truck: TruckLine; materialId: number }) {
   const line = truck.materials.find((each) => each.materialId === materialId);
-  if (!line) return <span className="text-gravel">does not carry it</span>;
-  return <Carried truck={truck} line={line} />;
+  if (line) return <Carried truck={truck} line={line} />;
+  return (
+    <span className="text-gravel">
+      <span aria-hidden="true">·</span>
+      <span className="sr-only">does not carry it</span>
+    </span>
+  );
 }
 
 function Carried({ truck, line }: { truck: TruckLine; line: MaterialLine }) {
   const { due, inForce } = line;
-  const weigh = `/fleet/worksheets/new?truck=${truck.id}&material=${line.materialId}`;
   const [ready] = line.ready;
   return (
     <span className="inline-grid max-sm:justify-items-end">
-      <DueMark due={due} />
-      {inForce && (
-        <span className="text-note text-gravel">
-          <WorkingRateWords working={inForce.working} /> lb,{" "}
-          <TextLink to={`/fleet/calibrations/${inForce.id}`}>{formatShortDay(inForce.testedOn)}</TextLink>
-        </span>
-      )}
-      {ready ? (
-        <span className="text-note">
-          <TextLink to={`/fleet/calibrations/${ready.id}`} weight="bold">
-            weighed, waits for approval
-          </TextLink>
-        </span>
-      ) : (
-        due.state !== "in-date" && (
-          <span className="text-note">
-            <TextLink to={weigh} weight="bold">
+      <span className="flex flex-wrap items-baseline gap-x-4 max-sm:justify-end">
+        <DueMark due={due} isReasonShown={false} />
+        {ready ? (
+          <TextLink to={`/fleet/calibrations/${ready.id}`}>weighed, waits for approval</TextLink>
+        ) : (
+          due.state !== "in-date" && (
+            <TextLink to={`/fleet/worksheets/new?truck=${truck.id}&material=${line.materialId}`}>
               Weigh it
               <span className="sr-only">
                 : truck {truck.unitNumber} with {line.materialName}
               </span>
             </TextLink>
-          </span>
-        )
+          )
+        )}
+      </span>
+      {inForce && (
+        <span className="text-note text-gravel">
+          <WorkingRateWords working={inForce.working} /> lb,{" "}
+          <TextLink to={`/fleet/calibrations/${inForce.id}`}>{formatShortDay(inForce.testedOn)}</TextLink>
+          {due.reason === "work-done" || due.reason === "new-material" ? `, ${dueReasonWords(due)}` : ""}
+        </span>
       )}
     </span>
   );

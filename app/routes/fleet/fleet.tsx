@@ -55,7 +55,9 @@ function Sentence({ trucks }: { trucks: readonly TruckLine[] }) {
       ) : over > 0 ? (
         <>
           <Over>
-            {sentenceStart(countWords(over, "truck", "trucks"))} of {salt.length}
+            {over === salt.length && over > 1
+              ? `All ${countWords(over, "truck", "trucks")}`
+              : `${sentenceStart(countWords(over, "truck", "trucks"))} of ${salt.length}`}
           </Over>{" "}
           {over === 1 ? "lays" : "lay"} more salt than the band at the working setting.
         </>

@@ -7,6 +7,7 @@ import { Answer, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { townActor } from "#app/context.ts";
 import { carriedMaterials } from "#app/domain/fleet/carried.ts";
+import { readForm } from "#app/lib/form.ts";
 import { todaysDate } from "#app/services/fleet/read.server.ts";
 import { addTruck, getTruckForm } from "#app/services/fleet/register.server.ts";
 import type { Route } from "./+types/new-truck";

@@ -21,7 +21,9 @@ export function refusalOf({ method, url, headers }, host) {
     return { status: 411, sentence: "Send the length of what you send.", headers: { Connection: "close" } };
   }
   if (Number(headers["content-length"] ?? 0) > bodyLimitBytes) {
-    return { status: 413, sentence: "This is more than 6 MB. Send a smaller file.", headers: { Connection: "close" } };
+    // The connection stays: closed in the middle of the sending, it would be all that a browser tells of the answer. What
+    // still comes is thrown away, for as long as the server's time for one request.
+    return { status: 413, sentence: "This is more than 6 MB. Send a smaller file." };
   }
   return null;
 }

@@ -23,6 +23,7 @@ export function createServer({ build, origin }) {
 
   app.use((request, response, next) => {
     fillInHeaders(response, headersFor(headers, request.path));
+    response.on("finish", () => discardRest(request));
     const refusal = refusalOf(request, address.host);
     if (refusal !== null) return sendPlain(response.set(refusal.headers ?? {}), refusal.status, refusal.sentence);
     for (const name of Object.keys(request.headers)) {
@@ -47,6 +48,12 @@ export function createServer({ build, origin }) {
   return createHttpServer(limits, app).on("clientError", (error, socket) => {
     if (socket.writable) socket.end(unreadableRequestAnswer(error.code, headers));
   });
+}
+
+/** Left unread, what still comes of a form that is answered already would keep the connection's next request waiting. */
+function discardRest(request) {
+  request.removeAllListeners("data");
+  request.resume();
 }
 
 function sendPlain(response, status, sentence) {

@@ -27,8 +27,7 @@ const everywhere = {
 };
 
 function staticFile() {
-  const [file] = Object.values(app.build.assets.routes).flatMap(({ css, module }) => [...(css ?? []), module]);
-  return file ?? "";
+  return app.build.assets.entry.module;
 }
 
 type Case = [what: string, ask: () => Promise<Answer>, status: number];

@@ -4,39 +4,10 @@ import type { TestApp } from "./app.ts";
 import { cookieOf } from "./http.ts";
 import { type App, insert, minutesFromNow, rows } from "./rows.ts";
 
-type Value = string | number | Buffer | null;
-type App = Pick<TestApp, "db" | "issuer">;
-
 let serial = 0;
 /** A number that no other call in this file gets. */
 function next() {
   return ++serial;
-}
-
-/** An instant as the database takes it, so many minutes from now. */
-export function minutesFromNow(minutes: number): string {
-  return new Date(Date.now() + minutes * 60_000).toISOString().replace("T", " ").replace("Z", "");
-}
-
-/** Put one row in. @returns its id */
-export async function insert(app: App, table: string, row: Record<string, Value>): Promise<number> {
-  const columns = Object.keys(row);
-  const { insertId } = await app.db.query<{ insertId: number }>(
-    `INSERT INTO ${table} (${columns.join(", ")}) VALUES (${columns.map(() => "?").join(", ")})`,
-    Object.values(row),
-  );
-  return Number(insertId);
-}
-
-/** The rows of a query. */
-export async function rows<Row>(app: App, query: string, values: Value[] = []): Promise<Row[]> {
-  return app.db.query<Row[]>(query, values);
-}
-
-/** How many rows a table has, with what follows it. @example countOf(app, "job WHERE state = 'done'") */
-export async function countOf(app: App, tableAndWhere: string): Promise<number> {
-  const [row] = await rows<{ count: number }>(app, `SELECT COUNT(*) AS count FROM ${tableAndWhere}`);
-  return row?.count ?? 0;
 }
 
 /** 64 hexadecimal digits. */

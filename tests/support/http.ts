@@ -32,13 +32,17 @@ function multipart({ kind, fileName, content }: NonNullable<Asked["upload"]>) {
   };
 }
 
+function isPairs(form: NonNullable<Asked["form"]>): form is readonly (readonly [string, string])[] {
+  return Array.isArray(form);
+}
+
 function formOf(asked: Asked): { type: string; body: Buffer } | null {
   if (asked.upload) return multipart(asked.upload);
   if (!asked.form) return null;
-  const pairs = Array.isArray(asked.form) ? asked.form.map((pair) => [...pair]) : Object.entries(asked.form);
+  const pairs = isPairs(asked.form) ? asked.form : Object.entries(asked.form);
   return {
     type: "application/x-www-form-urlencoded;charset=UTF-8",
-    body: Buffer.from(new URLSearchParams(pairs as [string, string][]).toString()),
+    body: Buffer.from(new URLSearchParams(pairs.map(([name, value]) => [name, value])).toString()),
   };
 }
 
@@ -77,11 +81,6 @@ export function askAt(origin: string, path: string, asked: Asked = {}): Promise<
 /** The Cookie header of a browser that holds this session's secret. */
 export function cookieOf(secret: string): string {
   return `sid=${encodeURIComponent(Buffer.from(JSON.stringify(secret)).toString("base64"))}`;
-}
-
-/** What a Set-Cookie header leaves in the browser: `name=value` of each, without attributes. */
-export function cookiesSet(answer: Answer): string[] {
-  return (answer.headers["set-cookie"] ?? []).map((line) => line.split(";")[0] ?? "");
 }
 
 /** Run `work` over all items, at most `width` at a time; results in the items' order. */

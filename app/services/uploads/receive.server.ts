@@ -1,8 +1,9 @@
+import type { Transaction } from "sequelize";
 import type { TownActor } from "#app/context.ts";
 import type { FileProblem } from "#app/domain/file-problem.ts";
 import { now } from "#app/lib/clock.server.ts";
 import { readCsv } from "#app/lib/csv.server.ts";
-import { inTransaction } from "#app/lib/db.server.ts";
+import { inTransaction, isDuplicate } from "#app/lib/db.server.ts";
 import { sha256 } from "#app/lib/secrets.server.ts";
 import { Upload, type UploadKind } from "#app/models/upload.server.ts";
 import { recordAudit } from "../audit.server.ts";
@@ -24,7 +25,7 @@ const mostProblems = 500;
 export async function receiveUpload(actor: TownActor, { kind, fileName, content }: ReceivedFile): Promise<number> {
   const digest = sha256(content);
   const table = await readCsv(content, uploadKinds[kind].columns);
-  return inTransaction(async (transaction) => {
+  const keep = async (transaction: Transaction) => {
     const known = await Upload.findOne({
       attributes: ["id", "state"],
       where: { townId: actor.townId, kind, sha256: digest },
@@ -57,5 +58,12 @@ export async function receiveUpload(actor: TownActor, { kind, fileName, content 
     const detail = { kind, sha256: digest, rowCount: outcome.rowCount, problemCount: problems.length };
     await recordAudit(actor, { action: "upload.receive", entity: "upload", entityId: upload.id, detail }, transaction);
     return upload.id;
-  });
+  };
+  try {
+    return await inTransaction(keep);
+  } catch (error) {
+    // Somebody else of the town sent the same file in the same moment: theirs is this upload.
+    if (!isDuplicate(error)) throw error;
+    return inTransaction(keep);
+  }
 }

@@ -1,7 +1,7 @@
 import { randomBytes, randomUUID } from "node:crypto";
 import { afterAll, afterEach, beforeAll, beforeEach, expect, test } from "vitest";
 import { freeOrigin, startApp, type TestApp } from "#tests/support/app.ts";
-import { Browser } from "#tests/support/browser.ts";
+import { Browser } from "#tests/support/http-browser.ts";
 import { aPerson, aTown, digest, type Town } from "#tests/support/factories.ts";
 import { cookieOf } from "#tests/support/http.ts";
 import { type Idp, startIdp } from "#tests/support/idp.ts";

@@ -1,11 +1,12 @@
 import { reactRouter } from "@react-router/dev/vite";
 import tailwindcss from "@tailwindcss/vite";
 import { defineConfig } from "vitest/config";
+import { workerBuild } from "./scripts/worker-build.js";
 
 const isTest = process.env.VITEST === "true";
 
 export default defineConfig({
-  plugins: isTest ? [] : [tailwindcss(), reactRouter()],
+  plugins: isTest ? [] : [tailwindcss(), reactRouter(), workerBuild()],
   build: { sourcemap: false },
   test: {
     projects: [

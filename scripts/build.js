@@ -9,6 +9,7 @@ const sources = [
   "app",
   "public",
   "react-router.config.ts",
+  "scripts/worker-build.js",
   "vite.config.ts",
   "tsconfig.json",
   "package.json",

@@ -38,6 +38,11 @@ const access: Record<Page, Rule> = {
   "/fleet/export": session(town),
   "/fleet/calibrations/:calibrationId": session(town, ["director"]),
   "/fleet/calibrations/:calibrationId/card": session(town),
+  "/fleet/worksheets": session(town),
+  "/fleet/worksheets/kit": session(town),
+  "/fleet/worksheets/sync": session([], town),
+  // Holds no data of its own, so that a phone may keep it and open it without signal; what it shows is on the phone.
+  "/fleet/worksheets/:clientRef": "public",
   "/fleet/:truckId": session(town),
   "/fleet/:truckId/edit": session(town, town),
   "/fleet/:truckId/work": session(town, town),

@@ -1,10 +1,11 @@
-import { QueryTypes } from "sequelize";
 import type { Catch } from "#app/domain/calibration/catch-weight.ts";
 import type { Count } from "#app/domain/calibration/count-rate.ts";
 import type { TimedCatch } from "#app/domain/calibration/timed-catch.ts";
-import { db } from "#app/lib/db.server.ts";
 import { CalibrationCatch } from "#app/models/calibration-catch.server.ts";
 import { CalibrationCount } from "#app/models/calibration-count.server.ts";
+import { CalibrationLiquid } from "#app/models/calibration-liquid.server.ts";
+import { CalibrationTimedCatch } from "#app/models/calibration-timed-catch.server.ts";
+import { CalibrationVerification } from "#app/models/calibration-verification.server.ts";
 
 /** What was counted and caught in the yard, as it was read. A calibration has counts and catches, or timed catches. */
 export type Readings = {
@@ -29,16 +30,6 @@ function grouped<Row extends { calibrationId: number }>(rows: readonly Row[]): M
   return groups;
 }
 
-type TimedRow = TimedCatch & { calibrationId: number; setting: number };
-
-async function timedRows(ids: readonly number[]): Promise<TimedRow[]> {
-  return db.query<TimedRow>(
-    `SELECT calibration_id AS calibrationId, setting, seconds, gross_lb AS grossLb, tare_lb AS tareLb
-       FROM calibration_timed_catch WHERE calibration_id IN (?) ORDER BY calibration_id, position`,
-    { type: QueryTypes.SELECT, replacements: [ids] },
-  );
-}
-
 /**
  * The raw readings of calibrations, in the order in which they were taken.
  *
@@ -51,7 +42,7 @@ export async function readingsOf(ids: readonly number[]): Promise<Map<number, Re
   const [counts, catches, timed] = await Promise.all([
     CalibrationCount.findAll({ where, order: ["setting"], raw: true }),
     CalibrationCatch.findAll({ where, order: ["position"], raw: true }),
-    timedRows(ids),
+    CalibrationTimedCatch.findAll({ where, order: ["position"], raw: true }),
   ]);
   const [countsById, catchesById, timedById] = [grouped(counts), grouped(catches), grouped(timed)];
   return new Map(
@@ -91,19 +82,25 @@ export type LiquidReading = {
 
 /** The readings at simulated speeds of one calibration, in their order; empty where there are none. */
 export async function verificationsOf(calibrationId: number): Promise<Verification[]> {
-  return db.query<Verification>(
-    `SELECT speed_mph AS speedMph, commanded_lb_per_lane_mile AS commandedLbPerLaneMile, seconds,
-            gross_lb AS grossLb, tare_lb AS tareLb
-       FROM calibration_verification WHERE calibration_id = ? ORDER BY position`,
-    { type: QueryTypes.SELECT, replacements: [calibrationId] },
-  );
+  const rows = await CalibrationVerification.findAll({ where: { calibrationId }, order: ["position"], raw: true });
+  return rows.map(({ speedMph, commandedLbPerLaneMile, seconds, grossLb, tareLb }) => ({
+    speedMph,
+    commandedLbPerLaneMile,
+    seconds,
+    grossLb,
+    tareLb,
+  }));
 }
 
 /** The liquid readings of one calibration, in their order; empty where there are none. */
 export async function liquidsOf(calibrationId: number): Promise<LiquidReading[]> {
-  return db.query<LiquidReading>(
-    `SELECT kind, gallons, seconds, speed_mph AS speedMph, lanes, dry_lb_per_min AS dryLbPerMin
-       FROM calibration_liquid WHERE calibration_id = ? ORDER BY position`,
-    { type: QueryTypes.SELECT, replacements: [calibrationId] },
-  );
+  const rows = await CalibrationLiquid.findAll({ where: { calibrationId }, order: ["position"], raw: true });
+  return rows.map(({ kind, gallons, seconds, speedMph, lanes, dryLbPerMin }) => ({
+    kind,
+    gallons,
+    seconds,
+    speedMph,
+    lanes,
+    dryLbPerMin,
+  }));
 }

@@ -4,7 +4,7 @@ import { bandKinds, type BandErrors, type TypedBands } from "./band-form.ts";
 
 type Standing = { lowLbPerLaneMile: number; highLbPerLaneMile: number; origin: string } | null;
 
-const kindWords = { salt: "Straight salt", mix: "Salt and sand mixed", sand: "Sand", brine: "Brine" };
+const kindWords = { salt: "Straight salt", mix: "Salt and sand mixed", sand: "Sand" };
 
 type Props = {
   typed: TypedBands;

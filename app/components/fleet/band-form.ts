@@ -1,7 +1,8 @@
 import type { Band } from "#app/domain/calibration/band.ts";
 import { readNumber } from "#app/domain/readings.ts";
 
-export const bandKinds = ["salt", "mix", "sand", "brine"] as const;
+/** Brine alone is measured in gallons; a band in pounds says nothing of it. */
+export const bandKinds = ["salt", "mix", "sand"] as const;
 type Kind = (typeof bandKinds)[number];
 
 export type TypedBands = Record<string, string>;
@@ -30,7 +31,7 @@ function readEnd(text: string): number | string {
 export function readBandForm(form: FormData) {
   const typed: TypedBands = {};
   const errors: BandErrors = {};
-  const bands: Record<Kind, Band | null> = { salt: null, mix: null, sand: null, brine: null };
+  const bands: Record<Kind | "brine", Band | null> = { salt: null, mix: null, sand: null, brine: null };
   for (const kind of bandKinds) {
     const text = (end: "low" | "high") => {
       const value = form.get(`${kind}-${end}`);

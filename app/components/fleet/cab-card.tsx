@@ -36,10 +36,10 @@ const answerSizes = [
   [44, "text-[4.4cqw]"],
 ] as const;
 const rowSizes = [
-  [6, "text-[8.2cqw]"],
-  [8, "text-[7.4cqw]"],
-  [10, "text-[6cqw]"],
-  [14, "text-[4.3cqw]"],
+  [6, "text-[8cqw]"],
+  [8, "text-[6.5cqw]"],
+  [10, "text-[5.2cqw]"],
+  [14, "text-[3.7cqw]"],
 ] as const;
 
 const standingWords = {
@@ -54,11 +54,11 @@ const standingWords = {
 export function CabCard({ printed }: Props) {
   const { card, standing, workingSpeedMph } = printed;
   const rows = card.rows.filter((row) => !row.isAtHydraulicLimit);
-  const size = sized(rows.length, rowSizes, "text-[3.2cqw]");
+  const size = sized(rows.length, rowSizes, "text-[2.6cqw]");
   return (
     <article
       aria-label={`Cab card of truck ${card.unitNumber} for ${card.materialName}`}
-      className="cab-card @container mx-auto mb-10 flex aspect-[17/22] w-full max-w-204 flex-col bg-[#fff] p-[3.5cqw] text-[#000] shadow-float print:mb-0 print:max-w-none print:p-0 print:shadow-none"
+      className="cab-card @container mx-auto mb-10 flex aspect-[17/22] w-full max-w-204 flex-col bg-[#fff] p-[4%] text-[#000] shadow-float [print-color-adjust:exact] print:mb-0 print:aspect-auto print:max-w-none print:p-0 print:shadow-none"
     >
       <div className="flex min-h-0 flex-1 flex-col">
         {standing !== "in-force" && (

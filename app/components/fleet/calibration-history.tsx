@@ -50,15 +50,18 @@ function stateWords({ id, state }: Line, inForceId: number | null) {
 }
 
 function sentence(lines: readonly Line[], ownId: number) {
-  const own = lines.find(({ id }) => id === ownId);
-  if (!own || own.driftPercent === null) return "There is no earlier calibration to compare this one with.";
-  const how =
-    own.isDriftClear === null
-      ? ""
-      : own.isDriftClear
-        ? " That is more than the two measurements can be wrong."
-        : " That is no more than the two measurements can be wrong.";
-  return `Against the calibration before, it moved by ${signed(own.driftPercent)}.${how}`;
+  const place = lines.findIndex(({ id }) => id === ownId);
+  const own = lines[place];
+  const before = lines.slice(0, Math.max(0, place)).findLast(({ state }) => state === "approved");
+  if (!own || !before || own.driftPercent === null) return "There is no earlier calibration to compare this one with.";
+  const moved = `Against the calibration before, it lays ${signed(own.driftPercent)}.`;
+  if (before.gateOpeningIn !== own.gateOpeningIn) {
+    return `${moved} The gate was moved between them, from ${formatInches(before.gateOpeningIn)} to ${formatInches(own.gateOpeningIn)} in.`;
+  }
+  if (own.isDriftClear === null) return moved;
+  return own.isDriftClear
+    ? `${moved} That is more than the two measurements can be wrong: the truck has drifted.`
+    : `${moved} That is no more than the two measurements can be wrong.`;
 }
 
 /** Earlier calibrations of the same truck and material, with how far each moved. */

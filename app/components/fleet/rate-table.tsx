@@ -1,3 +1,4 @@
+import { useEffect, useRef } from "react";
 import { InBand, Over, Under } from "#app/components/ui/state-mark.tsx";
 import type { RateCell, RateSheetRow } from "#app/domain/calibration/rate-sheet.ts";
 import { formatOneDecimal, formatWhole } from "#app/lib/format.ts";
@@ -36,10 +37,17 @@ function Cell({ cell, view, lanes }: { cell: RateCell; view: RateView; lanes: nu
 /** Every setting at every speed. It scrolls sideways in its own frame; settings stay in view. */
 export function RateTable({ rows, view, workingSetting, workingSpeedMph, caption }: Props) {
   const speeds = rows[0]?.cells.map(({ mph }) => mph) ?? [];
+  const region = useRef<HTMLDivElement>(null);
+  // Where there is no room for all speeds, the working speed is the one to see first.
+  useEffect(() => {
+    const frame = region.current;
+    const column = frame?.querySelector<HTMLElement>("[data-working-speed]");
+    if (frame && column) frame.scrollLeft = column.offsetLeft - frame.clientWidth / 2;
+  }, []);
   const hasCounts = rows.some(({ revPerMin }) => revPerMin !== null);
   const weightUnit = view.units === "us" ? "lb" : "kg";
   return (
-    <div className="relative overflow-x-auto" tabIndex={0} role="region" aria-label={caption}>
+    <div ref={region} className="relative overflow-x-auto" tabIndex={0} role="region" aria-label={caption}>
       <table className="w-full border-collapse text-table">
         <caption className="sr-only">{caption}</caption>
         <thead>
@@ -62,6 +70,7 @@ export function RateTable({ rows, view, workingSetting, workingSpeedMph, caption
               <th
                 key={speedMph}
                 scope="col"
+                data-working-speed={speedMph === workingSpeedMph ? "" : undefined}
                 className={`border-b-2 border-line px-1.5 py-1.5 text-right font-semibold whitespace-nowrap ${speedMph === workingSpeedMph ? "bg-frost" : ""}`}
               >
                 {speedWords(speedMph, view.units)} {speedUnitWords(view.units)}

@@ -61,11 +61,11 @@ function rowCells(truck: Truck) {
   return {
     truck: <TextLink to={`/fleet/${truck.id}`}>{truck.unitNumber}</TextLink>,
     spreader: (
-      <>
+      <span>
         {spreaderWords[truck.spreaderKind]}
         {truck.control === "ground-speed" && `, ${controlWords[truck.control]}`}
         {truck.body !== "" && <span className="block text-note leading-snug text-gravel">{truck.body}</span>}
-      </>
+      </span>
     ),
     at: workingPointWords(truck),
     material: line ? `${line.materialName}${others > 0 ? ` and ${others} more` : ""}` : "–",

@@ -33,7 +33,7 @@ export function Timetable(props: Props) {
   return (
     <table className={`w-full border-collapse text-table ${isFolding ? "timetable-fold" : ""}`}>
       <caption className={isCaptionHidden ? "sr-only" : "pb-2 text-left text-note text-gravel"}>{caption}</caption>
-      <thead className={hasStickyHead ? "sticky top-0 z-1 bg-salt" : ""}>
+      <thead className={hasStickyHead ? "sm:sticky sm:top-0 sm:z-1 sm:bg-salt" : ""}>
         <tr>
           {columns.map((column) => (
             <th

@@ -34,7 +34,6 @@ const rows = [
   { kind: "salt", words: "straight salt" },
   { kind: "mix", words: "salt and sand mixed" },
   { kind: "sand", words: "sand" },
-  { kind: "brine", words: "brine" },
 ] as const;
 
 function range(band: BandInForce) {
@@ -49,7 +48,7 @@ export default function Bands({ loaderData, actionData }: Route.ComponentProps) 
     <Page>
       <Answer>
         {bands.salt
-          ? `Straight salt should lie between ${formatWhole(bands.salt.lowLbPerLaneMile)} and ${formatWhole(bands.salt.highLbPerLaneMile)} lb per lane mile here.`
+          ? `The band for straight salt is ${formatWhole(bands.salt.lowLbPerLaneMile)} to ${formatWhole(bands.salt.highLbPerLaneMile)} lb per lane mile here.`
           : "No band is set for straight salt."}
       </Answer>
       <Method>

@@ -14,6 +14,8 @@ export type FleetLine = {
   place: "under" | "in" | "over" | null;
   testedOn: string | null;
   isDue: boolean;
+  /** Weighed again, and not yet approved. */
+  isWaiting: boolean;
 };
 
 /** A truck and material to be weighed again, or for the first time. */
@@ -38,6 +40,7 @@ export async function getTownToday(actor: TownActor): Promise<TownToday> {
     .filter((truck) => truck.spreaderKind !== "liquid-tanks")
     .map((truck): FleetLine => {
       const salt = truck.materials.find(({ materialKind }) => materialKind === "salt");
+      const isWaiting = (salt?.ready.length ?? 0) > 0;
       return {
         truckId: truck.id,
         unitNumber: truck.unitNumber,
@@ -45,7 +48,8 @@ export async function getTownToday(actor: TownActor): Promise<TownToday> {
         rateLbPerLaneMile: salt?.inForce?.working?.lbPerLaneMile ?? null,
         place: salt?.inForce?.working?.place ?? null,
         testedOn: salt?.inForce?.testedOn ?? null,
-        isDue: salt !== undefined && salt.due.state !== "in-date",
+        isDue: !isWaiting && salt !== undefined && salt.due.state !== "in-date",
+        isWaiting,
       };
     });
   // What was weighed already waits for the director, not for the yard.

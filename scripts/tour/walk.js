@@ -105,7 +105,7 @@ async function director(maren, stop) {
   await press(maren, /^Approve/);
   await stop("fleet", maren.page);
   await maren.page.getByRole("link", { name: "12", exact: true }).first().click();
-  await maren.page.waitForLoadState("networkidle");
+  await maren.page.waitForURL(/\/fleet\/\d+$/);
   await stop("truck", maren.page);
   await maren.see("season-draft", "/season/2025");
   await press(maren, /^Send/);
@@ -120,7 +120,7 @@ async function review(ilse, stop) {
   await ilse.see("network", "/network");
   await ilse.see("review", "/network/review");
   await ilse.page.getByRole("link", { name: /at Fallowmere/ }).click();
-  await ilse.page.waitForLoadState("networkidle");
+  await ilse.page.waitForURL(/\/network\/review\/\d+$/);
   await stop("review-figure", ilse.page);
   await ilse.page.getByLabel("Question that goes back with it").fill("Why?");
   await press(ilse, "Send it back");
@@ -137,6 +137,7 @@ async function review(ilse, stop) {
 async function edition(ilse, stop) {
   await ilse.see("editions-to-publish", "/network/editions");
   await press(ilse, /^Publish/);
+  await ilse.page.getByText("An edition is being computed.").waitFor();
   await stop("editions-computing", ilse.page);
   await ilse.page.getByText("An edition is being computed.").waitFor({ state: "hidden", timeout: 60_000 });
   await stop("editions", ilse.page);
@@ -178,6 +179,7 @@ async function network(ilse, stop) {
   await ilse.page.getByLabel("Town").selectOption({ index: 5 });
   await press(ilse, "Send the invitation");
   await ilse.see("people-invited", "/network/people");
+  await ilse.see("people-found", "/network/people?find=quill");
   await ilse.see("mail", "/network/mail");
   await ilse.see("audit", "/network/audit");
   await ilse.see("today-coordinator-later", "/today");

@@ -157,7 +157,7 @@ export function BeforeAfter({
     <Timetable
       caption={caption}
       isCaptionHidden
-      isFolding={false}
+      onPhone="keep"
       columns={[
         { key: "what", label: units === "us" ? "on each lane mile" : "on each lane km" },
         { key: "before", label: before.name, isNumeric: true },

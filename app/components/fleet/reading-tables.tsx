@@ -25,7 +25,7 @@ export function RawReadings({ counts, catches, timedCatches }: Readings) {
         {counts.length > 0 && (
           <Timetable
             caption="Counts"
-            isFolding={false}
+            onPhone="keep"
             columns={[
               { key: "setting", label: "setting" },
               { key: "revolutions", label: "turns", isNumeric: true },
@@ -40,7 +40,7 @@ export function RawReadings({ counts, catches, timedCatches }: Readings) {
         {catches.length > 0 && (
           <Timetable
             caption="Catches"
-            isFolding={false}
+            onPhone="keep"
             columns={[
               { key: "number", label: "catch" },
               { key: "revolutions", label: "turns", isNumeric: true },
@@ -63,7 +63,7 @@ export function RawReadings({ counts, catches, timedCatches }: Readings) {
         {timedCatches.length > 0 && (
           <Timetable
             caption="Timed catches"
-            isFolding={false}
+            onPhone="keep"
             columns={[
               { key: "setting", label: "setting" },
               { key: "seconds", label: "caught over", unit: "s", isNumeric: true },

@@ -27,7 +27,7 @@ export function ReadyCalibrations({ isDirector, ready }: { isDirector: boolean; 
         caption="Calibrations that are weighed and not yet in force"
         isCaptionHidden
         columns={[
-          { key: "truck", label: "truck" },
+          { key: "truck", label: "truck", foldPrefix: "Truck" },
           { key: "material", label: "material" },
           { key: "gate", label: "gate", unit: "in", isNumeric: true },
           { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },

@@ -39,11 +39,11 @@ export function RegisterTable({ trucks }: { trucks: readonly Truck[] }) {
       isCaptionHidden
       hasStickyHead
       columns={[
-        { key: "truck", label: "truck" },
-        { key: "spreader", label: "spreader" },
-        { key: "at", label: "works at" },
+        { key: "truck", label: "truck", foldPrefix: "Truck" },
+        { key: "spreader", label: "spreader", isWideOnly: true },
+        { key: "at", label: "works at", isWideOnly: true },
         { key: "material", label: "material" },
-        { key: "gate", label: "gate", unit: "in", isNumeric: true },
+        { key: "gate", label: "gate", unit: "in", isNumeric: true, isWideOnly: true },
         { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
         { key: "weighed", label: "weighed", isNumeric: true },
         { key: "due", label: "calibration" },

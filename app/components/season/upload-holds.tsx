@@ -39,7 +39,7 @@ function CalibrationRows({ calibrations }: { calibrations: readonly StagedCalibr
     <Timetable
       caption="Calibrations as read from the file"
       columns={[
-        { key: "truck", label: "truck" },
+        { key: "truck", label: "truck", foldPrefix: "Truck" },
         { key: "material", label: "material" },
         { key: "day", label: "weighed" },
         { key: "gate", label: "gate", unit: "in", isNumeric: true },
@@ -68,7 +68,7 @@ function TruckRows({ trucks }: { trucks: readonly StagedTruck[] }) {
     <Timetable
       caption="Trucks as read from the file"
       columns={[
-        { key: "truck", label: "truck" },
+        { key: "truck", label: "truck", foldPrefix: "Truck" },
         { key: "change", label: "in the fleet" },
         { key: "spreader", label: "spreader" },
         { key: "at", label: "works at" },

@@ -6,7 +6,7 @@ export type SubPage = { label: string; to: string; isOwnAddressOnly?: boolean };
 export function SubPages({ label, pages }: { label: string; pages: readonly SubPage[] }) {
   return (
     <nav aria-label={label} className="mb-6 border-b border-rule print:hidden">
-      <ul className="-mb-px flex flex-wrap gap-x-6">
+      <ul className="-mb-px flex flex-wrap justify-between gap-x-2 max-sm:text-note sm:justify-start sm:gap-x-6">
         {pages.map((page) => (
           <li key={page.to}>
             <NavLink

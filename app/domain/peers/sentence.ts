@@ -92,7 +92,6 @@ export function placeSentence({
   const ending = cell.state === "withheld" ? `. ${peersAlone(cell, "")}` : ".";
   if (!band)
     return { parts: [{ words: [`${own}${peers.length > 0 ? ": " : ""}`, peers.join(", "), ending].join("") }] };
-  if (!band) return { parts: [{ words: `${[own, peers.join(", ")].filter(Boolean).join(": ")}${ending}` }] };
   const rest = peers.map((one) => `, ${one}`).join("");
   return { parts: [{ words: `${own}: ` }, bandPart(ownValue, band), { words: `${rest}${ending}` }] };
 }

@@ -56,7 +56,7 @@ function Left({ leftOut }: { leftOut: readonly LeftOut[] }) {
         caption="Trucks and materials that get no card, and why"
         isCaptionHidden
         columns={[
-          { key: "truck", label: "truck" },
+          { key: "truck", label: "truck", foldPrefix: "Truck" },
           { key: "material", label: "material" },
           { key: "why", label: "calibration" },
         ]}

@@ -69,7 +69,7 @@ export default function DuePage({ loaderData: { trucks } }: Route.ComponentProps
             isCaptionHidden
             hasStickyHead
             columns={[
-              { key: "truck", label: "truck" },
+              { key: "truck", label: "truck", foldPrefix: "Truck" },
               ...columns.map(([id, name]) => ({ key: String(id), label: name.toLowerCase() })),
               { key: "work", label: "after work on it" },
             ]}

@@ -3,7 +3,7 @@ import type { Worksheet } from "#app/domain/calibration/worksheet.ts";
 import { type Draft, edited, finishing, newDraft, ownerKey, settled, withCopy } from "./draft.ts";
 import type { RunningCount } from "#app/components/worksheet/running-count.ts";
 import { fetchKit, sendWorksheets, type SendState } from "./sender.client.ts";
-import { changeDraft, listDrafts, readDraft, readKit, readOwner } from "./store.client.ts";
+import { changeDraft, listDrafts, readDraft, readKit, readOwner, removeDraft } from "./store.client.ts";
 
 export type Snapshot = {
   /** "absent": the phone has no such worksheet and cannot fetch it; "broken": the browser keeps nothing. */
@@ -18,7 +18,13 @@ export type Snapshot = {
 
 const sendAfterMs = 1500;
 const sendEveryMs = 30_000;
+const keptFinishedMs = 30 * 24 * 3600 * 1000;
 const channelName = "commonweigh-worksheets";
+
+/** Finished, arrived, and a month old: the server has it, the phone need not. */
+function isDoneWith({ calibrationId, isDirty, conflict, editedAtMs }: Draft) {
+  return calibrationId !== null && !isDirty && conflict === null && Date.now() - editedAtMs > keptFinishedMs;
+}
 
 /**
  * The worksheets of this phone, with one of them open: reads them, keeps every keystroke, sends what is owed whenever
@@ -125,6 +131,7 @@ export function openYard(clientRef: string | null) {
         ? null
         : await changeDraft(current, clientRef, (before) => withCopy(before, copy, current, Date.now()));
     show({ kit, phase: clientRef !== null && !draft ? "absent" : "ready" });
+    for (const old of (await listDrafts(current)).filter(isDoneWith)) await removeDraft(current, old.clientRef);
     await reread();
     await send();
   }
@@ -148,6 +155,8 @@ export function openYard(clientRef: string | null) {
 
   function wake() {
     if (document.visibilityState !== "visible") return;
+    // Somebody may have signed in elsewhere on this phone, or signal may have come back.
+    if (snapshot.phase === "absent") return void hearServer();
     void reread();
     sendSoon(0);
   }
@@ -176,7 +185,7 @@ export function openYard(clientRef: string | null) {
 
   return {
     /** The first listener sets it going, the last one to leave ends it. */
-    subscribe(listener: () => void) {
+    subscribe: (listener: () => void) => {
       listeners.add(listener);
       if (listeners.size === 1) start();
       return () => {
@@ -186,30 +195,29 @@ export function openYard(clientRef: string | null) {
     },
     snapshot: () => snapshot,
     /** Keep what was typed. */
-    change(sheet: Worksheet) {
+    change: (sheet: Worksheet) => {
       if (snapshot.draft) keep(edited(snapshot.draft, sheet, Date.now()));
     },
-    run(running: RunningCount | null) {
+    run: (running: RunningCount | null) => {
       if (snapshot.draft) keep({ ...snapshot.draft, running });
     },
-    finish() {
+    finish: () => {
       if (snapshot.draft) keep(finishing(snapshot.draft, Date.now()));
     },
     /** Begin another worksheet on this phone. @returns once it is kept */
-    async begin(sheet: Worksheet) {
+    begin: async (sheet: Worksheet) => {
       if (owner !== null) {
         const draft = newDraft(owner, sheet, Date.now());
         await changeDraft(owner, sheet.clientRef, (before) => before ?? draft);
       }
     },
     /** What holds from now on, after two versions met. */
-    async settle(sheet: Worksheet) {
+    settle: async (sheet: Worksheet) => {
       if (owner === null || clientRef === null) return;
       await changeDraft(owner, clientRef, (before) => before && settled(before, sheet, Date.now()));
       await reread();
       sendSoon(0);
     },
-    sendNow: () => sendSoon(0),
   };
 }
 

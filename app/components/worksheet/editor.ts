@@ -28,3 +28,8 @@ export function withRow<Row extends { id: string }>(rows: readonly Row[], id: st
 export function newReadingId(): string {
   return crypto.randomUUID();
 }
+
+/** Put the focus into a field that is about to appear. */
+export function focusSoon(field: string): void {
+  requestAnimationFrame(() => requestAnimationFrame(() => document.getElementById(field)?.focus()));
+}

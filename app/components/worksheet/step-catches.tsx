@@ -2,9 +2,10 @@ import { catchVariationPercent, lbPerRevolution, weightPerRevolution } from "#ap
 import { mostVariationPercent } from "#app/domain/calibration/findings.ts";
 import { repeatUncertainty } from "#app/domain/calibration/uncertainty.ts";
 import { readableReadings, type WorksheetCatch } from "#app/domain/calibration/worksheet.ts";
+import { formatInches } from "#app/lib/format.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { CatchSpread } from "./catch-spread.tsx";
-import { type Editor, newReadingId, withRow } from "./editor.ts";
+import { type Editor, focusSoon, newReadingId, withRow } from "./editor.ts";
 import { Extras } from "./extras.tsx";
 import { Figure, Problem, RowProblems, Say, YardKey } from "./yard-field.tsx";
 import { TimedCatches } from "./timed-catches.tsx";
@@ -38,25 +39,25 @@ function Catches({ editor }: { editor: Editor }) {
   const set = (id: string, part: Partial<WorksheetCatch>) =>
     change({ ...sheet, catches: withRow(sheet.catches, id, part) });
   const before = sheet.catches.at(-1);
-  const add = () =>
-    change({
-      ...sheet,
-      catches: [
-        ...sheet.catches,
-        // Turns and pail are mostly the same again; the weight never is.
-        { id: newReadingId(), revolutions: before?.revolutions ?? "1", grossLb: "", tareLb: before?.tareLb ?? "" },
-      ],
-    });
+  function add() {
+    const id = newReadingId();
+    // Turns and pail are mostly the same again; the weight never is.
+    const caught = { id, revolutions: before?.revolutions ?? "1", grossLb: "", tareLb: before?.tareLb ?? "" };
+    change({ ...sheet, catches: [...sheet.catches, caught] });
+    focusSoon(`catches.${id}.grossLb`);
+  }
   return (
     <>
       <Say>{catchWords(read)}</Say>
-      <div aria-hidden="true" className={`mt-3 ${grid} text-right text-note leading-tight text-gravel`}>
-        <span />
-        <span className="pr-2">turns</span>
-        <span className="pr-2">gross, lb</span>
-        <span className="pr-2">pail, lb</span>
-        <span>lb a turn</span>
-      </div>
+      {sheet.catches.length > 0 && (
+        <div aria-hidden="true" className={`mt-3 ${grid} text-right text-note leading-tight text-gravel`}>
+          <span />
+          <span className="pr-2">turns</span>
+          <span className="pr-2">gross, lb</span>
+          <span className="pr-2">pail, lb</span>
+          <span>lb a turn</span>
+        </div>
+      )}
       <ul className="mt-1 grid gap-1.5">
         {sheet.catches.map((caught, place) => {
           const weighed = read.find(({ id }) => id === caught.id);
@@ -97,16 +98,15 @@ function Catches({ editor }: { editor: Editor }) {
       </ul>
       <Problem editor={editor} field="catches" />
       {!isFinished && (
-        <div className="mt-3 grid grid-cols-2 gap-2">
+        <div className={`mt-3 grid gap-2 ${sheet.catches.length > 0 ? "grid-cols-2" : ""}`}>
           <YardKey onClick={add}>
             {sheet.catches.length < advisedCount ? `Weigh catch ${sheet.catches.length + 1}` : "Weigh one more"}
           </YardKey>
-          <YardKey
-            isOff={sheet.catches.length === 0}
-            onClick={() => change({ ...sheet, catches: sheet.catches.slice(0, -1) })}
-          >
-            Take the last out
-          </YardKey>
+          {sheet.catches.length > 0 && (
+            <YardKey onClick={() => change({ ...sheet, catches: sheet.catches.slice(0, -1) })}>
+              Take the last out
+            </YardKey>
+          )}
         </div>
       )}
       <Spread read={read} />
@@ -165,7 +165,7 @@ function LastTime({ editor, earlier, read }: { editor: Editor; earlier: Editor["
       </dd>
       <dt className="text-gravel">Last time</dt>
       <dd>
-        {was.toFixed(1)} lb a turn at {last.gateOpeningIn} in
+        {was.toFixed(1)} lb a turn at {formatInches(last.gateOpeningIn)} in
         {now === null ? "" : `, now ${now >= was ? "+" : "−"}${Math.abs((100 * (now - was)) / was).toFixed(0)} %`}
       </dd>
     </dl>

@@ -3,7 +3,7 @@ import { fallsInCount, settingsWithLimit } from "#app/domain/calibration/count-r
 import { readableReadings, type WorksheetCount } from "#app/domain/calibration/worksheet.ts";
 import { readNumber } from "#app/domain/readings.ts";
 import { listWords } from "#app/lib/words.ts";
-import { type Editor, newReadingId, withRow } from "./editor.ts";
+import { type Editor, focusSoon, newReadingId, withRow } from "./editor.ts";
 import type { RunningCount } from "./running-count.ts";
 import { TurnPad } from "./turn-pad.tsx";
 import { Figure, Problem, RowProblems, Say, YardKey } from "./yard-field.tsx";
@@ -60,8 +60,9 @@ export function StepCounts({ editor, running, onRun }: Props) {
 
   function add(count: Omit<WorksheetCount, "id">) {
     const again = sheet.counts.find((one) => one.setting.trim() === count.setting);
-    const counts = again ? withRow(sheet.counts, again.id, count) : [...sheet.counts, { id: newReadingId(), ...count }];
-    change({ ...sheet, counts });
+    const id = again?.id ?? newReadingId();
+    change({ ...sheet, counts: again ? withRow(sheet.counts, id, count) : [...sheet.counts, { id, ...count }] });
+    return id;
   }
 
   function start(atSetting: string) {
@@ -89,10 +90,18 @@ export function StepCounts({ editor, running, onRun }: Props) {
               rpm,
             });
             onRun(null);
+            focusSoon("step-heading");
           }}
         />
         <div className="mt-2 grid">
-          <YardKey onClick={() => onRun(null)}>Leave without this count</YardKey>
+          <YardKey
+            onClick={() => {
+              onRun(null);
+              focusSoon("step-heading");
+            }}
+          >
+            Leave without this count
+          </YardKey>
         </div>
         <Tally counts={sheet.counts} now={running} />
       </>
@@ -197,7 +206,8 @@ type RowsProps = {
   editor: Editor;
   rpm: string;
   setting: string;
-  onAdd: (count: Omit<WorksheetCount, "id">) => void;
+  /** @returns the id of the count that holds it */
+  onAdd: (count: Omit<WorksheetCount, "id">) => string;
 };
 
 /** The counts as figures: to type them, and to put them right. */
@@ -205,6 +215,9 @@ function CountRows({ editor, rpm, setting, onAdd }: RowsProps) {
   const { sheet, change, isFinished } = editor;
   const set = (id: string, part: Partial<WorksheetCount>) =>
     change({ ...sheet, counts: withRow(sheet.counts, id, part) });
+  function type() {
+    focusSoon(`counts.${onAdd({ setting, revolutions: "", seconds: String(usualSeconds), rpm })}.revolutions`);
+  }
   const fields = ["setting", "revolutions", "seconds", "rpm"] as const;
   const heads = { setting: "setting", revolutions: "turns", seconds: "seconds", rpm: "rpm" } as const;
   return (
@@ -259,9 +272,7 @@ function CountRows({ editor, rpm, setting, onAdd }: RowsProps) {
       <Problem editor={editor} field="counts" />
       {!isFinished && (
         <div className="mt-2 grid">
-          <YardKey onClick={() => onAdd({ setting, revolutions: "", seconds: String(usualSeconds), rpm })}>
-            Type setting {setting}
-          </YardKey>
+          <YardKey onClick={type}>Type setting {setting}</YardKey>
         </div>
       )}
     </section>

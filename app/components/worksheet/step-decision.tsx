@@ -43,7 +43,8 @@ export function StepDecision({ editor, worked, onNewGate }: Props) {
   return (
     <>
       <Say>
-        {at} lies {working.distance > 0 ? <Over>{off}</Over> : <Under>{off}</Under>}.
+        {at} lies{" "}
+        <span className="whitespace-nowrap">{working.distance > 0 ? <Over>{off}</Over> : <Under>{off}</Under>}.</span>
       </Say>
       <Facts editor={editor} worked={worked} />
       <Advice editor={editor} worked={worked} advice={advice} onNewGate={onNewGate} />
@@ -81,16 +82,7 @@ function Advice({ editor, worked, advice, onNewGate }: Props & { advice: WorkedO
       </p>
     );
   }
-  if (advice.method === "refused") {
-    return (
-      <p className="mt-4 leading-snug">
-        {advice.reason === "not-rising"
-          ? "The openings weighed so far do not lay more when the gate is wider. Weigh them again before changing the gate."
-          : "A line through the openings weighed so far would have the gate shut. Look for another cause first."}
-      </p>
-    );
-  }
-  const { openingIn, nearestSixteenthIn, reach, isBeyondMax, isBeyondReach } = advice;
+  const { openingIn, nearestSixteenthIn, reach, isBeyondMax, isBeyondReach, isFitRefused } = advice;
   const middle = (band.lowLbPerLaneMile + band.highLbPerLaneMile) / 2;
   const { savedPercent } = beforeAfter({
     beforeLbPerLaneMile: worked.working.lbPerLaneMile,
@@ -118,6 +110,8 @@ function Advice({ editor, worked, advice, onNewGate }: Props & { advice: WorkedO
         {reach === null
           ? "In proportion to the one opening weighed: a starting point."
           : `From a line through ${advice.openingCount} openings, ${formatInches(reach.fromIn)} to ${formatInches(reach.toIn)} in${isBeyondReach ? ". This one lies outside them: only a guess." : "."}`}{" "}
+        {isFitRefused &&
+          "Earlier openings of this season do not fit it: a wider gate laid no more. Look for the cause. "}
         {isBeyondMax && "It is more than the most recorded for this gate. "}
         Stop everything before the gate is moved. The counts stay good; the catch does not: weigh one revolution at the
         new gate.

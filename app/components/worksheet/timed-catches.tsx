@@ -36,13 +36,15 @@ export function TimedCatches({ editor }: { editor: Editor }) {
   return (
     <>
       <Say>Run each setting for half a minute, catch all of it, and weigh. Three catches a setting are advised.</Say>
-      <div aria-hidden="true" className={`mt-3 ${grid} text-right text-note leading-tight text-gravel`}>
-        <span className="pr-1">setting</span>
-        <span className="pr-2">seconds</span>
-        <span className="pr-2">gross, lb</span>
-        <span className="pr-2">empty, lb</span>
-        <span>lb a minute</span>
-      </div>
+      {sheet.timedCatches.length > 0 && (
+        <div aria-hidden="true" className={`mt-3 ${grid} text-right text-note leading-tight text-gravel`}>
+          <span className="pr-1">setting</span>
+          <span className="pr-2">seconds</span>
+          <span className="pr-2">gross, lb</span>
+          <span className="pr-2">empty, lb</span>
+          <span>lb a minute</span>
+        </div>
+      )}
       <ul className="mt-1 grid gap-1.5">
         {sheet.timedCatches.map((caught, place) => {
           const weighed = read.find(({ id }) => id === caught.id);
@@ -68,14 +70,13 @@ export function TimedCatches({ editor }: { editor: Editor }) {
       </ul>
       <Problem editor={editor} field="timedCatches" />
       {!isFinished && (
-        <div className="mt-3 grid grid-cols-2 gap-2">
+        <div className={`mt-3 grid gap-2 ${sheet.timedCatches.length > 0 ? "grid-cols-2" : ""}`}>
           <YardKey onClick={add}>Weigh catch {sheet.timedCatches.length + 1}</YardKey>
-          <YardKey
-            isOff={sheet.timedCatches.length === 0}
-            onClick={() => change({ ...sheet, timedCatches: sheet.timedCatches.slice(0, -1) })}
-          >
-            Take the last out
-          </YardKey>
+          {sheet.timedCatches.length > 0 && (
+            <YardKey onClick={() => change({ ...sheet, timedCatches: sheet.timedCatches.slice(0, -1) })}>
+              Take the last out
+            </YardKey>
+          )}
         </div>
       )}
     </>

@@ -1,6 +1,6 @@
 import { type BandPlace, distanceFromBand } from "#app/domain/calibration/band.ts";
 import { lbPerRevolution } from "#app/domain/calibration/catch-weight.ts";
-import { type GateAdvice, gateAdvice, type GateRefusal, targetLbPerRev } from "#app/domain/calibration/gate-advice.ts";
+import { type GateAdvice, gateAdvice, targetLbPerRev } from "#app/domain/calibration/gate-advice.ts";
 import {
   bandSentence,
   bandSummary,
@@ -28,7 +28,7 @@ export type WorkedOut = {
   /** At the working setting and speed; null when that setting was not measured. */
   working: { lbPerLaneMile: number; plusMinus: number | null; place: BandPlace | null; distance: number } | null;
   /** Null when there is no band, or the working setting is in it, or catches were timed. */
-  advice: ((GateAdvice | GateRefusal) & { openingCount: number }) | null;
+  advice: (GateAdvice & { openingCount: number; isFitRefused: boolean }) | null;
 };
 
 /** Four speeds the truck drives at, the working one among them. */
@@ -93,7 +93,13 @@ function adviceFor(given: Given, weighed: Weighed & { isInBand: boolean }): Work
   if (!band || isInBand || catches.length === 0) return null;
   const target = targetLbPerRev({ counts, ...truck, band });
   if (target === null) return null;
-  const openings = [{ gateOpeningIn, lbPerRev: lbPerRevolution(catches) }, ...otherOpenings(given)];
+  const own = { gateOpeningIn, lbPerRev: lbPerRevolution(catches) };
+  const openings = [own, ...otherOpenings(given)];
   const openingCount = new Set(openings.map((one) => one.gateOpeningIn)).size;
-  return { ...gateAdvice({ weighed: openings, targetLbPerRev: target, gateMaxIn: truck.gateMaxIn }), openingCount };
+  const wanted = { targetLbPerRev: target, gateMaxIn: truck.gateMaxIn };
+  const fitted = gateAdvice({ weighed: openings, ...wanted });
+  if (fitted.method !== "refused") return { ...fitted, openingCount, isFitRefused: false };
+  // Openings that contradict each other give no line; the one weighed just now is known for certain.
+  const proportional = gateAdvice({ weighed: [own], ...wanted });
+  return proportional.method === "refused" ? null : { ...proportional, openingCount, isFitRefused: true };
 }

@@ -4,6 +4,7 @@ import { join } from "node:path";
 import { measureComputation } from "./bench/computation.js";
 import { measurePages } from "./bench/pages.js";
 import { measureStart } from "./bench/start.js";
+import { measureWorksheet } from "./bench/worksheet.js";
 import { projectFolder } from "./settings.js";
 
 /*
@@ -12,7 +13,12 @@ import { projectFolder } from "./settings.js";
  * Ends with exit code 1 when a limit is missed.
  */
 
-const measures = [...(await measurePages()), ...(await measureComputation()), ...(await measureStart())];
+const measures = [
+  ...(await measurePages()),
+  ...(await measureComputation()),
+  ...(await measureWorksheet()),
+  ...(await measureStart()),
+];
 const result = {
   measuredAt: new Date().toISOString(),
   node: process.version,

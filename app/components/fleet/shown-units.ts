@@ -37,10 +37,6 @@ export function shownWeight(weightLb: number, units: UnitChoice) {
   return units === "us" ? weightLb : lbToKg(weightLb);
 }
 
-export function shownVolume(gallons: number, units: UnitChoice) {
-  return units === "us" ? gallons : gallonsToLitres(gallons);
-}
-
 export function rateUnitWords({ units, basis }: Pick<RateView, "units" | "basis">) {
   if (units === "us") return basis === "lane" ? "lb per lane mile" : "lb per mile";
   return basis === "lane" ? "kg per lane km" : "kg per km";

@@ -33,7 +33,7 @@ const stepMph = 5;
  * @returns ascending mph, each at least 5 save for a slower working speed
  * @example cardSpeeds(25) // [15, 20, 25, 30]
  */
-export function cardSpeeds(workingSpeedMph: number): number[] {
+function cardSpeeds(workingSpeedMph: number): number[] {
   const below = (Math.ceil(workingSpeedMph / stepMph) - 1) * stepMph;
   const speeds = [below - stepMph, below].filter((speed) => speed >= stepMph);
   speeds.push(workingSpeedMph);

@@ -3,8 +3,9 @@ import { afterAll, beforeAll, expect, test } from "vitest";
 import { emptyWorksheet, type Worksheet } from "#app/domain/calibration/worksheet.ts";
 import type { SyncRequest } from "#app/services/worksheets/sheet-schema.server.ts";
 import { startApp, type TestApp } from "#tests/support/app.ts";
-import { aCalibration, aMaterial, aPerson, aTown, aTruck, countOf, rows, signIn } from "#tests/support/factories.ts";
+import { aCalibration, aMaterial, aPerson, aTown, aTruck, signIn } from "#tests/support/factories.ts";
 import { inParallel } from "#tests/support/http.ts";
+import { countOf, rows } from "#tests/support/rows.ts";
 
 let app: TestApp;
 

@@ -1,4 +1,4 @@
-import { gallonsToLitres, lbPerLaneMileToKgPerLaneKm, lbToKg, milesToKm } from "#app/domain/units.ts";
+import { lbPerLaneMileToKgPerLaneKm, lbToKg, milesToKm } from "#app/domain/units.ts";
 
 export type UnitChoice = "us" | "si";
 export type BasisChoice = "lane" | "mile";

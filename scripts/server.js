@@ -43,7 +43,7 @@ export function createServer({ build, origin }) {
   app.use((error, _request, response, next) => {
     console.error(error);
     if (response.headersSent) return next(error);
-    sendPlain(response, 500, "Something went wrong on our side. Nothing was stored. Try again in a minute.");
+    sendPlain(response, 500, "Something went wrong on our side. Try again in a minute.");
   });
 
   const limits = { requestTimeout: 30_000, headersTimeout: 10_000, keepAliveTimeout: 65_000 };

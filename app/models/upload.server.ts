@@ -1,7 +1,7 @@
 import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
 
-export type UploadKind = "season-figures" | "calibrations";
+export type UploadKind = "season-figures" | "calibrations" | "trucks";
 
 /** A file as it came, with what the checks made of it. */
 export class Upload extends Model<InferAttributes<Upload>, InferCreationAttributes<Upload>> {

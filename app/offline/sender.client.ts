@@ -90,8 +90,3 @@ export async function sendWorksheets(owner: string, onProgress: () => void): Pro
     lock === null ? "waiting" : sendAll(owner, onProgress),
   );
 }
-
-/** Whether anything of this owner waits to be sent. */
-export function owesAnything(drafts: readonly Draft[]): boolean {
-  return drafts.some(needsSending);
-}

@@ -1,6 +1,7 @@
 import { Op, type Transaction } from "sequelize";
 import type { NetworkActor, TownActor } from "#app/context.ts";
 import { type Band, commonPracticeBands, type MaterialKind, materialKinds } from "#app/domain/calibration/band.ts";
+import { defaultTolerancePercent } from "#app/domain/calibration/verification.ts";
 import { inTransaction } from "#app/lib/db.server.ts";
 import { NetworkSetting } from "#app/models/network-setting.server.ts";
 import { StoredBand } from "#app/models/stored-band.server.ts";
@@ -14,8 +15,6 @@ export type BandInForce = (Band & { origin: BandOrigin }) | null;
 export type TownBands = Record<MaterialKind, BandInForce>;
 
 const toleranceName = "ground-speed-tolerance-percent";
-/** A choice of the network's, with no published figure behind it. */
-const toleranceDefaultPercent = 5;
 
 function practice(kind: MaterialKind): BandInForce {
   const band = commonPracticeBands[kind];
@@ -48,10 +47,15 @@ export async function bandsOfNetwork(): Promise<TownBands> {
   return resolve(await StoredBand.findAll({ where: { townId: null } }), null);
 }
 
+/** The bands of common practice alone: what holds where nobody has set one. */
+export function practiceBands(): TownBands {
+  return resolve([], null);
+}
+
 /** How far a ground-speed controller may miss what it was told: percent, the network's or 5. */
 export async function tolerancePercent(): Promise<number> {
   const setting = await NetworkSetting.findByPk(toleranceName);
-  return setting?.value ?? toleranceDefaultPercent;
+  return setting?.value ?? defaultTolerancePercent;
 }
 
 /** What a form of bands says: for each kind a band, or null to fall back on what is next in line. */
@@ -100,7 +104,7 @@ export async function setNetworkBands(actor: NetworkActor, choices: BandChoices,
     // Writing this row first makes two coordinators at once take turns: a unique key lets a null town through twice.
     await NetworkSetting.upsert({ name: toleranceName, value: percent }, { transaction });
     await store(actor, null, choices, transaction);
-    const from = before?.value ?? toleranceDefaultPercent;
+    const from = before?.value ?? defaultTolerancePercent;
     if (from === percent) return;
     const detail = { before: from, after: percent };
     await recordAudit(

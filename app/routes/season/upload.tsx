@@ -1,6 +1,6 @@
 import { data, Form, redirect } from "react-router";
 import { groupKind, groupProblems, ProblemList } from "#app/components/season/problem-groups.tsx";
-import { SeasonTable } from "#app/components/season/season-table.tsx";
+import { UploadHolds } from "#app/components/season/upload-holds.tsx";
 import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { Button, ButtonLink } from "#app/components/ui/button.tsx";
@@ -9,11 +9,8 @@ import { Kinds } from "#app/components/ui/kinds.tsx";
 import { Notice } from "#app/components/ui/notice.tsx";
 import { SideBySide } from "#app/components/ui/side-by-side.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
-import { Timetable } from "#app/components/ui/timetable.tsx";
 import { townActor } from "#app/context.ts";
-import { catchVariationPercent } from "#app/domain/calibration/catch-weight.ts";
-import { seasonTotals } from "#app/domain/season/season-totals.ts";
-import { formatInches, formatInstant, formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
+import { formatInstant } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { acceptUpload } from "#app/services/uploads/accept.server.ts";
@@ -40,11 +37,14 @@ export const meta: Route.MetaFunction = () => [{ title: "Check an upload · Comm
 
 type Upload = Route.ComponentProps["loaderData"]["upload"];
 
+function thingsOf({ kind, seasons, calibrations, trucks }: Upload) {
+  if (kind === "season-figures") return countWords(seasons.length, "season", "seasons");
+  if (kind === "calibrations") return countWords(calibrations.length, "calibration", "calibrations");
+  return countWords(trucks.length, "truck", "trucks");
+}
+
 function answer(upload: Upload, errorCount: number, checkCount: number) {
-  const things =
-    upload.kind === "season-figures"
-      ? countWords(upload.seasons.length, "season", "seasons")
-      : countWords(upload.calibrations.length, "calibration", "calibrations");
+  const things = thingsOf(upload);
   if (upload.state === "accepted")
     return `Accepted: ${things} ${upload.kind === "season-figures" ? "in your figures" : "in your fleet"}.`;
   if (upload.rowCount === 0) return "This file cannot be read.";
@@ -55,48 +55,6 @@ function answer(upload: Upload, errorCount: number, checkCount: number) {
     checkCount === 0 ? "" : ` ${sentenceStart(countWords(checkCount, "thing", "things"))} to look at first.`;
   const rows = upload.rowCount === 1 ? "The row" : `All ${countWords(upload.rowCount, "row", "rows")}`;
   return `${rows} can be read: ${things}.${checks}`;
-}
-
-function Holds({ upload }: { upload: Upload }) {
-  if (upload.seasons.length > 0) {
-    return (
-      <SeasonTable
-        caption="As read from the file, and worked out from it"
-        seasons={upload.seasons.map(({ seasonStartYear, amounts }) => ({
-          seasonStartYear,
-          amounts,
-          totals: seasonTotals(amounts),
-        }))}
-      />
-    );
-  }
-  if (upload.calibrations.length === 0) return null;
-  return (
-    <Timetable
-      caption="Calibrations as read from the file"
-      columns={[
-        { key: "truck", label: "truck", foldPrefix: "Truck" },
-        { key: "material", label: "material" },
-        { key: "day", label: "weighed" },
-        { key: "gate", label: "gate", unit: "in", isNumeric: true },
-        { key: "counts", label: "settings counted", isNumeric: true },
-        { key: "catches", label: "catches", isNumeric: true },
-        { key: "spread", label: "catches differ by", unit: "%", isNumeric: true },
-      ]}
-      rows={upload.calibrations.map((calibration) => ({
-        key: String(calibration.row),
-        cells: {
-          truck: calibration.unitNumber,
-          material: calibration.materialName,
-          day: formatShortDay(calibration.testedOn),
-          gate: formatInches(calibration.gateOpeningIn),
-          counts: calibration.counts.length,
-          catches: calibration.catches.length,
-          spread: calibration.catches.length === 0 ? "–" : formatOneDecimal(catchVariationPercent(calibration.catches)),
-        },
-      }))}
-    />
-  );
 }
 
 export default function UploadPage({ loaderData: { upload }, actionData }: Route.ComponentProps) {
@@ -142,10 +100,10 @@ export default function UploadPage({ loaderData: { upload }, actionData }: Route
             ))}
           </SideBySide>
         )}
-        {(upload.seasons.length > 0 || upload.calibrations.length > 0) && (
+        {upload.seasons.length + upload.calibrations.length + upload.trucks.length > 0 && (
           <>
             <Heading>{errors.length > 0 ? "What could be read" : "What the file holds"}</Heading>
-            <Holds upload={upload} />
+            <UploadHolds upload={upload} />
           </>
         )}
       </Page>

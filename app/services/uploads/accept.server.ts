@@ -14,6 +14,7 @@ import { Upload } from "#app/models/upload.server.ts";
 import { recordAudit } from "../audit.server.ts";
 import { StagedCalibrations, StagedSeasons } from "./kinds.server.ts";
 import { storedProblems } from "./read.server.ts";
+import { storeTrucks } from "./store-trucks.server.ts";
 
 async function storeSeasons(actor: TownActor, upload: Upload, transaction: Transaction) {
   for (const { seasonStartYear, amounts } of StagedSeasons.parse(upload.staged)) {
@@ -79,6 +80,12 @@ async function storeCalibrations(actor: TownActor, upload: Upload, transaction: 
   }
 }
 
+const storeKind = {
+  "season-figures": storeSeasons,
+  calibrations: storeCalibrations,
+  trucks: storeTrucks,
+};
+
 /**
  * Take everything a checked file holds, in one transaction: all of it or none.
  *
@@ -95,8 +102,7 @@ export async function acceptUpload(actor: TownActor, uploadId: number) {
       if (storedProblems(upload).some((problem) => problem.severity === "error")) {
         return { ok: false, reason: "errors-stand" } as const;
       }
-      if (upload.kind === "season-figures") await storeSeasons(actor, upload, transaction);
-      else await storeCalibrations(actor, upload, transaction);
+      await storeKind[upload.kind](actor, upload, transaction);
       await upload.update({ state: "accepted", settledAt: now(), settledById: actor.userId }, { transaction });
       await recordAudit(actor, { action: "upload.accept", entity: "upload", entityId: upload.id }, transaction);
       return { ok: true, kind: upload.kind } as const;

@@ -8,6 +8,8 @@ import {
   type StagedCalibration,
 } from "#app/domain/calibration/calibration-file.ts";
 import type { FileProblem, FileRow } from "#app/domain/file-problem.ts";
+import { controlKinds, spreaderKinds } from "#app/domain/fleet/truck.ts";
+import { readTruckRows, type StagedTruck, truckFileColumns } from "#app/domain/fleet/truck-file.ts";
 import { readSeasonRows, seasonFileColumns, type StagedSeason } from "#app/domain/season/season-file.ts";
 import { now } from "#app/lib/clock.server.ts";
 import { Calibration } from "#app/models/calibration.server.ts";
@@ -50,6 +52,25 @@ export const StagedCalibrations = z.array(
     catches: z.array(z.object({ revolutions: Positive, grossLb: Positive, tareLb: Amount })),
   }),
 ) satisfies z.ZodType<StagedCalibration[]>;
+
+export const StagedTrucks = z.array(
+  z.object({
+    row: z.number(),
+    truckId: z.number().int().nullable(),
+    unitNumber: z.string(),
+    body: z.string(),
+    spreaderKind: z.enum(spreaderKinds),
+    control: z.enum(controlKinds),
+    lanesPerPass: Positive,
+    workingSpeedMph: Positive,
+    workingSetting: Positive,
+    workingRpm: Positive.nullable(),
+    gateMaxIn: Positive.nullable(),
+    capacityTons: Positive.nullable(),
+    isInService: z.boolean(),
+    materialIds: z.array(z.number().int()),
+  }),
+) satisfies z.ZodType<StagedTruck[]>;
 
 type Checked = { staged: unknown[]; problems: FileProblem[] };
 type Kind = {
@@ -101,6 +122,19 @@ async function checkCalibrations(
   });
 }
 
+async function checkTrucks(actor: TownActor, rows: readonly FileRow[], transaction: Transaction): Promise<Checked> {
+  const where = { townId: actor.townId };
+  const [trucks, materials] = await Promise.all([
+    Truck.findAll({ where, attributes: ["id", "unitNumber", "isInService"], transaction }),
+    Material.findAll({ where, attributes: ["id", "name"], transaction }),
+  ]);
+  return readTruckRows(rows, {
+    trucks: trucks.map(({ id, unitNumber, isInService }) => ({ id, unitNumber, isInService })),
+    materials: materials.map(({ id, name }) => ({ id, name })),
+    maySetService: actor.role === "director",
+  });
+}
+
 /** The kinds of file that are taken, each with its columns and its checks. */
 export const uploadKinds: Record<UploadKind, Kind> = {
   "season-figures": {
@@ -118,6 +152,28 @@ export const uploadKinds: Record<UploadKind, Kind> = {
       ["12", "Salt", "2026-10-09", "1 7/8", "catch", "", "1", "", "9.4", "1.6"],
     ],
     check: checkCalibrations,
+  },
+  trucks: {
+    label: "Trucks",
+    columns: truckFileColumns,
+    example: [
+      [
+        "12",
+        "8-yard hopper",
+        "hopper-auger",
+        "manual",
+        "1",
+        "25",
+        "3",
+        "1600",
+        "4 1/2",
+        "8.6",
+        "yes",
+        "Salt; Sand mix",
+      ],
+      ["14", "10-yard chain body", "conveyor", "ground-speed", "1", "25", "4", "", "", "", "yes", "Salt"],
+    ],
+    check: checkTrucks,
   },
 };
 

@@ -4,7 +4,7 @@ import type { FileProblem } from "#app/domain/file-problem.ts";
 import { writeCsv } from "#app/lib/csv.server.ts";
 import { notFound } from "#app/lib/errors.ts";
 import { Upload, type UploadKind } from "#app/models/upload.server.ts";
-import { StagedCalibrations, StagedSeasons, uploadKinds } from "./kinds.server.ts";
+import { StagedCalibrations, StagedSeasons, StagedTrucks, uploadKinds } from "./kinds.server.ts";
 
 const Problems = z.array(
   z.object({
@@ -32,6 +32,7 @@ export type UploadView = {
   problems: FileProblem[];
   seasons: z.infer<typeof StagedSeasons>;
   calibrations: z.infer<typeof StagedCalibrations>;
+  trucks: z.infer<typeof StagedTrucks>;
 };
 
 async function findUpload(actor: TownActor, uploadId: number) {
@@ -56,6 +57,7 @@ export async function getUpload(actor: TownActor, uploadId: number): Promise<Upl
     problems: storedProblems(upload),
     seasons: upload.kind === "season-figures" ? StagedSeasons.parse(upload.staged) : [],
     calibrations: upload.kind === "calibrations" ? StagedCalibrations.parse(upload.staged) : [],
+    trucks: upload.kind === "trucks" ? StagedTrucks.parse(upload.staged) : [],
   };
 }
 

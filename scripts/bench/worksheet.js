@@ -30,7 +30,7 @@ async function firstLoadBytes(context, address) {
 async function watchTaps(page) {
   await page.evaluate(() => {
     window.taps = [];
-    new PerformanceObserver((list) => {
+    new window.PerformanceObserver((list) => {
       for (const { name, duration } of list.getEntries()) {
         if (["pointerdown", "pointerup", "click", "keydown"].includes(name)) window.taps.push(duration);
       }

@@ -48,7 +48,7 @@ export default function Components({ loaderData }: Route.ComponentProps) {
         <PartSamples />
         <FormSamples />
         <Heading>In the dark</Heading>
-        <div data-theme="dark" className="bg-salt p-4 text-asphalt">
+        <div data-theme="dark" className="-mx-4 bg-salt p-4 text-asphalt">
           <WallStrip {...wall} />
           <p className="mt-4">
             <Button type="button">Weigh the catch</Button>

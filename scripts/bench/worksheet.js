@@ -1,4 +1,3 @@
-/* global PerformanceObserver -- runs in the page */
 import { launchChromium } from "../chromium.js";
 
 const slowdown = 4;

@@ -1,4 +1,4 @@
-import { afterAnswer, type Draft, type Message, messageOf, needsSending, ownerKey } from "./draft.ts";
+import { afterAnswer, type Message, messageOf, needsSending, ownerKey } from "./draft.ts";
 import { isKitAnswer, isSyncAnswer, type KitAnswer } from "./answers.ts";
 import { keepKit, keepMessage, listDrafts, listMessages, settleMessage } from "./store.client.ts";
 

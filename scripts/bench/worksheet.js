@@ -1,4 +1,3 @@
-/* global PerformanceObserver -- runs in the page */
 import { launchChromium } from "../chromium.js";
 import { startPassingSystem } from "../passing-system.js";
 import { short } from "./measure.js";

@@ -15,7 +15,6 @@ import { workedOut, type WorkedOut } from "#app/components/worksheet/worked-out.
 import { Say } from "#app/components/worksheet/yard-field.tsx";
 import {
   emptyWorksheet,
-  isStepDone,
   nextStep,
   stepOfField,
   type Worksheet,
@@ -185,15 +184,15 @@ function Desk(props: DeskProps) {
 
   const isCounting = step === "counts" && running !== null;
   const isAtEnd = step === "card" && (calibrationId !== null || isWaiting || worked === null);
+  const unfinished = new Set(
+    problems.flatMap(({ severity, field }) => (severity === "error" ? [stepOfField(field)] : [])),
+  );
   const steps = groups
     .filter(({ group }) => !(isTimed && group === "Count"))
     .map(({ group, steps: own }) => ({
       group,
-      to: own.find((one) => !isStepDone(one, sheet, truck)) ?? own[0] ?? "truck",
-      isDone:
-        group === "Rates" || group === "Card"
-          ? calibrationId !== null
-          : own.every((one) => isStepDone(one, sheet, truck)),
+      to: own.find((one) => unfinished.has(one)) ?? own[0] ?? "truck",
+      isDone: group === "Rates" || group === "Card" ? calibrationId !== null : !own.some((one) => unfinished.has(one)),
       isCurrent: own.includes(step),
     }));
   return (

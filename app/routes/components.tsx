@@ -1,4 +1,3 @@
-import { data } from "react-router";
 import { exampleStrip, FrontStrip } from "#app/components/charts/front-strip.tsx";
 import { laneStripSvg, laneStripSvgs } from "#app/components/charts/lane-strip-svg.server.ts";
 import { LaneStrip } from "#app/components/charts/lane-strip.tsx";
@@ -13,14 +12,15 @@ import { stripSamples, wallSample } from "#app/components/samples/strip-samples.
 import { Dock } from "#app/components/ui/dock.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import { env } from "#app/lib/env.server.ts";
+import { notFound } from "#app/lib/errors.ts";
 import type { Route } from "./+types/components";
 
 export function loader() {
-  if (!env.devPages) throw data("Not found", { status: 404 });
+  if (!env.devPages) throw notFound("page");
   return {
-    strips: stripSamples.map((sample) => ({ ...sample, svg: laneStripSvgs(sample.spec) })),
+    strips: stripSamples,
     front: laneStripSvgs(exampleStrip),
-    wall: laneStripSvg(wallSample, "wall"),
+    wall: { svg: laneStripSvg(wallSample, "wall"), phoneSvg: laneStripSvg(wallSample, "phone") },
   };
 }
 
@@ -42,14 +42,14 @@ export default function Components({ loaderData }: Route.ComponentProps) {
           <LaneStrip key={key} {...strip} downloadTo="/components" isTableOpen={key === "twelve"} />
         ))}
         <Heading>On the wall</Heading>
-        <WallStrip svg={wall} />
+        <WallStrip {...wall} />
         <Heading>On the front page</Heading>
         <FrontStrip svg={front} />
         <PartSamples />
         <FormSamples />
         <Heading>In the dark</Heading>
-        <div data-theme="dark" className="bg-salt p-4 text-asphalt">
-          <WallStrip svg={wall} />
+        <div data-theme="dark" className="-mx-4 bg-salt p-4 text-asphalt">
+          <WallStrip {...wall} />
           <p className="mt-4">
             <Button type="button">Weigh the catch</Button>
           </p>

@@ -1,5 +1,5 @@
 import type { AnalystActor, NetworkActor, TownActor } from "#app/context.ts";
-import { hasAcceptedTerms } from "./dataset.server.ts";
+import { type DatasetEdition, hasAcceptedTerms, listDatasetEditions } from "./dataset.server.ts";
 import { type EditionSummary, listEditions } from "./editions.server.ts";
 import { listFleet, todaysDate } from "./fleet/read.server.ts";
 import { getReviewQueue } from "./review.server.ts";
@@ -106,10 +106,14 @@ export async function getNetworkToday(actor: NetworkActor): Promise<NetworkToday
   };
 }
 
-export type AnalystToday = { edition: EditionSummary | null; hasTerms: boolean; tokenCount: number };
+export type AnalystToday = { edition: DatasetEdition | null; hasTerms: boolean; tokenCount: number };
 
 /** What waits for an analyst: the newest edition, the terms, the tokens. */
 export async function getAnalystToday(actor: AnalystActor): Promise<AnalystToday> {
-  const [editions, hasTerms, tokens] = await Promise.all([listEditions(), hasAcceptedTerms(actor), listTokens(actor)]);
+  const [editions, hasTerms, tokens] = await Promise.all([
+    listDatasetEditions(),
+    hasAcceptedTerms(actor),
+    listTokens(actor),
+  ]);
   return { edition: editions[0] ?? null, hasTerms, tokenCount: tokens.length };
 }

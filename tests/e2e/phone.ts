@@ -1,23 +1,8 @@
 import AxeBuilder from "@axe-core/playwright";
-import { type Browser, type BrowserContext, chromium, type Page } from "playwright-core";
+import type { Browser, BrowserContext, Page } from "playwright-core";
 import { expect, inject } from "vitest";
 import { connect } from "#scripts/migrate.js";
 import { signIn } from "#tests/support/factories.ts";
-
-const flags = [
-  "--headless",
-  "--no-sandbox",
-  "--disable-gpu",
-  "--disable-quic",
-  "--no-first-run",
-  "--disable-background-networking",
-  "--disable-component-update",
-  "--disable-sync",
-];
-
-export function startBrowser(): Promise<Browser> {
-  return chromium.launch({ executablePath: "/usr/bin/chromium", args: flags });
-}
 
 /** The running system's database, for what a test looks up by itself. */
 export async function systemDatabase() {

@@ -1,20 +1,13 @@
 import type { Browser, Page } from "playwright-core";
+import { launchChromium } from "#scripts/chromium.js";
 import { afterAll, beforeAll, expect, test } from "vitest";
-import {
-  aPhone,
-  type Database,
-  expectNoAxeFindings,
-  keepProgramOn,
-  signInOn,
-  startBrowser,
-  systemDatabase,
-} from "./phone.ts";
+import { aPhone, type Database, expectNoAxeFindings, keepProgramOn, signInOn, systemDatabase } from "./phone.ts";
 
 let browser: Browser;
 let db: Database;
 
 beforeAll(async () => {
-  [browser, db] = await Promise.all([startBrowser(), systemDatabase()]);
+  [browser, db] = await Promise.all([launchChromium(), systemDatabase()]);
 });
 
 afterAll(async () => {

@@ -4,11 +4,9 @@ import { type GateAdvice, gateAdvice, targetLbPerRev } from "#app/domain/calibra
 import {
   bandSentence,
   bandSummary,
-  fastestSpeedMph,
   rateSheet,
   type RateSheetRow,
   type RateSentencePart,
-  slowestSpeedMph,
   speedsFromTo,
 } from "#app/domain/calibration/rate-sheet.ts";
 import { worksheetReadings } from "#app/domain/calibration/worksheet.ts";
@@ -31,12 +29,15 @@ export type WorkedOut = {
   advice: (GateAdvice & { openingCount: number; isFitRefused: boolean }) | null;
 };
 
-/** Four speeds the truck drives at, the working one among them. */
+/** Four speeds the truck drives at, by fives and the working one among them, within those of a rate sheet. */
 function speedsNear(workingSpeedMph: number) {
-  const speeds = [-10, -5, 0, 5].map((step) => workingSpeedMph + step);
-  const shift = Math.max(0, slowestSpeedMph - (speeds[0] ?? 0)) + Math.min(0, fastestSpeedMph - (speeds[3] ?? 0));
-  const shifted = speeds.map((speed) => speed + Math.ceil(Math.abs(shift) / 5) * 5 * Math.sign(shift));
-  return shifted.includes(workingSpeedMph) ? shifted : speeds.filter((speed) => speed > 0);
+  const all = speedsFromTo(5);
+  const [slowest, fastest] = [Math.min(...all), Math.max(...all)];
+  const around = [-20, -15, -10, -5, 0, 5, 10, 15, 20].map((step) => workingSpeedMph + step);
+  const driven = around.filter((speed) => speed === workingSpeedMph || (speed >= slowest && speed <= fastest));
+  const place = driven.indexOf(workingSpeedMph);
+  const from = Math.max(0, Math.min(place - 2, driven.length - 4));
+  return driven.slice(from, from + 4);
 }
 
 /** Other openings of this truck and material, weighed in the same season: the material is the same then. */

@@ -34,7 +34,10 @@ export async function receiveUpload(actor: TownActor, { kind, fileName, content 
     });
     if (known?.state === "accepted") return known.id;
     const checked = await uploadKinds[kind].check(actor, table.rows, transaction);
-    const problems: FileProblem[] = [...table.problems, ...checked.problems].slice(0, mostProblems);
+    // Errors first: what is cut off must never be what keeps the file out.
+    const problems: FileProblem[] = [...table.problems, ...checked.problems]
+      .sort((a, b) => Number(b.severity === "error") - Number(a.severity === "error"))
+      .slice(0, mostProblems);
     const outcome = { rowCount: table.rows.length, staged: checked.staged, problems };
     if (known) {
       await known.update({ ...outcome, createdAt: now() }, { transaction });

@@ -3,7 +3,8 @@ import type { Browser, BrowserContext, Page } from "playwright-core";
 import { afterAll, beforeAll, expect, inject, test } from "vitest";
 import { aCalibration } from "#tests/support/factories.ts";
 import { pdfText } from "#tests/support/pdf-text.ts";
-import { type Database, expectNoAxeFindings, signInOn, startBrowser, systemDatabase } from "./phone.ts";
+import { openBrowser } from "#tests/support/browser.ts";
+import { type Database, expectNoAxeFindings, signInOn, systemDatabase } from "./phone.ts";
 
 /* The fleet's pages in a browser, on the demo town of Fallowmere; Quillbrook is left to the walk through the whole job. */
 
@@ -17,7 +18,7 @@ let calibrationId: number;
 let foreign: { truckId: number; calibrationId: number };
 
 beforeAll(async () => {
-  [browser, db] = await Promise.all([startBrowser(), systemDatabase()]);
+  [browser, db] = await Promise.all([openBrowser(), systemDatabase()]);
   const [found] = await db.query<Truck[]>(
     `SELECT t.id, t.unit_number AS unit, t.working_speed_mph AS mph, t.working_setting AS setting,
             t.lanes_per_pass AS lanes, t.town_id AS townId, m.id AS saltId

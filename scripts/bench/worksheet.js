@@ -1,4 +1,3 @@
-/* global PerformanceObserver -- runs in the page */
 import { launchChromium } from "../chromium.js";
 
 const slowdown = 4;
@@ -30,7 +29,7 @@ async function firstLoadBytes(context, address) {
 async function watchTaps(page) {
   await page.evaluate(() => {
     window.taps = [];
-    new PerformanceObserver((list) => {
+    new window.PerformanceObserver((list) => {
       for (const { name, duration } of list.getEntries()) {
         if (["pointerdown", "pointerup", "click", "keydown"].includes(name)) window.taps.push(duration);
       }

@@ -123,7 +123,7 @@ async function visitAll(system: PassingSystem, subject: string | null, paths: re
 async function oneNumber(sql: string): Promise<number> {
   const connection = await connect(demo.migrator);
   try {
-    const [row] = (await connection.query(sql)) as { id: number }[];
+    const [row] = await connection.query<{ id: number }[]>(sql);
     return Number(row?.id);
   } finally {
     await connection.end();

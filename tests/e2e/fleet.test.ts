@@ -148,7 +148,7 @@ test("work entered makes the truck due at once, and the day can be found again",
   await page.getByLabel(/What was done/).fill("pump rebuilt");
   await page.getByRole("button", { name: "Enter the work" }).click();
   await page.waitForURL(`**/fleet/${truck.id}`);
-  expect(await page.getByText("pump rebuilt").count()).toBe(1);
+  await page.getByText("pump rebuilt").waitFor();
   await open(page, "/fleet/due");
   const row = page.getByRole("row").filter({ has: page.getByRole("link", { name: truck.unit, exact: true }) });
   expect(await row.innerText()).toMatch(/due/);

@@ -21,11 +21,15 @@ type Props = {
   /** Where the state is explained or mended. */
   to?: string;
   isReasonShown?: boolean;
+  /** The material meant, where the words around it do not say so. */
+  of?: string;
 };
 
 /** Whether a truck is to be weighed with a material: a shape, a word, and the reason where there is one. */
-export function DueMark({ due, to, isReasonShown = true }: Props) {
-  const reason = isReasonShown ? dueReasonWords(due) : "";
+export function DueMark({ due, to, isReasonShown = true, of }: Props) {
+  const reason = [of, isReasonShown ? dueReasonWords(due) : ""]
+    .filter((part) => part !== undefined && part !== "")
+    .join(", ");
   return (
     <span>
       <span className={`whitespace-nowrap ${looks[due.state]}`}>

@@ -14,7 +14,7 @@ const reasons: Record<DueReasonCode, (since: string) => string> = {
   "never-calibrated": () => "",
   "work-done": (since) => `worked on ${since}`,
   "new-material": (since) => `new material since ${since}`,
-  "new-season": () => "last weighed in an earlier season",
+  "new-season": () => "last weighed before this season",
 };
 
 /** Why it is due, in a few words; "" when the state says it all. */

@@ -6,7 +6,7 @@ import { formatInches, formatShortDay } from "#app/lib/format.ts";
 import { DueMark } from "./due-mark.tsx";
 import { controlWords, spreaderWords, workingPointWords } from "./fleet-words.ts";
 import { WorkingRateWords } from "./rate-words.tsx";
-import { dueOfTruck, mainLine } from "./register-view.ts";
+import { mainLine, urgentLine } from "./register-view.ts";
 
 type Working = {
   lbPerLaneMile: number;
@@ -57,7 +57,7 @@ function rowCells(truck: Truck) {
   const line = mainLine(truck);
   const others = truck.materials.length - 1;
   const inForce = line?.inForce ?? null;
-  const due = dueOfTruck(truck);
+  const urgent = urgentLine(truck);
   return {
     truck: <TextLink to={`/fleet/${truck.id}`}>{truck.unitNumber}</TextLink>,
     spreader: (
@@ -67,9 +67,9 @@ function rowCells(truck: Truck) {
         {truck.body !== "" && <span className="block text-note leading-snug text-gravel">{truck.body}</span>}
       </span>
     ),
-    at: workingPointWords(truck),
+    at: <span className="whitespace-nowrap">{workingPointWords(truck)}</span>,
     material: line ? `${line.materialName}${others > 0 ? ` and ${others} more` : ""}` : "–",
-    gate: inForce ? formatInches(inForce.gateOpeningIn) : "–",
+    gate: inForce ? <span className="whitespace-nowrap">{formatInches(inForce.gateOpeningIn)}</span> : "–",
     lays: inForce ? (
       <TextLink to={`/fleet/calibrations/${inForce.id}`} className="no-underline hover:underline">
         <WorkingRateWords working={inForce.working} />
@@ -77,7 +77,15 @@ function rowCells(truck: Truck) {
     ) : (
       "–"
     ),
-    weighed: inForce ? formatShortDay(inForce.testedOn) : "–",
-    due: truck.isInService ? due ? <DueMark due={due} /> : "–" : <span className="text-gravel">out of service</span>,
+    weighed: inForce ? <span className="whitespace-nowrap">{formatShortDay(inForce.testedOn)}</span> : "–",
+    due: <DueCell isInService={truck.isInService} urgent={urgent} isMain={urgent === line} />,
   };
+}
+
+/** The state of the material that is to be weighed first; named when it is not the one that the row shows. */
+function DueCell({ isInService, urgent, isMain }: { isInService: boolean; urgent: Line | undefined; isMain: boolean }) {
+  if (!isInService) return <span className="text-gravel">out of service</span>;
+  if (!urgent) return "–";
+  if (urgent.due.state === "in-date" || isMain) return <DueMark due={urgent.due} />;
+  return <DueMark due={urgent.due} of={urgent.materialName.toLowerCase()} />;
 }

@@ -49,6 +49,14 @@ export function dueOfTruck({ isInService, materials }: Pick<Truck, "isInService"
   return isInService ? mostUrgent(materials.map(({ due }) => due)) : null;
 }
 
+/** The material that is the most urgent of a truck's; undefined out of service and without one. */
+export function urgentLine<T extends Pick<Truck, "isInService"> & { materials: readonly Line[] }>(
+  truck: T,
+): T["materials"][number] | undefined {
+  const due = dueOfTruck(truck);
+  return due === null ? undefined : truck.materials.find((line) => line.due === due);
+}
+
 /** The salt calibration in force that speaks for the truck, else that of its first material. */
 export function mainLine<T extends { materials: readonly Line[] }>(truck: T): T["materials"][number] | undefined {
   return truck.materials.find(({ materialKind }) => materialKind === "salt") ?? truck.materials[0];

@@ -1,7 +1,16 @@
 import { administer } from "./mariadb.js";
 
 /** Tables whose rows are written once: the application may add to them and read them, nothing else. */
-const writeOnceTables = ["audit_entry", "edition", "edition_cell", "edition_row", "edition_member", "edition_place"];
+const writeOnceTables = [
+  "audit_entry",
+  "edition",
+  "edition_cell",
+  "edition_row",
+  "edition_member",
+  "edition_place",
+  "figure_version",
+  "figure_note",
+];
 const readOnlyTables = ["schema_migration"];
 
 /**

@@ -26,6 +26,10 @@ export class SeasonFigure extends Model<InferAttributes<SeasonFigure>, InferCrea
   declare sandLb: number;
   declare brineGal: CreationOptional<number | null>;
   declare materialCostCents: CreationOptional<number | null>;
+  declare laneMilesTreated: CreationOptional<number | null>;
+  declare wettedSaltLb: CreationOptional<number | null>;
+  declare stockUsedLb: CreationOptional<number | null>;
+  declare stockLoggedLb: CreationOptional<number | null>;
   declare uploadId: CreationOptional<number | null>;
   declare reviewNote: CreationOptional<string | null>;
   declare createdAt: Date;
@@ -51,6 +55,10 @@ SeasonFigure.init(
     sandLb: { type: DataTypes.DOUBLE, allowNull: false },
     brineGal: DataTypes.DOUBLE,
     materialCostCents: DataTypes.INTEGER.UNSIGNED,
+    laneMilesTreated: DataTypes.DOUBLE,
+    wettedSaltLb: DataTypes.DOUBLE,
+    stockUsedLb: DataTypes.DOUBLE,
+    stockLoggedLb: DataTypes.DOUBLE,
     uploadId: DataTypes.INTEGER.UNSIGNED,
     reviewNote: DataTypes.TEXT("medium"),
     createdAt: { type: DataTypes.DATE(3), allowNull: false },

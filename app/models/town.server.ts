@@ -8,6 +8,7 @@ export class Town extends Model<InferAttributes<Town>, InferCreationAttributes<T
   declare district: string;
   declare timeZone: CreationOptional<string>;
   declare reportsThroughTownId: CreationOptional<number | null>;
+  declare stationId: CreationOptional<number | null>;
   declare createdAt: Date;
 }
 
@@ -18,6 +19,7 @@ Town.init(
     district: { type: DataTypes.STRING(40), allowNull: false },
     timeZone: DataTypes.STRING(40),
     reportsThroughTownId: DataTypes.INTEGER.UNSIGNED,
+    stationId: DataTypes.INTEGER.UNSIGNED,
     createdAt: { type: DataTypes.DATE(3), allowNull: false },
   },
   { sequelize: db, tableName: "town" },

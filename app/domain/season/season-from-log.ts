@@ -1,5 +1,5 @@
 import { lbPerShortTon } from "../units.ts";
-import type { MaterialKind } from "./material.ts";
+import type { MaterialKind } from "#app/domain/calibration/band.ts";
 import type { StockBalance } from "./stock-balance.ts";
 import { eventCountOf, type StormLine } from "./storm.ts";
 

@@ -1,5 +1,5 @@
 import { kgToLb, lb, type Lb, shortTonsToLb } from "../units.ts";
-import type { MaterialKind } from "./material.ts";
+import type { MaterialKind } from "#app/domain/calibration/band.ts";
 
 /** The units in which piles and deliveries are written down. */
 export const stockUnits = ["ton", "lb", "kg", "tonne", "cubic-yard"] as const;

@@ -1,6 +1,3 @@
-/** What is spread: salt, a sand and salt mix, sand or grit, brine. */
-export type MaterialKind = "salt" | "mix" | "sand" | "brine";
-
 /** Salt in brine, by weight, where salt is least likely to freeze out: the eutectic. */
 const brineSaltShare = 0.233;
 /** Specific gravity of that brine at 15 °C. Source: Lange's Handbook of Chemistry, 15th ed., Table 5.13. */

@@ -16,7 +16,10 @@ export function refusalOf({ method, url, headers }, host) {
   if (path === null) return { status: 400, sentence: "This address is malformed." };
   if (headers.host !== host && path !== "/healthz")
     return { status: 421, sentence: "This address is not served here." };
-  // Without a length the application's own limits hold; with one there is no need to read the body at all.
+  // A body in chunks says its length only once it is there. Browsers never send one, so none need be read.
+  if (headers["transfer-encoding"] !== undefined) {
+    return { status: 411, sentence: "Send the length of what you send.", headers: { Connection: "close" } };
+  }
   if (Number(headers["content-length"] ?? 0) > bodyLimitBytes) {
     return { status: 413, sentence: "This is more than 6 MB. Send a smaller file.", headers: { Connection: "close" } };
   }

@@ -4,7 +4,7 @@ import { fileURLToPath, pathToFileURL } from "node:url";
 import { createRequestHandler } from "@react-router/express";
 import express from "express";
 import { refusalOf } from "./refusal.js";
-import { defaultHeaders, fillInHeaders, unreadableRequestAnswer } from "./response-headers.js";
+import { defaultHeaders, fillInHeaders, headersFor, unreadableRequestAnswer } from "./response-headers.js";
 import { projectFolder } from "./settings.js";
 import { stopOnRequest } from "./stop.js";
 
@@ -22,7 +22,7 @@ export function createServer({ build, origin }) {
   const app = express().disable("x-powered-by").set("trust proxy", "loopback");
 
   app.use((request, response, next) => {
-    fillInHeaders(response, headers);
+    fillInHeaders(response, headersFor(headers, request.path));
     const refusal = refusalOf(request, address.host);
     if (refusal !== null) return sendPlain(response.set(refusal.headers ?? {}), refusal.status, refusal.sentence);
     for (const name of Object.keys(request.headers)) {

@@ -32,10 +32,9 @@ export async function action({ params, request }: Route.ActionArgs) {
   return started ?? redirect("/login?problem=provider-away");
 }
 
-export const meta: Route.MetaFunction = () => [
-  { title: "Invitation · Commonweigh" },
-  { name: "referrer", content: "no-referrer" },
-];
+// The address holds a secret; the Referrer-Policy header keeps it on this site. A stricter policy would make browsers
+// send the form below as Origin: null, which is refused.
+export const meta: Route.MetaFunction = () => [{ title: "Invitation · Commonweigh" }];
 
 export default function Invitation({ loaderData: { name, role, townName } }: Route.ComponentProps) {
   const article = role === "analyst" ? "an" : "a";

@@ -10,6 +10,7 @@ import { Timetable } from "#app/components/ui/timetable.tsx";
 import { townActor } from "#app/context.ts";
 import { dueState } from "#app/domain/calibration/due.ts";
 import { now } from "#app/lib/clock.server.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatInches, formatShortDay } from "#app/lib/format.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { approveCalibrations, listFleet, type TruckView } from "#app/services/fleet.server.ts";
@@ -25,7 +26,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const ids = form
     .getAll("calibrationId")
     .flatMap((id) => (typeof id === "string" && /^[1-9]\d{0,9}$/.test(id) ? [Number(id)] : []));

@@ -12,6 +12,7 @@ import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { reasonWords } from "#app/domain/peers/cell.ts";
 import { indicators } from "#app/domain/peers/indicators.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam, seasonParam } from "#app/lib/params.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
@@ -43,7 +44,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const [season, number] = ["season", "number"].map((name) => form.get(name));
   const outcome = await requestEdition(
     networkActor(context),

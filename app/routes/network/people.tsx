@@ -13,6 +13,7 @@ import { Page } from "#app/components/layout/page.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { networkActor, roles } from "#app/context.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatShortDay } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
 import { countWords } from "#app/lib/words.ts";
@@ -50,7 +51,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 
 export async function action({ context, request }: Route.ActionArgs) {
   const actor = networkActor(context);
-  const form = await request.formData();
+  const form = await readForm(request);
   const intent = form.get("intent");
   if (intent === "shut-out" || intent === "readmit") {
     const userId = form.get("userId");

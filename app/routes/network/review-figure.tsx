@@ -11,6 +11,7 @@ import { Button } from "#app/components/ui/button.tsx";
 import { Notice } from "#app/components/ui/notice.tsx";
 import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
 import { acceptFigure, getFigureReview, returnFigure } from "#app/services/review.server.ts";
@@ -26,7 +27,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 export async function action({ context, params, request }: Route.ActionArgs) {
   const actor = networkActor(context);
   const figureId = idParam(params.figureId, "sent season");
-  const form = await request.formData();
+  const form = await readForm(request);
   const versionText = form.get("version");
   const version = idParam(typeof versionText === "string" ? versionText : "", "version of these figures");
   const noteText = form.get("note");

@@ -9,6 +9,7 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { notFound } from "#app/lib/errors.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
 import { seasonParam } from "#app/lib/params.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
@@ -26,7 +27,7 @@ export async function loader({ context, url }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const season = form.get("season");
   const startYear = seasonParam(typeof season === "string" ? season : "");
   await acceptCleanFigures(networkActor(context), startYear);

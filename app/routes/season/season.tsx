@@ -9,6 +9,7 @@ import { Notice } from "#app/components/ui/notice.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { townActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatDay, formatInstant, formatOneDecimal, formatWhole } from "#app/lib/format.ts";
 import { idParam, seasonParam } from "#app/lib/params.ts";
 import { getSeason, sendSeason } from "#app/services/season-figures.server.ts";
@@ -27,7 +28,7 @@ const refusals = {
 } as const;
 
 export async function action({ context, params, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const version = form.get("version");
   const outcome = await sendSeason(
     townActor(context),

@@ -1,4 +1,10 @@
-import { FormDataParseError, MaxFileSizeExceededError, parseFormData } from "@remix-run/form-data-parser";
+import {
+  FormDataParseError,
+  MaxFileSizeExceededError,
+  MaxHeaderSizeExceededError,
+  MaxPartsExceededError,
+  parseFormData,
+} from "@remix-run/form-data-parser";
 import { data, redirect, useNavigation } from "react-router";
 import { FileField } from "#app/components/forms/field.tsx";
 import { ErrorSummary } from "#app/components/forms/error-summary.tsx";
@@ -47,7 +53,11 @@ async function readForm(request: Request) {
         message: "This file is over 5 MB. Split it, or leave out what is not needed.",
       } as const;
     }
-    if (error instanceof FormDataParseError) {
+    if (
+      error instanceof FormDataParseError ||
+      error instanceof MaxHeaderSizeExceededError ||
+      error instanceof MaxPartsExceededError
+    ) {
       return {
         ok: false,
         status: 400,

@@ -15,6 +15,7 @@ import { Timetable } from "#app/components/ui/timetable.tsx";
 import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { indicators } from "#app/domain/peers/indicators.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatDay } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
@@ -41,7 +42,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 
 export async function action({ context, params, request }: Route.ActionArgs) {
   const workshopId = idParam(params.workshopId, "workshop");
-  const submission = parseWithZod(await request.formData(), { schema: BoardForm });
+  const submission = parseWithZod(await readForm(request), { schema: BoardForm });
   if (submission.status !== "success") return data(submission.reply(), { status: 400 });
   const { shows, clientRef, question } = submission.value;
   const [indicator = "", groupKey = ""] = shows.split("|");

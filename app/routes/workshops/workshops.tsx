@@ -15,6 +15,7 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { networkActor, personActor } from "#app/context.ts";
 import { isLocalDate, seasonLabel } from "#app/domain/dates.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatDay } from "#app/lib/format.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { listEditions } from "#app/services/editions.server.ts";
@@ -46,7 +47,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const submission = parseWithZod(await request.formData(), { schema: WorkshopForm });
+  const submission = parseWithZod(await readForm(request), { schema: WorkshopForm });
   if (submission.status !== "success") return data(submission.reply(), { status: 400 });
   const { editionId, ...input } = submission.value;
   const workshopId = await createWorkshop(networkActor(context), { ...input, editionId: Number(editionId) });

@@ -22,6 +22,8 @@ const Settings = z.object({
   SMTP_PORT: Port,
   MAIL_FROM: z.string().min(3),
   WORKER_TOKEN: Secret,
+  /** Of the daily-summaries service; without it weather comes by upload alone. */
+  WEATHER_URL: z.url().optional(),
   DEV_PAGES: z.enum(["0", "1"]).default("0"),
   LOG_LEVEL: z.enum(["silent", "error", "warn", "info", "debug"]).default("info"),
 });
@@ -59,6 +61,7 @@ function readSettings() {
     },
     smtp: { host: settings.SMTP_HOST, port: settings.SMTP_PORT, from: settings.MAIL_FROM },
     workerToken: settings.WORKER_TOKEN,
+    weatherUrl: settings.WEATHER_URL ?? null,
     devPages: settings.DEV_PAGES === "1",
     logLevel: settings.LOG_LEVEL,
   });

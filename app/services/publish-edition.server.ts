@@ -174,7 +174,7 @@ export async function publishQueuedEdition(payload: unknown, requestId: string):
       transaction,
     );
     if (!isAnnounced) return;
-    for (const { userId, ...to } of await allDirectors(transaction)) {
+    for (const { userId, ...to } of await allDirectors("edition-published", transaction)) {
       const address = `${env.publicOrigin}/peers?edition=${edition.id}`;
       const out = editionLetter({ ...to, season: seasonLabel(seasonStartYear), number, address });
       await queueMail(`edition:${edition.id}:${userId}`, out, transaction);

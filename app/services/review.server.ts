@@ -1,158 +1,135 @@
-import type { Transaction } from "sequelize";
 import type { NetworkActor } from "#app/context.ts";
-import { seasonLabel } from "#app/domain/dates.ts";
-import { seasonAcceptedLetter, seasonReturnedLetter } from "#app/emails/season.ts";
-import { now } from "#app/lib/clock.server.ts";
-import { inTransaction } from "#app/lib/db.server.ts";
-import { env } from "#app/lib/env.server.ts";
+import { doubtOf, heaviestFirst } from "#app/domain/season/doubt.ts";
+import { outlierFindings } from "#app/domain/season/outlier-findings.ts";
+import { seasonTotals } from "#app/domain/season/season-totals.ts";
 import { notFound } from "#app/lib/errors.ts";
 import { figureTown } from "#app/models/associations.server.ts";
 import { Season } from "#app/models/season.server.ts";
 import { SeasonFigure } from "#app/models/season-figure.server.ts";
 import { Town } from "#app/models/town.server.ts";
-import { recordAudit } from "./audit.server.ts";
-import { directorsOf } from "./mail-recipients.server.ts";
-import { queueMail } from "./outbox.server.ts";
-import { amountsOf, type FigureView, figureView } from "./season-figures.server.ts";
+import { type SeasonBasis, readSeasonBasis } from "./season-basis.server.ts";
+import {
+  amountsOf,
+  earlierFigures,
+  type FigureView,
+  figureView,
+  readSurroundings,
+  type Surroundings,
+} from "./season-figures.server.ts";
+import { type FigureHistory, figureHistory } from "./season-figures/history.server.ts";
+import { type FleetCoverage, fleetCoverage } from "./season-figures/fleet-coverage.server.ts";
 
 export type ReviewItem = { figure: FigureView; townName: string; doubts: number };
+/** Salt per lane mile of one season, for the town's own road. */
+export type SeasonPoint = { seasonStartYear: number; tonsPerLaneMile: number };
 
 export type ReviewQueue = {
   seasonStartYear: number;
   figuresDueOn: string;
   /** Sent, with something to look at; most doubtful first. */
   doubtful: ReviewItem[];
+  /** The most doubtful one's seasons, oldest first, itself last. */
+  firstSeasons: SeasonPoint[];
   /** Sent, and passed every check. */
   clean: ReviewItem[];
   acceptedCount: number;
-  returned: ReviewItem[];
+  returned: { figureId: number; townName: string }[];
   missingTowns: string[];
 };
 
-/** How doubtful a figure is: an error counts ten checks; a town's own history says how far off it is. */
-function doubtsOf(view: FigureView): number {
-  return view.findings.reduce((sum, finding) => sum + (finding.severity === "error" ? 10 : 1), 0);
+function saltRate(figure: SeasonFigure) {
+  return seasonTotals(amountsOf(figure)).saltLbPerLaneMile;
+}
+
+function seasonPoint(figure: SeasonFigure): SeasonPoint {
+  return {
+    seasonStartYear: figure.seasonStartYear,
+    tonsPerLaneMile: seasonTotals(amountsOf(figure)).saltTonsPerLaneMile,
+  };
+}
+
+/** A figure with all that speaks for and against it, also what only the coordinator can see: the other towns. */
+function reviewed(figure: SeasonFigure, earlier: readonly SeasonFigure[], around: Surroundings, rates: readonly number[]) {
+  const view = figureView(figure, earlier, around);
+  const findings = heaviestFirst([...view.findings, ...outlierFindings(saltRate(figure), rates)]);
+  return { ...view, findings };
 }
 
 /** What has been sent in for one season. @throws 404 when the season is not opened */
 export async function getReviewQueue(_actor: NetworkActor, seasonStartYear: number): Promise<ReviewQueue> {
   const [season, figures, towns] = await Promise.all([
     Season.findByPk(seasonStartYear),
-    SeasonFigure.findAll({ include: [figureTown], order: [["seasonStartYear", "ASC"]] }),
+    SeasonFigure.findAll({ where: { seasonStartYear } }),
     Town.findAll({ attributes: ["id", "name"], order: [["name", "ASC"]] }),
   ]);
   if (!season) throw notFound("season");
-  const ofSeason = figures.filter((figure) => figure.seasonStartYear === seasonStartYear);
-  const items = ofSeason.map((figure) => {
-    const earlier = figures.filter(
-      (other) => other.townId === figure.townId && other.seasonStartYear < seasonStartYear,
-    );
-    const view = figureView(figure, earlier);
-    return { figure: view, townName: figure.town?.name ?? "", doubts: doubtsOf(view) };
+  const sent = figures.filter((figure) => figure.state === "sent");
+  const sentTownIds = sent.map((figure) => figure.townId);
+  const [earlier, surroundings] = await Promise.all([
+    earlierFigures(sentTownIds, seasonStartYear),
+    readSurroundings(sentTownIds, seasonStartYear),
+  ]);
+  const nameOf = new Map(towns.map(({ id, name }) => [id, name]));
+  const rates = figures.filter(({ state }) => state === "sent" || state === "accepted").map(saltRate);
+  const items = sent.map((figure) => {
+    const own = earlier.filter((other) => other.townId === figure.townId);
+    const around = surroundings.get(figure.townId) ?? { basis: null, awssiByYear: new Map<number, number>() };
+    const view = reviewed(figure, own, around, rates);
+    const townName = nameOf.get(figure.townId) ?? "";
+    return { item: { figure: view, townName, doubts: doubtOf(view.findings) }, seasons: [...own, figure] };
   });
-  const sent = items.filter((item) => item.figure.state === "sent");
-  const reported = new Set(ofSeason.filter((figure) => figure.state !== "draft").map((figure) => figure.townId));
+  const doubtful = items
+    .filter(({ item }) => item.doubts > 0)
+    .sort((a, b) => b.item.doubts - a.item.doubts || a.item.townName.localeCompare(b.item.townName));
+  const reported = new Set(figures.filter((figure) => figure.state !== "draft").map((figure) => figure.townId));
   return {
     seasonStartYear,
     figuresDueOn: season.figuresDueOn,
-    doubtful: sent
-      .filter((item) => item.doubts > 0)
-      .sort((a, b) => b.doubts - a.doubts || a.townName.localeCompare(b.townName)),
-    clean: sent.filter((item) => item.doubts === 0).sort((a, b) => a.townName.localeCompare(b.townName)),
-    acceptedCount: items.filter((item) => item.figure.state === "accepted").length,
-    returned: items.filter((item) => item.figure.state === "returned"),
+    doubtful: doubtful.map(({ item }) => item),
+    firstSeasons: (doubtful[0]?.seasons ?? []).map(seasonPoint),
+    clean: items
+      .map(({ item }) => item)
+      .filter((item) => item.doubts === 0)
+      .sort((a, b) => a.townName.localeCompare(b.townName)),
+    acceptedCount: figures.filter((figure) => figure.state === "accepted").length,
+    returned: figures
+      .filter((figure) => figure.state === "returned")
+      .map((figure) => ({ figureId: figure.id, townName: nameOf.get(figure.townId) ?? "" })),
     missingTowns: towns.filter((town) => !reported.has(town.id)).map((town) => town.name),
   };
 }
 
-export type FigureReview = { figure: FigureView; townName: string; earlier: FigureView[] };
+export type FigureReview = {
+  figure: FigureView;
+  townName: string;
+  /** Oldest first. */
+  earlier: FigureView[];
+  basis: SeasonBasis;
+  fleet: FleetCoverage;
+  history: FigureHistory;
+};
 
 /** One sent figure beside the town's earlier seasons. Drafts are the town's own: 404, as for one that is not there. */
 export async function getFigureReview(_actor: NetworkActor, figureId: number): Promise<FigureReview> {
   const figure = await SeasonFigure.findByPk(figureId, { include: [figureTown] });
   if (!figure || figure.state === "draft") throw notFound("sent season");
-  const figures = await SeasonFigure.findAll({ where: { townId: figure.townId }, order: [["seasonStartYear", "ASC"]] });
-  const earlier = figures.filter((other) => other.seasonStartYear < figure.seasonStartYear);
-  const before = (year: number) => figures.filter((other) => other.seasonStartYear < year);
+  const { townId, seasonStartYear } = figure;
+  const [earlier, surroundings, basis, fleet, history, season] = await Promise.all([
+    earlierFigures([townId], seasonStartYear),
+    readSurroundings([townId], seasonStartYear),
+    readSeasonBasis(townId, seasonStartYear),
+    fleetCoverage(townId, seasonStartYear),
+    figureHistory(figureId),
+    SeasonFigure.findAll({ where: { seasonStartYear, state: ["sent", "accepted"] } }),
+  ]);
+  const around = surroundings.get(townId) ?? { basis: null, awssiByYear: new Map<number, number>() };
+  const before = (year: number) => earlier.filter((other) => other.seasonStartYear < year);
   return {
-    figure: figureView(figure, earlier),
+    figure: reviewed(figure, earlier, around, season.map(saltRate)),
     townName: figure.town?.name ?? "",
-    earlier: earlier.map((other) => figureView(other, before(other.seasonStartYear))),
+    earlier: earlier.map((other) => figureView(other, before(other.seasonStartYear), { ...around, basis: null })),
+    basis,
+    fleet,
+    history,
   };
-}
-
-async function settle(
-  actor: NetworkActor,
-  figureId: number,
-  version: number,
-  verdict: { state: "accepted" | "returned"; note: string | null },
-  transaction: Transaction,
-) {
-  const figure = await SeasonFigure.findByPk(figureId, {
-    include: [figureTown],
-    lock: { level: transaction.LOCK.UPDATE, of: SeasonFigure },
-    transaction,
-  });
-  if (!figure || figure.state === "draft") throw notFound("sent season");
-  if (figure.state !== "sent" || figure.version !== version) return { ok: false, reason: "changed-meanwhile" } as const;
-  const { state, note } = verdict;
-  await figure.update(
-    { state, reviewNote: note, reviewedAt: now(), reviewedById: actor.userId, version: version + 1 },
-    { transaction },
-  );
-  await recordAudit(
-    actor,
-    {
-      action: state === "accepted" ? "season-figure.accept" : "season-figure.return",
-      entity: "season_figure",
-      entityId: figure.id,
-      townId: figure.townId,
-      detail: { note, ...amountsOf(figure) },
-    },
-    transaction,
-  );
-  const occasion = {
-    townName: figure.town?.name ?? "",
-    season: seasonLabel(figure.seasonStartYear),
-    address: `${env.publicOrigin}/season/${figure.seasonStartYear}`,
-  };
-  for (const { userId, ...to } of await directorsOf(figure.townId, transaction)) {
-    const written =
-      note === null ? seasonAcceptedLetter({ ...to, ...occasion }) : seasonReturnedLetter({ ...to, ...occasion, note });
-    await queueMail(`season-${state}:${figure.id}:${figure.version}:${userId}`, written, transaction);
-  }
-  return { ok: true } as const;
-}
-
-/**
- * Accept a sent season as it is; it goes into the next edition.
- *
- * @param version - the version the coordinator looked at
- * @returns `{ ok: false }` when it was settled or changed meanwhile
- * @throws 404 when nothing was sent under that id
- */
-export async function acceptFigure(actor: NetworkActor, figureId: number, version: number) {
-  return inTransaction((transaction) =>
-    settle(actor, figureId, version, { state: "accepted", note: null }, transaction),
-  );
-}
-
-/** Send a season back with a question, which goes to the town by mail. Returns and throws as acceptFigure. */
-export async function returnFigure(actor: NetworkActor, figureId: number, version: number, note: string) {
-  return inTransaction((transaction) => settle(actor, figureId, version, { state: "returned", note }, transaction));
-}
-
-/**
- * Accept every sent season that passed all checks.
- *
- * @returns how many
- */
-export async function acceptCleanFigures(actor: NetworkActor, seasonStartYear: number): Promise<number> {
-  const { clean } = await getReviewQueue(actor, seasonStartYear);
-  let accepted = 0;
-  for (const { figure } of clean) {
-    const outcome = await acceptFigure(actor, figure.id, figure.version);
-    if (outcome.ok) accepted++;
-  }
-  return accepted;
 }

@@ -5,7 +5,7 @@ import { hasAcceptedTerms } from "./dataset.server.ts";
 import { type EditionSummary, listEditions } from "./editions.server.ts";
 import { listFleet } from "./fleet.server.ts";
 import { getReviewQueue } from "./review.server.ts";
-import { type FigureView, getSeason, workingSeason } from "./season-figures.server.ts";
+import { getSeasonState, type SeasonState, workingSeason } from "./season-figures.server.ts";
 import { listTokens } from "./tokens.server.ts";
 
 export type FleetLine = {
@@ -20,7 +20,7 @@ export type FleetLine = {
 
 export type TownToday = {
   today: string;
-  season: { seasonStartYear: number; figuresDueOn: string; figure: FigureView | null } | null;
+  season: SeasonState | null;
   readyCount: number;
   fleet: FleetLine[];
   edition: EditionSummary | null;
@@ -30,7 +30,7 @@ export type TownToday = {
 export async function getTownToday(actor: TownActor): Promise<TownToday> {
   const today = now().toISOString().slice(0, 10);
   const [startYear, trucks, editions] = await Promise.all([workingSeason(), listFleet(actor), listEditions()]);
-  const season = startYear === null ? null : await getSeason(actor, startYear);
+  const season = startYear === null ? null : await getSeasonState(actor, startYear);
   const fleet = trucks
     .filter((truck) => truck.isInService && truck.spreaderKind !== "liquid-tanks")
     .map((truck): FleetLine => {
@@ -50,11 +50,7 @@ export async function getTownToday(actor: TownActor): Promise<TownToday> {
   const ready = trucks.flatMap((truck) => truck.calibrations).filter(({ state }) => state === "ready");
   return {
     today,
-    season: season && {
-      seasonStartYear: season.seasonStartYear,
-      figuresDueOn: season.figuresDueOn,
-      figure: season.figure,
-    },
+    season,
     readyCount: ready.length,
     fleet,
     edition: editions[0] ?? null,

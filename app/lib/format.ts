@@ -65,3 +65,13 @@ export function formatShortDay(date: string): string {
 export function formatInstant(at: Date | string): string {
   return instant.format(typeof at === "string" ? new Date(at) : at);
 }
+
+/** A local time "2026-01-12 04:30" as "12 Jan 2026, 04:30". */
+export function formatLocalTime(time: string): string {
+  return `${formatShortDay(time.slice(0, 10))}, ${time.slice(11, 16)}`;
+}
+
+/** A share from 0 to 1 as a percentage to one decimal. */
+export function formatShareOneDecimal(share: number | null): string {
+  return share === null ? "–" : `${oneDecimal.format(share * 100)} %`;
+}

@@ -137,6 +137,12 @@ export async function workingSeason(): Promise<number | null> {
   return (over ?? seasons[0])?.startYear ?? null;
 }
 
+/** Every season the network has opened, newest first. */
+export async function getSeasonYears(): Promise<number[]> {
+  const seasons = await Season.findAll({ attributes: ["startYear"], order: [["startYear", "DESC"]] });
+  return seasons.map(({ startYear }) => startYear);
+}
+
 export type SeasonState = {
   seasonStartYear: number;
   figuresDueOn: string;

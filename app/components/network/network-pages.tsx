@@ -2,7 +2,9 @@ import { NavLink } from "react-router";
 
 const pages = [
   { label: "Overview", to: "/network" },
+  { label: "Seasons", to: "/network/seasons" },
   { label: "Review", to: "/network/review" },
+  { label: "Weather", to: "/network/stations" },
   { label: "Editions", to: "/network/editions" },
   { label: "People", to: "/network/people" },
   { label: "Mail", to: "/network/mail" },

@@ -1,12 +1,28 @@
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { seasonLabel } from "#app/domain/dates.ts";
 import type { SeasonAmounts, SeasonTotals } from "#app/domain/season/season-totals.ts";
-import { formatDollars, formatOneDecimal, formatShare, formatTons, formatWhole } from "#app/lib/format.ts";
+import {
+  formatDollars,
+  formatOneDecimal,
+  formatShare,
+  formatShareOneDecimal,
+  formatTons,
+  formatWhole,
+} from "#app/lib/format.ts";
 
-export type SeasonColumn = { seasonStartYear: number; amounts: SeasonAmounts; totals: SeasonTotals };
+export type SeasonColumn = {
+  seasonStartYear: number;
+  amounts: SeasonAmounts;
+  totals: SeasonTotals;
+  /** Left out where nothing but the amounts is known. */
+  liquidShare?: number | null;
+  unexplainedShare?: number | null;
+  awssiPoints?: number | null;
+};
 
 /** One line of the table: its name with the unit, and how to read it from a season. */
-const lines: readonly { label: string; read: (season: SeasonColumn) => string }[] = [
+type Line = { label: string; read: (season: SeasonColumn) => string };
+const lines: readonly Line[] = [
   { label: "Lane miles", read: ({ amounts }) => formatOneDecimal(amounts.laneMiles) },
   { label: "Events", read: ({ amounts }) => formatWhole(amounts.eventCount) },
   { label: "Salt, tons", read: ({ amounts }) => formatTons(amounts.saltLb) },
@@ -20,9 +36,17 @@ const lines: readonly { label: string; read: (season: SeasonColumn) => string }[
   { label: "Chloride per lane mile, lb", read: ({ totals }) => formatWhole(totals.chlorideLbPerLaneMile) },
   { label: "Cost per lane mile", read: ({ totals }) => formatDollars(totals.materialCostCentsPerLaneMile) },
 ];
+/** Those that rest on more than the amounts. */
+const furtherLines: readonly Line[] = [
+  { label: "Salt put down wetted or as brine", read: ({ liquidShare }) => formatShareOneDecimal(liquidShare ?? null) },
+  { label: "Stock unexplained", read: ({ unexplainedShare }) => formatShareOneDecimal(unexplainedShare ?? null) },
+  { label: "Winter index (AWSSI), points", read: ({ awssiPoints }) => formatWhole(awssiPoints ?? null) },
+];
 
 /** Seasons side by side, the one in question first. */
 export function SeasonTable({ seasons, caption }: { seasons: readonly SeasonColumn[]; caption: string }) {
+  const hasFurther = seasons.some(({ awssiPoints }) => awssiPoints !== undefined);
+  const shown = hasFurther ? [...lines, ...furtherLines] : lines;
   return (
     <div className="overflow-x-auto">
       <Timetable
@@ -36,7 +60,7 @@ export function SeasonTable({ seasons, caption }: { seasons: readonly SeasonColu
             isNumeric: true,
           })),
         ]}
-        rows={lines.map(({ label, read }) => ({
+        rows={shown.map(({ label, read }) => ({
           key: label,
           cells: {
             line: label,

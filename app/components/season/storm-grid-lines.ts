@@ -21,8 +21,8 @@ export function blankLine(ref: string): GridLine {
   return { ref, id: null, version: null, cells: {}, stored: null, errors: {}, isOutdated: false };
 }
 
-function storedLine({ id, version, cells }: StoredLine): GridLine {
-  return { ref: `stored-${id}`, id, version, cells, stored: cells, errors: {}, isOutdated: false };
+function storedLine({ id, version, cells }: StoredLine, ref: string): GridLine {
+  return { ref, id, version, cells, stored: cells, errors: {}, isOutdated: false };
 }
 
 function text(cells: Record<string, string>, column: string) {
@@ -53,7 +53,9 @@ export function mergeLines(
   const lines = stored.map((each) => {
     const own = changed.find((line) => line.id === each.id);
     // Its version stays the one it was typed over: the server then sees that somebody else was there.
-    return own ?? storedLine(each);
+    if (own) return own;
+    // A line keeps its name, so that the cursor stays in it when it has been stored.
+    return storedLine(each, typed.find((line) => line.id === each.id)?.ref ?? `stored-${each.id}`);
   });
   return withBlank([...lines, ...changed.filter(({ id }) => id === null)], newRef);
 }

@@ -16,7 +16,7 @@ export const severityCategoryNames: Record<SeverityCategory, string> = {
 };
 
 /** Fewer winters than this make no fifths worth the name. Our own choice. */
-const leastHistorySeasons = 20;
+export const leastHistorySeasons = 20;
 const cutShares = [0.2, 0.4, 0.6, 0.8] as const;
 
 /** Points at which a category ends, rising. */

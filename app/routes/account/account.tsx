@@ -1,4 +1,5 @@
-import { Form, redirect } from "react-router";
+import { Form, redirect, useNavigation } from "react-router";
+import { CheckField } from "#app/components/forms/check-field.tsx";
 import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { Button } from "#app/components/ui/button.tsx";
@@ -6,24 +7,36 @@ import { Timetable } from "#app/components/ui/timetable.tsx";
 import { personActor } from "#app/context.ts";
 import { readForm } from "#app/lib/form.ts";
 import { formatInstant } from "#app/lib/format.ts";
+import { mailOccasionWords } from "#app/domain/mail-occasions.ts";
 import { idParam } from "#app/lib/params.ts";
+import { listMailChoices, saveMailChoices } from "#app/services/mail-choices.server.ts";
 import { endOwnSession, listOwnSessions } from "#app/services/sessions.server.ts";
 import type { Route } from "./+types/account";
 
 export async function loader({ context }: Route.LoaderArgs) {
   const actor = personActor(context);
+  const [sessions, mailChoices] = await Promise.all([listOwnSessions(actor), listMailChoices(actor)]);
   return {
     name: actor.name,
     role: actor.role,
     townName: actor.kind === "town" ? actor.townName : null,
-    sessions: await listOwnSessions(actor),
+    sessions,
+    mailChoices,
   };
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
   const form = await readForm(request);
+  const actor = personActor(context);
+  if (form.get("intent") === "mail") {
+    await saveMailChoices(
+      actor,
+      form.getAll("occasion").filter((occasion) => typeof occasion === "string"),
+    );
+    return redirect("/account");
+  }
   const sessionId = form.get("sessionId");
-  await endOwnSession(personActor(context), idParam(typeof sessionId === "string" ? sessionId : "", "session"));
+  await endOwnSession(actor, idParam(typeof sessionId === "string" ? sessionId : "", "session"));
   return redirect("/account");
 }
 
@@ -35,7 +48,9 @@ function deviceWords(device: string) {
   return system ?? "another device";
 }
 
-export default function Account({ loaderData: { name, role, townName, sessions } }: Route.ComponentProps) {
+export default function Account({ loaderData }: Route.ComponentProps) {
+  const { name, role, townName, sessions, mailChoices } = loaderData;
+  const isSaving = useNavigation().formData?.get("intent") === "mail";
   return (
     <Page>
       <Answer>
@@ -46,6 +61,31 @@ export default function Account({ loaderData: { name, role, townName, sessions }
       <Form method="post" action="/logout" reloadDocument className="mt-6">
         <Button>Sign out</Button>
       </Form>
+      {mailChoices.length > 0 && (
+        <section>
+          <Heading>Mail you get</Heading>
+          <Form method="post">
+            <fieldset>
+              <legend>Write to me when</legend>
+              {mailChoices.map(({ occasion, isWanted }) => (
+                <CheckField
+                  key={occasion}
+                  id={`mail-${occasion}`}
+                  name="occasion"
+                  value={occasion}
+                  label={mailOccasionWords[occasion]}
+                  defaultChecked={isWanted}
+                />
+              ))}
+            </fieldset>
+            <div className="mt-3">
+              <Button variant="quiet" name="intent" value="mail" busy={isSaving && "Saving"}>
+                Save the choice
+              </Button>
+            </div>
+          </Form>
+        </section>
+      )}
       <Heading>Where you are signed in</Heading>
       <Timetable
         caption="Your open sessions, newest first"

@@ -1,7 +1,10 @@
 import { Form, redirect } from "react-router";
-import { NetworkPages } from "#app/components/network/network-pages.tsx";
 import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
+import { NetworkPages } from "#app/components/network/network-pages.tsx";
+import { ReviewEvidence } from "#app/components/network/review-evidence.tsx";
+import { draftedQuestion } from "#app/components/network/review-words.ts";
+import { SeasonSwitch } from "#app/components/season/season-switch.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import { EmptyState } from "#app/components/ui/empty-state.tsx";
 import { Queue } from "#app/components/ui/queue.tsx";
@@ -10,20 +13,23 @@ import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { notFound } from "#app/lib/errors.ts";
 import { readForm } from "#app/lib/form.ts";
-import { formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
+import { formatDay, formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
 import { seasonParam } from "#app/lib/params.ts";
-import { countWords, sentenceStart } from "#app/lib/words.ts";
-import { acceptCleanFigures, getReviewQueue, type ReviewItem } from "#app/services/review.server.ts";
-import { workingSeason } from "#app/services/season-figures.server.ts";
+import { countWords, listWords, sentenceStart } from "#app/lib/words.ts";
+import { getReviewQueue, type ReviewItem } from "#app/services/review.server.ts";
+import { acceptCleanFigures } from "#app/services/review-verdicts.server.ts";
+import { getSeasonYears, workingSeason } from "#app/services/season-figures.server.ts";
 import type { Route } from "./+types/review-queue";
 
 export const handle = { notForSharing: true };
 
 export async function loader({ context, url }: Route.LoaderArgs) {
+  const actor = networkActor(context);
   const asked = url.searchParams.get("season");
   const startYear = asked === null ? await workingSeason() : seasonParam(asked);
   if (startYear === null) throw notFound("season");
-  return { queue: await getReviewQueue(networkActor(context), startYear) };
+  const [queue, seasonStartYears] = await Promise.all([getReviewQueue(actor, startYear), getSeasonYears()]);
+  return { queue, seasonStartYears };
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
@@ -41,13 +47,39 @@ function queueItem({ figure, townName }: ReviewItem) {
     key: String(figure.id),
     name: townName,
     detail: `sent ${figure.sentAt === null ? "" : formatShortDay(figure.sentAt.slice(0, 10))}, ${formatOneDecimal(figure.amounts.laneMiles)} lane miles`,
-    why: figure.findings.map(({ message }) => message).join(" ") || "Passed every check.",
+    why: figure.findings
+      .slice(0, 2)
+      .map(({ message }) => message)
+      .join(" "),
     to: `/network/review/${figure.id}`,
   };
 }
 
-export default function ReviewQueuePage({ loaderData: { queue } }: Route.ComponentProps) {
-  const { doubtful, clean, seasonStartYear, acceptedCount, missingTowns } = queue;
+function items({ doubtful, firstSeasons }: Route.ComponentProps["loaderData"]["queue"]) {
+  return doubtful.map((item, position) => {
+    const row = queueItem(item);
+    if (position > 0) return row;
+    const { figure, townName } = item;
+    const [heaviest, ...others] = figure.findings;
+    return {
+      ...row,
+      why: heaviest?.message ?? "",
+      open: (
+        <ReviewEvidence
+          figureId={figure.id}
+          version={figure.version}
+          townName={townName}
+          seasons={firstSeasons}
+          others={others.map(({ message }) => message)}
+          draftedQuestion={draftedQuestion(figure.findings)}
+        />
+      ),
+    };
+  });
+}
+
+export default function ReviewQueuePage({ loaderData: { queue, seasonStartYears } }: Route.ComponentProps) {
+  const { doubtful, clean, seasonStartYear, acceptedCount, missingTowns, returned, figuresDueOn } = queue;
   const label = seasonLabel(seasonStartYear);
   const waiting = doubtful.length + clean.length;
   return (
@@ -57,11 +89,19 @@ export default function ReviewQueuePage({ loaderData: { queue } }: Route.Compone
           ? `Nothing of ${label} waits for review.`
           : doubtful.length === 0
             ? `${sentenceStart(countWords(clean.length, "season", "seasons"))} of ${label} passed every check.`
-            : `${sentenceStart(countWords(doubtful.length, "season", "seasons"))} of ${label} ${doubtful.length === 1 ? "needs" : "need"} a look. ${doubtful[0]?.townName ?? ""} is the most doubtful.`}
+            : `${sentenceStart(countWords(doubtful.length, "season", "seasons"))} of ${waiting} sent for ${label} ${doubtful.length === 1 ? "needs" : "need"} a look. ${doubtful[0]?.townName ?? ""} is the most doubtful.`}
       </Answer>
       <Method>
+        {clean.length > 0 && doubtful.length > 0 && (
+          <>
+            {sentenceStart(countWords(clean.length, "passed", "passed"))} every check and can be accepted together:{" "}
+            <TextLink to="#clean">look through them</TextLink>.{" "}
+          </>
+        )}
         {sentenceStart(countWords(acceptedCount, "town is", "towns are"))} accepted,{" "}
-        {countWords(missingTowns.length, "has", "have")} not sent. Most doubtful first.
+        {countWords(missingTowns.length, "has", "have")} not sent
+        {missingTowns.length > 0 && missingTowns.length <= 8 && ` (${listWords(missingTowns)})`}. Figures were due{" "}
+        {formatDay(figuresDueOn)}. Most doubtful first.
       </Method>
       <div className="mt-5">
         <NetworkPages />
@@ -69,9 +109,9 @@ export default function ReviewQueuePage({ loaderData: { queue } }: Route.Compone
       {waiting === 0 && (
         <EmptyState title="Seasons that are sent in stand here">Those with something to look at come first.</EmptyState>
       )}
-      {doubtful.length > 0 && <Queue items={doubtful.map(queueItem)} />}
+      {doubtful.length > 0 && <Queue items={items(queue)} />}
       {clean.length > 0 && (
-        <section>
+        <section id="clean">
           <Heading>Passed every check</Heading>
           <p className="max-w-method">
             {clean.map(({ figure, townName }, position) => (
@@ -89,6 +129,24 @@ export default function ReviewQueuePage({ loaderData: { queue } }: Route.Compone
           </Form>
         </section>
       )}
+      {returned.length > 0 && (
+        <section>
+          <Heading>Sent back, not in again</Heading>
+          <p className="max-w-method">
+            {returned.map(({ figureId, townName }, position) => (
+              <span key={figureId}>
+                {position > 0 && ", "}
+                <TextLink to={`/network/review/${figureId}`}>{townName}</TextLink>
+              </span>
+            ))}
+          </p>
+        </section>
+      )}
+      <SeasonSwitch
+        seasonStartYears={seasonStartYears}
+        current={seasonStartYear}
+        toOf={(year) => `/network/review?season=${year}`}
+      />
     </Page>
   );
 }

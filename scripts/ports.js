@@ -2,21 +2,21 @@ import { createServer } from "node:net";
 import { Failure } from "./failures.js";
 
 /**
- * The four ports of a running network: the application's, and the three that follow it.
+ * The five ports of a running network: the application's, and the four that follow it.
  *
  * @param {string | undefined} wanted the PORT setting; 4310 when not given
- * @returns {{ app: number, idp: number, mailPage: number, smtp: number }}
- * @throws {Failure} when PORT is no port number that leaves room for three more
- * @example portsFrom("5000") // { app: 5000, idp: 5001, mailPage: 5002, smtp: 5003 }
+ * @returns {{ app: number, idp: number, mailPage: number, smtp: number, weather: number }}
+ * @throws {Failure} when PORT is no port number that leaves room for four more
+ * @example portsFrom("5000") // { app: 5000, idp: 5001, mailPage: 5002, smtp: 5003, weather: 5004 }
  */
 export function portsFrom(wanted) {
   const app = wanted === undefined || wanted === "" ? 4310 : Number(wanted);
-  if (!Number.isInteger(app) || app < 1 || app > 65_532) {
+  if (!Number.isInteger(app) || app < 1 || app > 65_531) {
     throw new Failure(
-      `PORT is "${wanted}", which is no port. Give a whole number from 1024 to 65532: PORT=4400 npm start`,
+      `PORT is "${wanted}", which is no port. Give a whole number from 1024 to 65531: PORT=4400 npm start`,
     );
   }
-  return { app, idp: app + 1, mailPage: app + 2, smtp: app + 3 };
+  return { app, idp: app + 1, mailPage: app + 2, smtp: app + 3, weather: app + 4 };
 }
 
 /** A port on loopback that nobody uses at this moment. */
@@ -25,25 +25,25 @@ export async function freePort() {
 }
 
 /**
- * Four neighbouring free ports, for tests that run a network of their own beside another.
+ * Five neighbouring free ports, for tests that run a network of their own beside another.
  *
- * @returns {Promise<{ app: number, idp: number, mailPage: number, smtp: number }>}
+ * @returns {Promise<{ app: number, idp: number, mailPage: number, smtp: number, weather: number }>}
  */
 export async function freePorts() {
   for (let attempt = 0; attempt < 50; attempt += 1) {
     const first = await freePort();
-    if (first > 65_532) continue;
+    if (first > 65_531) continue;
     const ports = portsFrom(String(first));
     const taken = await takenPort(Object.values(ports));
     if (taken === null) return ports;
   }
-  throw new Failure("No four neighbouring ports are free on this machine. Stop a few programs, then try again.");
+  throw new Failure("No five neighbouring ports are free on this machine. Stop a few programs, then try again.");
 }
 
 /**
  * Refuse to go on while one of the ports belongs to another program.
  *
- * @param {{ app: number, idp: number, mailPage: number, smtp: number }} ports
+ * @param {{ app: number, idp: number, mailPage: number, smtp: number, weather: number }} ports
  * @throws {Failure} naming the port and the way round it
  */
 export async function assertPortsFree(ports) {

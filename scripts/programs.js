@@ -5,13 +5,13 @@ import { Failure } from "./failures.js";
 import { appEnvironment, plainEnvironment } from "./settings.js";
 
 /**
- * Start the four programs of a network beside its database, and wait until each of them really answers.
+ * Start the programs of a network beside its database, and wait until each of them really answers.
  *
  * @param {object} given
  * @param {string} given.root the checkout
  * @param {string} given.folder for logs, caught mail and the provider's state
  * @param {ReturnType<typeof import("./settings.js").loadSettings>} given.settings
- * @param {{ app: number, idp: number, mailPage: number, smtp: number }} given.ports
+ * @param {{ app: number, idp: number, mailPage: number, smtp: number, weather: number }} given.ports
  * @param {{ host: string, port: number }} given.mariadb
  * @param {string} given.database
  * @param {boolean} given.devPages
@@ -40,9 +40,13 @@ export async function startPrograms(given) {
     MAIL_FILE: join(folder, "mail.jsonl"),
     MAIL_PAGE_PORT: String(ports.mailPage),
   });
+  // The demo's stations are invented, so the public service could not know them.
+  const weather = hasDemoPeople
+    ? [start("weather service", "scripts/weather-fake.js", { WEATHER_PORT: String(ports.weather) })]
+    : [];
   const app = start("application", "scripts/server.js");
   const worker = start("worker", "scripts/worker.js");
-  const inStoppingOrder = [worker, app, mail, idp];
+  const inStoppingOrder = [worker, app, ...weather, mail, idp];
   const stop = () => stopPrograms(inStoppingOrder);
 
   try {
@@ -57,6 +61,7 @@ export async function startPrograms(given) {
           mail,
           async () => (await isOk(mailOrigin)) && (await smtpBanner(ports.smtp)).startsWith("220 "),
         ),
+        ...weather.map((program) => waitUntilAnswering(program, () => isListening(ports.weather))),
         waitUntilAnswering(app, () => isOk(`${origin}/readyz`)),
         // It says so itself, after the application has accepted its first turn.
         waitUntilAnswering(worker, ({ isReady }) => isReady, 60_000),
@@ -87,6 +92,13 @@ async function isOk(url) {
   const response = await fetch(url, { signal: AbortSignal.timeout(5_000), redirect: "error" });
   await response.arrayBuffer();
   return response.status === 200;
+}
+
+/** @param {number} port */
+async function isListening(port) {
+  const response = await fetch(`http://127.0.0.1:${port}/`, { signal: AbortSignal.timeout(5_000), redirect: "error" });
+  await response.arrayBuffer();
+  return response.status === 404;
 }
 
 async function getJson(url) {

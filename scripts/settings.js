@@ -45,13 +45,14 @@ export function loadSettings(folder) {
  *
  * @param {object} given
  * @param {ReturnType<typeof loadSettings>} given.settings
- * @param {{ app: number, idp: number, mailPage: number, smtp: number }} given.ports
+ * @param {{ app: number, idp: number, mailPage: number, smtp: number, weather: number }} given.ports
  * @param {{ host: string, port: number }} given.mariadb
  * @param {string} given.database
  * @param {boolean} given.devPages whether pages for developers are served
+ * @param {boolean} [given.hasDemoPeople] whether the demo's invented weather service is there to ask
  * @returns {Record<string, string>}
  */
-export function appEnvironment({ settings, ports, mariadb, database, devPages }) {
+export function appEnvironment({ settings, ports, mariadb, database, devPages, hasDemoPeople = false }) {
   return {
     NODE_ENV: "production",
     HOST: "127.0.0.1",
@@ -70,6 +71,7 @@ export function appEnvironment({ settings, ports, mariadb, database, devPages })
     MAIL_FROM: "Commonweigh <network@commonweigh.example>",
     WORKER_TOKEN: settings.workerToken,
     DEV_PAGES: devPages ? "1" : "0",
+    ...(hasDemoPeople ? { WEATHER_URL: `http://127.0.0.1:${ports.weather}/access/services/data/v1` } : {}),
   };
 }
 

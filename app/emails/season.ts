@@ -4,7 +4,12 @@ type To = { toName: string; toAddress: string };
 type Occasion = To & { townName: string; season: string; address: string };
 
 /** To everybody of every town, when the coordinator opens a season. */
-export function seasonOpenedLetter({ season, dueOn, address, ...to }: To & { season: string; dueOn: string; address: string }): Letter {
+export function seasonOpenedLetter({
+  season,
+  dueOn,
+  address,
+  ...to
+}: To & { season: string; dueOn: string; address: string }): Letter {
   return letter({
     ...to,
     subject: `${season} is open: figures are due ${dueOn}`,

@@ -1,4 +1,4 @@
-import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
+import { DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
 
 /** What the coordinator says about one field of a sent version. */

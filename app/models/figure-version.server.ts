@@ -1,4 +1,4 @@
-import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
+import { DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
 
 /** A town’s figures as they were sent, once for every time. Written once, never changed. */

@@ -1,4 +1,4 @@
-import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
+import { DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
 
 /** Whether a person wants the mail of an occasion. No row means yes. */

@@ -1,4 +1,4 @@
-import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
+import { DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
 
 /** What a town pays for a ton of a material in one season. */

@@ -18,10 +18,7 @@ export async function listMailChoices(actor: PersonActor): Promise<MailChoiceVie
 export async function saveMailChoices(actor: PersonActor, wanted: readonly string[]): Promise<void> {
   await inTransaction(async (transaction) => {
     for (const occasion of occasionsOf(actor.role)) {
-      await MailChoice.upsert(
-        { userId: actor.userId, occasion, isWanted: wanted.includes(occasion) },
-        { transaction },
-      );
+      await MailChoice.upsert({ userId: actor.userId, occasion, isWanted: wanted.includes(occasion) }, { transaction });
     }
   });
 }

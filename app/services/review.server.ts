@@ -49,7 +49,12 @@ function seasonPoint(figure: SeasonFigure): SeasonPoint {
 }
 
 /** A figure with all that speaks for and against it, also what only the coordinator can see: the other towns. */
-function reviewed(figure: SeasonFigure, earlier: readonly SeasonFigure[], around: Surroundings, rates: readonly number[]) {
+function reviewed(
+  figure: SeasonFigure,
+  earlier: readonly SeasonFigure[],
+  around: Surroundings,
+  rates: readonly number[],
+) {
   const view = figureView(figure, earlier, around);
   const findings = heaviestFirst([...view.findings, ...outlierFindings(saltRate(figure), rates)]);
   return { ...view, findings };

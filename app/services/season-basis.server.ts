@@ -2,14 +2,13 @@ import { QueryTypes } from "sequelize";
 import type { Finding } from "#app/domain/finding.ts";
 import type { MaterialKind } from "#app/domain/calibration/band.ts";
 import { laneMilesIn, type RoadClassLength } from "#app/domain/season/road-lengths.ts";
-import { type LogStorm, type MaterialUse, type SeasonDraft, seasonFromLog } from "#app/domain/season/season-from-log.ts";
 import {
-  type LogLine,
-  stockBalance,
-  stockFindings,
-  type StockKind,
-  type StockLine,
-} from "#app/domain/season/stock-balance.ts";
+  type LogStorm,
+  type MaterialUse,
+  type SeasonDraft,
+  seasonFromLog,
+} from "#app/domain/season/season-from-log.ts";
+import { type LogLine, stockBalance, stockFindings, type StockLine } from "#app/domain/season/stock-balance.ts";
 import { lbPerShortTon } from "#app/domain/units.ts";
 import { db } from "#app/lib/db.server.ts";
 

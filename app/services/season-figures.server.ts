@@ -4,6 +4,7 @@ import { seasonLabel } from "#app/domain/dates.ts";
 import type { Finding } from "#app/domain/finding.ts";
 import { liquidShare } from "#app/domain/season/brine.ts";
 import { heaviestFirst } from "#app/domain/season/doubt.ts";
+import { logFindings } from "#app/domain/season/log-findings.ts";
 import { seasonFindings } from "#app/domain/season/season-findings.ts";
 import { type SeasonAmounts, seasonTotals, type SeasonTotals } from "#app/domain/season/season-totals.ts";
 import { winterFindings } from "#app/domain/season/winter-findings.ts";
@@ -52,7 +53,7 @@ export type FigureView = {
 
 /** What a figure is held against besides itself. */
 export type Surroundings = {
-  basis: Pick<SeasonBasis, "findings"> | null;
+  basis: Pick<SeasonBasis, "findings" | "draft"> | null;
   awssiByYear: ReadonlyMap<number, number>;
 };
 
@@ -79,7 +80,7 @@ function findingsOf(figure: SeasonFigure, earlier: readonly SeasonFigure[], arou
   return heaviestFirst([
     ...found,
     ...winterFindings(winterOf(figure), earlier.map(winterOf)),
-    ...(around.basis?.findings ?? []),
+    ...(around.basis ? [...logFindings(amounts, around.basis.draft), ...around.basis.findings] : []),
   ]);
 }
 

@@ -176,7 +176,8 @@ export async function saveStorms(actor: TownActor, seasonStartYear: number, save
   const known = await getStormKnowledge(actor, seasonStartYear);
   for (const { entry } of saves) {
     if (entry.truckId !== null && !known.trucks.some(({ id }) => id === entry.truckId)) throw notFound("truck");
-    if (entry.used.some((line) => !known.materials.some(({ id }) => id === line.materialId))) throw notFound("material");
+    if (entry.used.some((line) => !known.materials.some(({ id }) => id === line.materialId)))
+      throw notFound("material");
   }
   return inTransaction(async (transaction) => {
     const refusal = await seasonRefusal(actor.townId, seasonStartYear, transaction);

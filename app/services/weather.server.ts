@@ -1,7 +1,12 @@
 import { QueryTypes } from "sequelize";
 import type { TownActor } from "#app/context.ts";
 import { seasonEnd, seasonStartYearOf } from "#app/domain/dates.ts";
-import { type CutPoints, historyPointsOf, type SeverityCategory, severityCategory } from "#app/domain/severity/severity-category.ts";
+import {
+  type CutPoints,
+  historyPointsOf,
+  type SeverityCategory,
+  severityCategory,
+} from "#app/domain/severity/severity-category.ts";
 import { severityQuality, type SeverityQuality } from "#app/domain/severity/severity-quality.ts";
 import type { WeatherDay } from "#app/domain/severity/weather-day.ts";
 import { type WinterCounts, winterCounts } from "#app/domain/severity/winter-counts.ts";
@@ -145,8 +150,7 @@ export async function stationWinter(station: Station, seasonStartYear: number): 
       severity,
       quality,
       // A winter that is still running, or has gaps, is not classed: it would be called mild for what is not there.
-      category:
-        severity.isOver && quality.isTotalSound ? severityCategory(severity.totalPoints, historyPoints) : null,
+      category: severity.isOver && quality.isTotalSound ? severityCategory(severity.totalPoints, historyPoints) : null,
       historyCount: others.length,
       buildUp: severityBuildUp(days, reachOf(seasonStartYear, days, today)),
       usual: usualBuildUp(

@@ -6,6 +6,7 @@ export type TownRow = {
   time_zone: string;
   reports_through_town_id: number | null;
   created_at: string;
+  station_id: number | null;
 };
 
 export type PersonRow = {
@@ -58,6 +59,10 @@ export type SeasonFigureRow = {
   sand_lb: number;
   brine_gal: number | null;
   material_cost_cents: number | null;
+  lane_miles_treated: number | null;
+  wetted_salt_lb: number | null;
+  stock_used_lb: number | null;
+  stock_logged_lb: number | null;
   upload_id: null;
   state: "sent" | "returned" | "accepted";
   created_at: string;
@@ -66,6 +71,47 @@ export type SeasonFigureRow = {
   reviewed_at: string | null;
   reviewed_by_id: number | null;
   review_note: string | null;
+};
+
+export type StormRow = {
+  id: number;
+  town_id: number;
+  season_start_year: number;
+  started_at: string;
+  ended_at: string;
+  kind: string;
+  pavement_temp_f: number;
+  passes: number;
+  lane_miles_treated: number;
+  hours: number;
+  created_by_id: number;
+  created_at: string;
+};
+
+export type StormMaterialRow = {
+  storm_id: number;
+  material_id: number;
+  used_lb: number | null;
+  used_gal: number | null;
+};
+
+export type StockEntryRow = {
+  id: number;
+  client_ref: string;
+  town_id: number;
+  season_start_year: number;
+  material_id: number;
+  kind: "opening" | "delivery" | "transfer-in" | "transfer-out" | "closing";
+  day: string;
+  quantity_lb: number;
+  typed_quantity: number;
+  typed_unit: "ton" | "cubic-yard";
+  lb_per_cubic_yard: number | null;
+  price_cents: number | null;
+  supplier: string;
+  upload_id: null;
+  created_by_id: number;
+  created_at: string;
 };
 
 export type CalibrationRow = {
@@ -114,8 +160,16 @@ export type Region = {
   user_account: PersonRow[];
   material: MaterialRow[];
   truck: TruckRow[];
-  season: { start_year: number; figures_due_on: string }[];
+  station: { id: number; code: string; name: string }[];
+  season: { start_year: number; figures_due_on: string; opens_on: string; closes_on: string | null }[];
   season_figure: SeasonFigureRow[];
+  figure_version: { figure_id: number; version: number; content: string; sent_at: string; sent_by_id: number }[];
+  figure_note: { figure_id: number; version: number; field: string; note: string }[];
+  road_class: { town_id: number; name: string; season_start_year: number; lane_miles: number }[];
+  material_price: { material_id: number; season_start_year: number; cents_per_ton: number }[];
+  storm: StormRow[];
+  storm_material: StormMaterialRow[];
+  stock_entry: StockEntryRow[];
   calibration: CalibrationRow[];
   calibration_count: CountRow[];
   calibration_catch: CatchRow[];
@@ -123,4 +177,5 @@ export type Region = {
   doubtful: { town: string; slip: string }[];
 };
 
+export const demoSeed: number;
 export function generateRegion(options?: { seed?: number }): Region;

@@ -1,13 +1,23 @@
-import { generateRegion } from "./generate.js";
+import { demoSeed, generateRegion } from "./generate.js";
+import { makeWeatherDays } from "./weather.js";
 
 // A table comes after those its rows point to.
 const tablesInOrder = [
+  "station",
+  "weather_day",
   "town",
   "user_account",
   "material",
   "truck",
   "season",
+  "material_price",
+  "road_class",
+  "storm",
+  "storm_material",
+  "stock_entry",
   "season_figure",
+  "figure_version",
+  "figure_note",
   "calibration",
   "calibration_count",
   "calibration_catch",
@@ -29,6 +39,7 @@ export async function loadDemo({ connection, issuer, now }) {
   const instant = now.toISOString().replace("T", " ").replace("Z", "");
   const rowsByTable = {
     ...region,
+    weather_day: makeWeatherDays(demoSeed),
     town: parentsFirst(region.town),
     user_account: region.user_account.map((row) => ({ ...row, issuer })),
     job: region.job.map((row) => ({ ...row, run_after: instant, created_at: instant })),

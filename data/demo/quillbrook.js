@@ -16,3 +16,15 @@ export const quillbrookTrucks = [
   { unit: "15", setting: 4, rates: { 2022: 405, 2024: 409, 2025: 412 } },
   { unit: "18", setting: 3, rates: { 2022: 449, 2023: 445, 2024: 441, 2025: 436, 2026: 431 } },
 ];
+
+/** What was used in 2025-26, as the season file to upload has it. The piles know; the storms come with their own file. */
+export const quillbrookLastSeason = {
+  lane_miles: 118,
+  event_count: 26,
+  salt_lb: 1_208_000,
+  mix_lb: 295_800,
+  mix_salt_share: 0.2,
+  sand_lb: 0,
+  brine_gal: null,
+  material_cost_cents: 4_849_000,
+};

@@ -1,6 +1,6 @@
 import { addDays, officeInstant } from "./calendar.js";
 import { mixCentsPerTon } from "./fleet.js";
-import { quillbrook } from "./quillbrook.js";
+import { quillbrook, quillbrookLastSeason } from "./quillbrook.js";
 import { createRandom } from "./random.js";
 
 /** Seasons with figures; the last of them is the one the walk-through closes. */
@@ -10,10 +10,16 @@ const lastYear = 2025;
 // Events of an ordinary town in each winter, and how the districts differ from it.
 const winterEvents = { 2021: 24, 2022: 21, 2023: 18, 2024: 28, 2025: 25 };
 const districtFactor = { "Upper Tarn": 1.04, "Lower Tarn": 0.86, Lakeside: 1.1, Ridge: 1.15 };
-const saltCentsPerTon = { 2021: 6050, 2022: 6500, 2023: 7100, 2024: 6900, 2025: 7250 };
+export const saltCentsPerTon = { 2021: 6050, 2022: 6500, 2023: 7100, 2024: 6900, 2025: 7250 };
 
+/** Past seasons are closed; the one being reported and the coming one are open, whatever the day of the demo. */
 export function makeSeasons() {
-  return [...seasonYears, 2026].map((year) => ({ start_year: year, figures_due_on: `${year + 1}-08-31` }));
+  return [...seasonYears, 2026].map((year) => ({
+    start_year: year,
+    figures_due_on: `${year + 1}-08-31`,
+    opens_on: `${year}-09-01`,
+    closes_on: year < lastYear ? `${year + 1}-12-31` : null,
+  }));
 }
 
 /** Two to four towns send nothing each season; another handful each time. */
@@ -29,33 +35,56 @@ function missingTowns(seed, towns) {
   );
 }
 
-/** What every town sent in for every season, most of it long accepted. The last season is still under review. */
-export function makeSeasonFigures(seed, { towns, people }) {
+/**
+ * What really happened in every town and season, before anybody wrote it down: the amounts that figures, storms and
+ * stock all come from. Quillbrook's last season is among them, which is not reported yet.
+ *
+ * `random` goes on where the amounts left off; `special` is what the last season's review has in store.
+ */
+export function makeTruths(seed, towns) {
   const missing = missingTowns(seed, towns);
   const review = lastSeasonReview(seed, towns);
+  return towns.flatMap((town) =>
+    seasonYears
+      .filter((year) => !missing.get(year)?.has(town.row.id))
+      .map((year) => {
+        const random = createRandom(seed, "season", town.row.name, year);
+        const isUnreported = year === lastYear && town.row.name === quillbrook;
+        const amounts = isUnreported ? quillbrookLastSeason : amountsOf(random, town, year);
+        return {
+          town,
+          year,
+          random,
+          amounts,
+          isUnreported,
+          special: year === lastYear ? review.get(town.row.name) : undefined,
+        };
+      }),
+  );
+}
+
+/** What every town sent in for every season, most of it long accepted. The last season is still under review. */
+export function makeSeasonFigures({ truths, people, books }) {
   const reviewer = people.find((person) => person.role === "coordinator");
   const rows = [];
-  for (const town of towns) {
+  for (const { town, year, random, amounts, isUnreported, special } of truths) {
+    if (isUnreported) continue;
     const senderTownId = town.row.reports_through_town_id ?? town.row.id;
     const sender = people.find((person) => person.role === "director" && person.town_id === senderTownId);
-    for (const year of seasonYears) {
-      if (missing.get(year)?.has(town.row.id)) continue;
-      if (year === lastYear && town.row.name === quillbrook) continue;
-      const random = createRandom(seed, "season", town.row.name, year);
-      const special = year === lastYear ? review.get(town.row.name) : undefined;
-      const amounts = amountsOf(random, town, year);
-      rows.push({
-        id: rows.length + 1,
-        town_id: town.row.id,
-        season_start_year: year,
-        version: 1,
-        ...amounts,
-        ...special?.change?.(amounts),
-        upload_id: null,
-        ...passage(random, year, { sender, reviewer, state: special?.state ?? "accepted" }),
-        review_note: special?.note ?? null,
-      });
-    }
+    const state = special?.state ?? "accepted";
+    const written = passage(random, year, { sender, reviewer, state });
+    rows.push({
+      id: rows.length + 1,
+      town_id: town.row.id,
+      season_start_year: year,
+      version: state === "sent" ? 2 : 3,
+      ...amounts,
+      ...special?.change?.(amounts),
+      ...books.get(`${town.row.id} ${year}`).extras,
+      upload_id: null,
+      ...written,
+      review_note: special?.note ?? null,
+    });
   }
   return rows;
 }
@@ -94,12 +123,12 @@ function amountsOf(random, town, year) {
   };
 }
 
-function tenths(tons) {
+export function tenths(tons) {
   return Math.round(tons * 10) / 10;
 }
 
 /** Tons to a tenth are whole multiples of 200 lb. */
-function pounds(tons) {
+export function pounds(tons) {
   return Math.round(tons * 10) * 200;
 }
 

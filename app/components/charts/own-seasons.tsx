@@ -15,7 +15,9 @@ const oneDecimal = new Intl.NumberFormat("en-US", { minimumFractionDigits: 1, ma
 export function OwnSeasons({ seasons, title, isDoubtful }: Props) {
   const most = Math.max(1e-9, ...seasons.map(({ value }) => value)) * 1.12;
   const x = (value: number) => lane.left + 9 + ((lane.width - 18) * value) / most;
-  const words = seasons.map(({ seasonStartYear, value }) => `${seasonLabel(seasonStartYear)} ${oneDecimal.format(value)}`);
+  const words = seasons.map(
+    ({ seasonStartYear, value }) => `${seasonLabel(seasonStartYear)} ${oneDecimal.format(value)}`,
+  );
   return (
     <figure className="max-w-100">
       <figcaption className="mb-1 font-semibold">{title}</figcaption>

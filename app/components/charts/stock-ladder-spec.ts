@@ -26,7 +26,7 @@ function signed(tons: number) {
  * @returns null when nothing was measured, moved or logged
  */
 export function stockLadder(materialName: string, balance: StockBalance): StockLadderSpec | null {
-  const tons = (weightLb: number) => lbToShortTons(weightLb);
+  const tons = (weightLb: number): number => lbToShortTons(weightLb);
   const opening = tons(balance.openingLb ?? 0);
   const received = tons(balance.receivedLb);
   const transfers = tons(balance.transferredInLb - balance.transferredOutLb);

@@ -83,7 +83,7 @@ export function StormGridRow({ line, place, number, columns, lineTo, onType, onK
           >
             {line.isOutdated &&
               "Somebody changed or removed this storm meanwhile. Undo to see what stands there now, then type again. "}
-            {problems.map(({ key, label, words }) => `${label}: ${words}`).join(" ")}
+            {problems.map(({ label, words }) => `${label}: ${words}`).join(" ")}
           </td>
         </tr>
       )}

@@ -9,6 +9,8 @@ const weights: Record<string, number> = {
   "unlike-winter": 3,
   "cost-per-ton": 3,
   "lane-miles-changed": 2,
+  "unlike-roads": 2,
+  "unlike-log": 2,
   "stock-unexplained": 2,
 };
 const errorWeight = 10;

@@ -25,7 +25,8 @@ function usDay(match: RegExpExecArray, seasonStartYear: number): LocalDate {
   const month = Number(match[1]);
   const typedYear = match[3];
   const inSeason = month >= 7 ? seasonStartYear : seasonStartYear + 1;
-  const year = typedYear === undefined ? inSeason : typedYear.length === 2 ? 2000 + Number(typedYear) : Number(typedYear);
+  const year =
+    typedYear === undefined ? inSeason : typedYear.length === 2 ? 2000 + Number(typedYear) : Number(typedYear);
   return `${year}-${String(month).padStart(2, "0")}-${String(match[2]).padStart(2, "0")}`;
 }
 

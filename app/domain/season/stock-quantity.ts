@@ -15,7 +15,11 @@ const kgPerTonne = 1000;
  * and sidewalk maintenance": 1.08 short tons a cubic yard of salt, 1.4 of clean sand, 1.37 of winter sand.
  * A pile's grain and moisture move this by a sixth and more, so the density used is kept beside the figure.
  */
-export const usualLbPerCubicYard: Record<Exclude<MaterialKind, "brine">, number> = { salt: 2160, sand: 2800, mix: 2740 };
+export const usualLbPerCubicYard: Record<Exclude<MaterialKind, "brine">, number> = {
+  salt: 2160,
+  sand: 2800,
+  mix: 2740,
+};
 
 /** Densities that a solid for the road can have, lb per cubic yard: outside them it is a slip of the pen. */
 export const possibleLbPerCubicYard = { min: 1000, max: 4500 };

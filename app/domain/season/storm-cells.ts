@@ -44,8 +44,7 @@ export type StormEntry = {
 };
 
 export type StormReading =
-  | { ok: true; entry: StormEntry; checks: Record<string, string> }
-  | { ok: false; errors: Record<string, string> };
+  { ok: true; entry: StormEntry; checks: Record<string, string> } | { ok: false; errors: Record<string, string> };
 
 const limits: Record<string, { what: string; max: number; isWhole?: boolean; min?: number }> = {
   pavementTempF: { what: "pavement temperature", min: -1000, max: 1000 },
@@ -98,7 +97,8 @@ export function readStormCells(cells: Cells, known: StormKnowledge): StormReadin
   const startedAt = time("startedAt", true);
   const endedAt = time("endedAt", false);
   const kind = readStormKind(text("kind"));
-  if (kind === null) errors.kind = "Say what it was: snow, light snow, freezing rain, sleet, frost, blowing snow, other.";
+  if (kind === null)
+    errors.kind = "Say what it was: snow, light snow, freezing rain, sleet, frost, blowing snow, other.";
   const [pavementTempF, passes, laneMilesTreated, hours] = ["pavementTempF", "passes", "laneMilesTreated", "hours"].map(
     (column) => {
       const limit = limits[column];
@@ -141,7 +141,9 @@ export function readStormCells(cells: Cells, known: StormKnowledge): StormReadin
   const usedLb = entry.used.reduce((sum, line) => sum + (line.usedLb ?? 0), 0);
   const findings = stormFindings({ ...entry, usedLb }, known.seasonStartYear);
   const byField = (severity: "error" | "check") =>
-    Object.fromEntries(findings.filter((one) => one.severity === severity).map(({ field, message }) => [field, message]));
+    Object.fromEntries(
+      findings.filter((one) => one.severity === severity).map(({ field, message }) => [field, message]),
+    );
   const wrong = byField("error");
   return Object.keys(wrong).length > 0 ? { ok: false, errors: wrong } : { ok: true, entry, checks: byField("check") };
 }

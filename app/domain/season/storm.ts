@@ -28,7 +28,10 @@ export function isStormKind(text: string): text is StormKind {
  * @example readStormKind(" Freezing Rain ") // "freezing-rain"
  */
 export function readStormKind(text: string): StormKind | null {
-  const tidy = text.trim().toLowerCase().replace(/[\s_-]+/g, "-");
+  const tidy = text
+    .trim()
+    .toLowerCase()
+    .replace(/[\s_-]+/g, "-");
   return isStormKind(tidy) ? tidy : null;
 }
 

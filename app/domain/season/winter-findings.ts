@@ -23,7 +23,10 @@ export function winterFindings(now: WinterSeason, earlier: readonly WinterSeason
   const factor = current / median(usual);
   if (factor <= doubtfulFactor && factor >= 1 / doubtfulFactor) return [];
   const points = Math.round(now.awssiPoints ?? 0).toLocaleString("en-US");
-  const words = factor > 1 ? `${factor < 9.5 ? factor.toFixed(1) : factor.toFixed(0)} times` : `only ${(100 * factor).toFixed(0)} % of`;
+  const words =
+    factor > 1
+      ? `${factor < 9.5 ? factor.toFixed(1) : factor.toFixed(0)} times`
+      : `only ${(100 * factor).toFixed(0)} % of`;
   const message = `For a winter of ${points} points the salt per lane mile is ${words} what its ${usual.length} earlier seasons would lead one to expect.`;
   return [{ code: "unlike-winter", severity: "check", field: "saltLb", message }];
 }

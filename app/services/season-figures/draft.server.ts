@@ -34,8 +34,14 @@ export async function saveDraft(
       if ((figure?.version ?? null) !== version) return { ok: false, refusal: changedMeanwhile };
       const before = figure && { ...amountsOf(figure), ...extrasOf(figure) };
       const saved = figure
-        ? await figure.update({ ...amounts, wettedSaltLb, uploadId: null, version: figure.version + 1 }, { transaction })
-        : await SeasonFigure.create({ ...where, ...amounts, wettedSaltLb, version: 1, createdAt: now() }, { transaction });
+        ? await figure.update(
+            { ...amounts, wettedSaltLb, uploadId: null, version: figure.version + 1 },
+            { transaction },
+          )
+        : await SeasonFigure.create(
+            { ...where, ...amounts, wettedSaltLb, version: 1, createdAt: now() },
+            { transaction },
+          );
       await recordAudit(
         actor,
         {

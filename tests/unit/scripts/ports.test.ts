@@ -2,12 +2,12 @@ import { createServer } from "node:net";
 import { expect, test } from "vitest";
 import { assertPortsFree, freePorts, portsFrom } from "#scripts/ports.js";
 
-test("without a setting the ports are 4310 to 4313, with one the others follow it", () => {
-  expect(portsFrom(undefined)).toEqual({ app: 4310, idp: 4311, mailPage: 4312, smtp: 4313 });
-  expect(portsFrom("5000")).toEqual({ app: 5000, idp: 5001, mailPage: 5002, smtp: 5003 });
+test("without a setting the ports are 4310 to 4314, with one the others follow it", () => {
+  expect(portsFrom(undefined)).toEqual({ app: 4310, idp: 4311, mailPage: 4312, smtp: 4313, weather: 4314 });
+  expect(portsFrom("5000")).toEqual({ app: 5000, idp: 5001, mailPage: 5002, smtp: 5003, weather: 5004 });
 });
 
-test.each(["80a", "0", "-1", "4310.5", "65533", "99999"])("PORT=%s is refused", (wanted) => {
+test.each(["80a", "0", "-1", "4310.5", "65532", "99999"])("PORT=%s is refused", (wanted) => {
   expect(() => portsFrom(wanted)).toThrow("which is no port");
 });
 

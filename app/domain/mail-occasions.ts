@@ -39,8 +39,3 @@ const byRole = {
 export function occasionsOf(role: keyof typeof byRole): readonly MailOccasion[] {
   return byRole[role];
 }
-
-/** Whether a text names an occasion. */
-export function isMailOccasion(text: string): text is MailOccasion {
-  return mailOccasions.some((occasion) => occasion === text);
-}

@@ -57,14 +57,19 @@ function paidCentsPerTon(stock: readonly StockRow[]) {
   return tons === 0 ? null : priced.reduce((sum, line) => sum + (line.priceCents ?? 0), 0) / tons;
 }
 
-function materialUse(row: MaterialRow, stock: readonly StockRow[], log: readonly LogRow[]): BasisMaterial {
+function materialUse(
+  row: MaterialRow,
+  stock: readonly StockRow[],
+  log: readonly LogRow[],
+  hasLog: boolean,
+): BasisMaterial {
   const lines = log.map(({ day, usedLb }): LogLine => ({ day, usedLb: usedLb ?? 0 }));
   return {
     id: row.id,
     name: row.name,
     kind: row.kind,
     saltShare: row.saltShare,
-    balance: stockBalance(stock, row.kind === "brine" ? [] : lines),
+    balance: stockBalance(stock, hasLog ? lines : null),
     loggedGal: log.reduce((sum, line) => sum + (line.usedGal ?? 0), 0),
     loggedAllLb: lines.reduce((sum, line) => sum + line.usedLb, 0),
     paidCentsPerTon: paidCentsPerTon(stock),
@@ -122,10 +127,10 @@ export async function readSeasonBases(
   const materialsOf = grouped(materials, (material) => material.townId);
   return new Map(
     townIds.map((townId) => {
-      const own = (materialsOf.get(townId) ?? []).map((row) =>
-        materialUse(row, stockOf.get(row.id) ?? [], logOf.get(row.id) ?? []),
-      );
       const ownStorms = stormsOf.get(townId) ?? [];
+      const own = (materialsOf.get(townId) ?? []).map((row) =>
+        materialUse(row, stockOf.get(row.id) ?? [], logOf.get(row.id) ?? [], ownStorms.length > 0),
+      );
       const laneMiles = laneMilesIn(roadsOf.get(townId) ?? [], seasonStartYear);
       return [
         townId,

@@ -7,11 +7,11 @@ import { env } from "#app/lib/env.server.ts";
 import { notFound } from "#app/lib/errors.ts";
 import { formatDay } from "#app/lib/format.ts";
 import { Season } from "#app/models/season.server.ts";
-import { SeasonFigure } from "#app/models/season-figure.server.ts";
 import { Town } from "#app/models/town.server.ts";
 import { recordAudit } from "./audit.server.ts";
 import { townPeopleBut } from "./mail-recipients.server.ts";
 import { queueMail } from "./outbox.server.ts";
+import { figureStates, townsDoneWith } from "./season-figures/states.server.ts";
 
 export type SeasonDates = { opensOn: string | null; figuresDueOn: string; closesOn: string | null };
 export type SeasonLine = SeasonDates & {
@@ -27,7 +27,7 @@ export type SeasonLine = SeasonDates & {
 export async function listSeasons(_actor: NetworkActor): Promise<SeasonLine[]> {
   const [seasons, figures, townCount] = await Promise.all([
     Season.findAll({ order: [["startYear", "DESC"]] }),
-    SeasonFigure.findAll({ attributes: ["seasonStartYear", "state"], raw: true }),
+    figureStates(),
     Town.count(),
   ]);
   return seasons.map(({ startYear, opensOn, figuresDueOn, closesOn }) => {
@@ -91,7 +91,7 @@ export async function changeSeason(actor: NetworkActor, startYear: number, dates
 }
 
 /** So many days before the figures are due, towns that have not sent them are reminded: once for each. */
-export const reminderDays = [21, 3] as const;
+const reminderDays = [21, 3] as const;
 
 /**
  * Queue the reminders that are due today.
@@ -107,17 +107,8 @@ export async function remindTowns(): Promise<number> {
     const stage = reminderDays.findLast((days) => dayCount <= days);
     if (stage === undefined || dayCount < 0) continue;
     count += await inTransaction(async (transaction) => {
-      const done = await SeasonFigure.findAll({
-        attributes: ["townId"],
-        where: { seasonStartYear: startYear, state: ["sent", "accepted"] },
-        raw: true,
-        transaction,
-      });
-      const to = await townPeopleBut(
-        done.map(({ townId }) => townId),
-        "season-reminder",
-        transaction,
-      );
+      const done = await townsDoneWith(startYear, transaction);
+      const to = await townPeopleBut(done, "season-reminder", transaction);
       for (const { userId, ...person } of to) {
         const letter = seasonReminderLetter({
           ...person,

@@ -8,7 +8,7 @@ import { Material } from "#app/models/material.server.ts";
 import { StockEntry } from "#app/models/stock-entry.server.ts";
 import { recordAudit } from "./audit.server.ts";
 import { type BasisMaterial, readSeasonBasis } from "./season-basis.server.ts";
-import { seasonRefusal } from "./season-open.server.ts";
+import { seasonRefusal } from "./season-figures/open.server.ts";
 
 export type StockEntryView = {
   id: number;

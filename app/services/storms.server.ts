@@ -11,7 +11,7 @@ import { Storm } from "#app/models/storm.server.ts";
 import { StormMaterial } from "#app/models/storm-material.server.ts";
 import { Truck } from "#app/models/truck.server.ts";
 import { recordAudit } from "./audit.server.ts";
-import { seasonRefusal } from "./season-open.server.ts";
+import { seasonRefusal } from "./season-figures/open.server.ts";
 
 export const stormsPerPage = 40;
 

@@ -3,7 +3,7 @@ import { lbToShortTons } from "#app/domain/units.ts";
 
 /** One rung: a pile, or what was added to it or taken from it. In short tons. */
 export type Rung = {
-  key: "opening" | "received" | "transfers" | "logged" | "unexplained" | "closing";
+  key: "opening" | "received" | "transfers" | "logged" | "unexplained" | "used" | "closing";
   label: string;
   fromTons: number;
   toTons: number;
@@ -30,7 +30,7 @@ export function stockLadder(materialName: string, balance: StockBalance): StockL
   const opening = tons(balance.openingLb ?? 0);
   const received = tons(balance.receivedLb);
   const transfers = tons(balance.transferredInLb - balance.transferredOutLb);
-  const logged = tons(balance.loggedLb);
+  const logged = tons(balance.loggedLb ?? 0);
   if (balance.openingLb === null && balance.closingLb === null && received === 0 && logged === 0) return null;
   const rungs: Rung[] = [];
   const add = (key: Rung["key"], label: string, from: number, to: number, words: string, tone: Rung["tone"]) =>
@@ -44,7 +44,7 @@ export function stockLadder(materialName: string, balance: StockBalance): StockL
     add("transfers", "transfers", afterReceived, available, signed(transfers), transfers > 0 ? "in" : "out");
   }
   const afterLogged = available - logged;
-  add("logged", "logged", available, afterLogged, signed(-logged), "out");
+  if (balance.loggedLb !== null) add("logged", "logged", available, afterLogged, signed(-logged), "out");
   if (balance.closingLb !== null) {
     const closing = tons(balance.closingLb);
     if (balance.unexplainedLb !== null) {
@@ -57,6 +57,9 @@ export function stockLadder(materialName: string, balance: StockBalance): StockL
         signed(-tons(balance.unexplainedLb)),
         isOver ? "over" : "out",
       );
+    }
+    if (balance.loggedLb === null && balance.usedLb !== null) {
+      add("used", "used, no log", available, closing, signed(-tons(balance.usedLb)), "out");
     }
     add("closing", "closing", 0, closing, oneDecimal.format(closing), "pile");
   }

@@ -25,7 +25,7 @@ export function StockPile({ pile: { name, balance, ladder } }: { pile: Pile }) {
   if (ladder === null) return null;
   const facts = [
     { name: "used", value: balance.usedLb === null ? "not known yet" : `${formatTons(balance.usedLb)} tons` },
-    { name: "logged", value: `${formatTons(balance.loggedLb)} tons` },
+    { name: "logged", value: balance.loggedLb === null ? "no storm yet" : `${formatTons(balance.loggedLb)} tons` },
     { name: "unexplained", value: balance.usedLb === null ? "–" : formatShareOneDecimal(balance.unexplainedShare) },
     ...(balance.openedOn === null ? [] : [{ name: "opened", value: formatShortDay(balance.openedOn) }]),
     ...(balance.closedOn === null ? [] : [{ name: "closed", value: formatShortDay(balance.closedOn) }]),

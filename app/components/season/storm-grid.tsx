@@ -99,7 +99,7 @@ export function StormGrid({ columns, stored, keepKey, saveTo, lineTo, onSaved, o
           <option key={kind} value={stormKindWords[kind]} />
         ))}
       </datalist>
-      <div className="overflow-x-auto pb-2">
+      <div className="relative overflow-x-auto pb-2">
         <table ref={table} className="border-collapse text-table">
           <caption className="pb-2 text-left text-note text-gravel">
             Enter and the arrows move, Ctrl+S saves. A block copied from a spreadsheet may be pasted into any cell.
@@ -142,33 +142,35 @@ export function StormGrid({ columns, stored, keepKey, saveTo, lineTo, onSaved, o
           </tbody>
         </table>
       </div>
-      <Dock
-        summaryId="storm-sheet-summary"
-        label="Lines to save"
-        summary={
-          saving.state === "done" && changedCount === 0 ? (
-            <b>{sentenceStart(countWords(saving.savedCount, "line is", "lines are"))} stored.</b>
-          ) : saving.state === "done" && saving.leftCount > 0 ? (
-            <b>
-              {sentenceStart(countWords(saving.savedCount, "line", "lines"))} stored,{" "}
-              {countWords(saving.leftCount, "needs", "need")} a look.
-            </b>
-          ) : changedCount === 0 ? (
-            "Everything typed is stored."
-          ) : (
-            <b>{sentenceStart(countWords(changedCount, "line is", "lines are"))} not stored yet.</b>
-          )
-        }
-      >
-        <Button
-          type="button"
-          onClick={() => void sheet.save()}
-          busy={saving.state === "saving" && `Storing ${countWords(saving.lineCount, "line", "lines")}`}
-          notYet={saving.state !== "saving" && changedCount === 0 && { reasonId: "storm-sheet-summary" }}
+      <div className="contents [&>section]:-mx-4 sm:[&>section]:-mx-8">
+        <Dock
+          summaryId="storm-sheet-summary"
+          label="Lines to save"
+          summary={
+            saving.state === "done" && changedCount === 0 ? (
+              <b>{sentenceStart(countWords(saving.savedCount, "line is", "lines are"))} stored.</b>
+            ) : saving.state === "done" && saving.leftCount > 0 ? (
+              <b>
+                {sentenceStart(countWords(saving.savedCount, "line", "lines"))} stored,{" "}
+                {countWords(saving.leftCount, "needs", "need")} a look.
+              </b>
+            ) : changedCount === 0 ? (
+              "Everything typed is stored."
+            ) : (
+              <b>{sentenceStart(countWords(changedCount, "line is", "lines are"))} not stored yet.</b>
+            )
+          }
         >
-          Save {changedCount === 0 ? "lines" : countWords(changedCount, "line", "lines")}
-        </Button>
-      </Dock>
+          <Button
+            type="button"
+            onClick={() => void sheet.save()}
+            busy={saving.state === "saving" && `Storing ${countWords(saving.lineCount, "line", "lines")}`}
+            notYet={saving.state !== "saving" && changedCount === 0 && { reasonId: "storm-sheet-summary" }}
+          >
+            Save {changedCount === 0 ? "lines" : countWords(changedCount, "line", "lines")}
+          </Button>
+        </Dock>
+      </div>
     </section>
   );
 }

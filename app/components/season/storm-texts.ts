@@ -19,16 +19,16 @@ export type GridColumn = {
 };
 
 const fixed: Record<(typeof stormColumns)[number] | (typeof stormEndColumns)[number], Omit<GridColumn, "key">> = {
-  startedAt: { label: "start", widthRem: 9.6 },
-  endedAt: { label: "end", widthRem: 9.6 },
-  kind: { label: "kind", widthRem: 7.6 },
-  pavementTempF: { label: "pavement", unit: "°F", widthRem: 5, isNumeric: true },
-  passes: { label: "passes", widthRem: 4, isNumeric: true },
-  laneMilesTreated: { label: "lane miles", widthRem: 5, isNumeric: true },
-  hours: { label: "hours", widthRem: 4, isNumeric: true },
+  startedAt: { label: "start", widthRem: 9 },
+  endedAt: { label: "end", widthRem: 9 },
+  kind: { label: "kind", widthRem: 7 },
+  pavementTempF: { label: "pavement", unit: "°F", widthRem: 4.6, isNumeric: true },
+  passes: { label: "passes", widthRem: 3.6, isNumeric: true },
+  laneMilesTreated: { label: "lane miles", widthRem: 4.6, isNumeric: true },
+  hours: { label: "hours", widthRem: 3.5, isNumeric: true },
   truck: { label: "truck", widthRem: 4 },
-  route: { label: "route", widthRem: 6 },
-  note: { label: "note", widthRem: 10 },
+  route: { label: "route", widthRem: 5.5 },
+  note: { label: "note", widthRem: 7 },
 };
 
 /** The columns of the grid and the form, a town's materials among them. */
@@ -39,7 +39,7 @@ export function gridColumns({ materials }: StormKnowledge): GridColumn[] {
       key: materialColumn(id),
       label: name.toLowerCase(),
       unit: kind === "brine" ? "gal" : "tons",
-      widthRem: 5,
+      widthRem: 4.6,
       isNumeric: true,
     })),
     ...stormEndColumns.map((key) => ({ key, ...fixed[key] })),

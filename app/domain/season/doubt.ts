@@ -2,8 +2,8 @@ import type { Finding } from "../finding.ts";
 
 /** How much each check weighs in the coordinator's queue. A choice of ours; what is not named weighs 1. */
 const weights: Record<string, number> = {
-  "unlike-all": 6,
-  "unlike-earlier": 5,
+  "unlike-earlier": 6,
+  "unlike-all": 5,
   "pile-grew": 5,
   "much-salt": 4,
   "unlike-winter": 3,

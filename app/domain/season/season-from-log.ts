@@ -91,7 +91,10 @@ export function seasonFromLog(
       : Math.round(costs.reduce<number>((sum, cost) => sum + (cost ?? 0), 0)),
     laneMilesTreated: treated.length === 0 ? null : treated.reduce((sum, miles) => sum + miles, 0),
     stockUsedLb: measured.length === 0 ? null : measured.reduce((sum, { balance }) => sum + (balance.usedLb ?? 0), 0),
-    stockLoggedLb: measured.length === 0 ? null : measured.reduce((sum, { balance }) => sum + balance.loggedLb, 0),
+    stockLoggedLb:
+      measured.length === 0 || measured.some(({ balance }) => balance.loggedLb === null)
+        ? null
+        : measured.reduce((sum, { balance }) => sum + (balance.loggedLb ?? 0), 0),
     fromPiles: measured.map(({ name }) => name),
     withoutPrice: solids.filter((material) => costCents(material) === null).map(({ name }) => name),
   };

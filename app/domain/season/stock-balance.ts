@@ -25,8 +25,8 @@ export type StockBalance = {
   closingLb: number | null;
   /** Opening + received + transfers in − transfers out − closing. */
   usedLb: number | null;
-  /** By the storm log, in the same days. */
-  loggedLb: number;
+  /** By the storm log, in the same days; null when no log is kept. */
+  loggedLb: number | null;
   unexplainedLb: number | null;
   /** Of what was used, below 0 when more was logged than used; null when nothing was used. */
   unexplainedShare: number | null;
@@ -56,14 +56,15 @@ function measured(lines: readonly StockLine[], kind: "opening" | "closing") {
  * the closing's day is left out and counted; those days themselves are in.
  *
  * @param lines - the material's stock entries of one season, any order, lb ≥ 0
- * @param log - the material's use by the storm log, any order, lb ≥ 0
- * @returns quantities in lb; used and unexplained are null until both an opening and a closing are measured
+ * @param log - the material's use by the storm log, any order, lb ≥ 0; null when the town keeps no log of the season
+ * @returns quantities in lb; used and unexplained are null until both an opening and a
+ *   closing are measured, unexplained also without a log
  *
  * Source: used = opening + received − closing, transfers counted; discrepancy = (used − logged) / used. Bookkeeping.
  * @example stockBalance([{ kind: "opening", day: "2025-10-01", quantityLb: 100 },
  *   { kind: "closing", day: "2026-04-30", quantityLb: 20 }], [{ day: "2026-01-02", usedLb: 72 }]).unexplainedShare // 0.1
  */
-export function stockBalance(lines: readonly StockLine[], log: readonly LogLine[]): StockBalance {
+export function stockBalance(lines: readonly StockLine[], log: readonly LogLine[] | null): StockBalance {
   const opening = measured(lines, "opening");
   const closing = measured(lines, "closing");
   const isIn = ({ day }: { day: LocalDate }) =>
@@ -74,12 +75,12 @@ export function stockBalance(lines: readonly StockLine[], log: readonly LogLine[
   const receivedLb = sumOf("delivery");
   const transferredInLb = sumOf("transfer-in");
   const transferredOutLb = sumOf("transfer-out");
-  const loggedLb = log.filter(isIn).reduce((sum, line) => sum + line.usedLb, 0);
+  const loggedLb = log === null ? null : log.filter(isIn).reduce((sum, line) => sum + line.usedLb, 0);
   const usedLb =
     opening.totalLb === null || closing.totalLb === null
       ? null
       : opening.totalLb + receivedLb + transferredInLb - transferredOutLb - closing.totalLb;
-  const unexplainedLb = usedLb === null ? null : usedLb - loggedLb;
+  const unexplainedLb = usedLb === null || loggedLb === null ? null : usedLb - loggedLb;
   return {
     openedOn: opening.day,
     closedOn: closing.day,
@@ -92,7 +93,7 @@ export function stockBalance(lines: readonly StockLine[], log: readonly LogLine[
     loggedLb,
     unexplainedLb,
     unexplainedShare: usedLb === null || unexplainedLb === null || usedLb <= 0 ? null : unexplainedLb / usedLb,
-    leftOutCount: [...moved, ...log].filter((line) => !isIn(line)).length,
+    leftOutCount: [...moved, ...(log ?? [])].filter((line) => !isIn(line)).length,
   };
 }
 
@@ -110,12 +111,13 @@ export function stockFindings(materialName: string, balance: StockBalance): Find
   const { usedLb, loggedLb, unexplainedShare, unexplainedLb } = balance;
   const check = (code: string, message: string): Finding => ({ code, severity: "check", field: "stock", message });
   const name = materialName.toLowerCase();
-  if (usedLb === null || unexplainedLb === null) return [];
+  if (usedLb === null) return [];
   if (usedLb < 0) {
     const message = `The pile of ${name} grew: the closing stock is ${tons(-usedLb)} tons above opening and received together. A delivery is probably missing.`;
     return [check("pile-grew", message)];
   }
-  if (unexplainedShare === null || Math.abs(unexplainedShare) <= flaggedUnexplainedShare) return [];
+  if (unexplainedShare === null || unexplainedLb === null || loggedLb === null) return [];
+  if (Math.abs(unexplainedShare) <= flaggedUnexplainedShare) return [];
   const percent = Math.abs(100 * unexplainedShare).toFixed(0);
   const words =
     unexplainedShare > 0

@@ -17,7 +17,7 @@ export const stormKindWords: Record<StormKind, string> = {
 };
 
 /** Whether a text names a kind of storm. */
-export function isStormKind(text: string): text is StormKind {
+function isStormKind(text: string): text is StormKind {
   return stormKinds.some((kind) => kind === text);
 }
 

@@ -23,7 +23,7 @@ import { formTexts } from "#app/lib/form-texts.ts";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
 import { getFigureReview } from "#app/services/review.server.ts";
-import { acceptFigure, askAboutFigure, returnFigure } from "#app/services/review-verdicts.server.ts";
+import { acceptFigure, askAboutFigure, returnFigure } from "#app/services/review/verdicts.server.ts";
 import type { Route } from "./+types/review-figure";
 
 export const handle = { notForSharing: true };

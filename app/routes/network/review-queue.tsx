@@ -17,7 +17,7 @@ import { formatDay, formatOneDecimal, formatShortDay } from "#app/lib/format.ts"
 import { seasonParam } from "#app/lib/params.ts";
 import { countWords, listWords, sentenceStart } from "#app/lib/words.ts";
 import { getReviewQueue, type ReviewItem } from "#app/services/review.server.ts";
-import { acceptCleanFigures } from "#app/services/review-verdicts.server.ts";
+import { acceptCleanFigures } from "#app/services/review/verdicts.server.ts";
 import { getSeasonYears, workingSeason } from "#app/services/season-figures.server.ts";
 import type { Route } from "./+types/review-queue";
 
@@ -89,7 +89,7 @@ export default function ReviewQueuePage({ loaderData: { queue, seasonStartYears 
           ? `Nothing of ${label} waits for review.`
           : doubtful.length === 0
             ? `${sentenceStart(countWords(clean.length, "season", "seasons"))} of ${label} passed every check.`
-            : `${sentenceStart(countWords(doubtful.length, "season", "seasons"))} of ${waiting} sent for ${label} ${doubtful.length === 1 ? "needs" : "need"} a look. ${doubtful[0]?.townName ?? ""} is the most doubtful.`}
+            : `${sentenceStart(countWords(doubtful.length, "of", "of"))} ${countWords(waiting, "season", "seasons")} sent for ${label} ${doubtful.length === 1 ? "needs" : "need"} a look. ${doubtful[0]?.townName ?? ""} is the most doubtful.`}
       </Answer>
       <Method>
         {clean.length > 0 && doubtful.length > 0 && (

@@ -98,7 +98,7 @@ export default function Stations({ loaderData, actionData }: Route.ComponentProp
       <Answer>
         {stations.length === 0
           ? "No weather station is known yet."
-          : `${sentenceStart(countWords(known.length, "station", "stations"))} of ${stations.length} ${known.length === 1 ? "has" : "have"} the weather of ${label}${unsound.length === 0 ? "." : `; ${listWords(unsound.map(({ name }) => name))} with too many days missing.`}`}
+          : `${known.length === stations.length ? "Every station has" : `${sentenceStart(countWords(known.length, "of", "of"))} ${countWords(stations.length, "station", "stations")} ${known.length === 1 ? "has" : "have"}`} the weather of ${label}${unsound.length === 0 ? "." : `; ${listWords(unsound.map(({ name }) => name))} with too many days missing.`}`}
       </Answer>
       <Method>
         Each town is held against the winter of one station. Missing days are counted and never filled in.

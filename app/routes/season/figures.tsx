@@ -130,6 +130,14 @@ export default function Figures({ loaderData, actionData }: Route.ComponentProps
       {/* The key makes the fields anew when they are filled from elsewhere. */}
       <KeptForm key={`${version ?? 0} ${isTaken}`} formKey="figures" ownerId={userId} method="post" action={figures}>
         <input type="hidden" name="version" value={version ?? ""} />
+        <div
+          aria-hidden="true"
+          className="hidden gap-x-8 pb-1 text-table font-semibold sm:grid sm:grid-cols-[minmax(0,20rem)_9rem_9rem]"
+        >
+          <span>as reported</span>
+          <span className="text-right">storms and stock</span>
+          <span className="text-right">{last?.label ?? "season before"}</span>
+        </div>
         <div className="border-t-2 border-line">
           {figureFormFields.map(({ name, label, ...rest }) => {
             const unit = "unit" in rest ? rest.unit : undefined;
@@ -187,9 +195,9 @@ function differs(typed: string | undefined, other: string) {
 function Beside({ head, value, isOther }: { head: string; value: string; isOther: boolean }) {
   return (
     <p className="text-table sm:text-right">
-      <span className="text-gravel sm:block">{head}</span>{" "}
+      <span className="text-gravel sm:sr-only">{head}</span>{" "}
       <span
-        className={`tabular-nums sm:flex sm:min-h-target sm:items-center sm:justify-end ${isOther ? "font-bold text-rust" : ""}`}
+        className={`tabular-nums sm:mt-7 sm:flex sm:min-h-target sm:items-center sm:justify-end ${isOther ? "font-bold text-rust" : ""}`}
       >
         {value === "" ? "–" : Number(value).toLocaleString("en-US")}
         {isOther && <span className="sr-only"> differs</span>}

@@ -154,8 +154,10 @@ export default function Roads({ loaderData, actionData }: Route.ComponentProps) 
         </div>
       </KeptForm>
       {lengths.length > 0 && (
-        <section>
-          <Heading>As it was written down</Heading>
+        <details className="group mt-8">
+          <summary className="flex min-h-target w-fit list-none items-center font-semibold text-spruce underline decoration-1 underline-offset-3 hover:decoration-2">
+            As it was written down, length by length
+          </summary>
           <Timetable
             caption="Lengths and the season from which they hold"
             isCaptionHidden
@@ -186,7 +188,7 @@ export default function Roads({ loaderData, actionData }: Route.ComponentProps) 
               },
             }))}
           />
-        </section>
+        </details>
       )}
     </Page>
   );

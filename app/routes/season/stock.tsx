@@ -77,7 +77,8 @@ function sentence({ piles, seasonStartYear }: Route.ComponentProps["loaderData"]
       : `The piles of ${label} are opened; measure them at the end, and what was used follows.`;
   }
   const { name, balance } = first;
-  const used = `${formatTons(balance.usedLb)} tons of ${name.toLowerCase()} left the pile in ${label}`;
+  const used = `In ${label}, ${formatTons(balance.usedLb)} tons of ${name.toLowerCase()} left the pile`;
+  if (balance.loggedLb === null) return `${used}; no storm is logged yet to explain them.`;
   if (balance.unexplainedShare === null) return `${used}.`;
   const logged = `the storm log explains all but ${formatShareOneDecimal(Math.abs(balance.unexplainedShare))}`;
   return balance.unexplainedShare >= 0

@@ -99,12 +99,14 @@ export default function Storms({ loaderData }: Route.ComponentProps) {
         <EmptyState title="Storms stand here">Nothing was logged in this season.</EmptyState>
       )}
       {log.lineCount === 0 && isOpen && (
-        <EmptyState
-          title="Storms stand here"
-          action={<ButtonLink to={`${storms}/new`}>Write down the first</ButtonLink>}
-        >
-          One line for a storm, or one for each truck in it. On a wide screen they can be typed or pasted as a sheet.
-        </EmptyState>
+        <div className={isAlive ? "md:hidden" : ""}>
+          <EmptyState
+            title="Storms stand here"
+            action={<ButtonLink to={`${storms}/new`}>Write down the first</ButtonLink>}
+          >
+            One line for a storm, or one for each truck in it. On a wide screen they can be typed or pasted as a sheet.
+          </EmptyState>
+        </div>
       )}
       {isOpen && isAlive && (
         <div className="hidden md:block">

@@ -4,7 +4,7 @@ import { now } from "#app/lib/clock.server.ts";
 import { inTransaction, isDuplicate } from "#app/lib/db.server.ts";
 import { SeasonFigure } from "#app/models/season-figure.server.ts";
 import { recordAudit } from "../audit.server.ts";
-import { seasonRefusal } from "../season-open.server.ts";
+import { seasonRefusal } from "./open.server.ts";
 import { amountsOf, extrasOf } from "../season-figures.server.ts";
 
 export type DraftSaved = { ok: true; version: number } | { ok: false; refusal: string };

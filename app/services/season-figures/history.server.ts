@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { type FigureField, figureFields } from "#app/domain/season/figure-fields.ts";
+import { type FigureField, figureFields, isFigureField } from "#app/domain/season/figure-fields.ts";
 import { FigureNote } from "#app/models/figure-note.server.ts";
 import { FigureQuestion } from "#app/models/figure-question.server.ts";
 import { FigureVersion } from "#app/models/figure-version.server.ts";
@@ -43,10 +43,6 @@ export type FigureHistory = {
   questions: QuestionView[];
 };
 
-function isField(text: string): text is FigureField {
-  return figureFields.some((field) => field === text);
-}
-
 function sentVersion({ version, sentAt, content }: FigureVersion): SentVersion {
   const known = Content.parse(content);
   return {
@@ -81,7 +77,7 @@ export async function figureHistory(figureId: number): Promise<FigureHistory> {
   return {
     versions: versions.map(sentVersion),
     notes: notes
-      .flatMap(({ version, field, note }) => (isField(field) ? [{ version, field, note }] : []))
+      .flatMap(({ version, field, note }) => (isFigureField(field) ? [{ version, field, note }] : []))
       .toSorted((a, b) => a.version - b.version || figureFields.indexOf(a.field) - figureFields.indexOf(b.field)),
     questions: questions.map(({ id, version, question, askedAt, answer, answeredAt }) => ({
       id,

@@ -11,11 +11,11 @@ import { figureTown } from "#app/models/associations.server.ts";
 import { FigureNote } from "#app/models/figure-note.server.ts";
 import { FigureQuestion } from "#app/models/figure-question.server.ts";
 import { SeasonFigure } from "#app/models/season-figure.server.ts";
-import { recordAudit } from "./audit.server.ts";
-import { directorsOf, peopleOf } from "./mail-recipients.server.ts";
-import { queueMail } from "./outbox.server.ts";
-import { getReviewQueue } from "./review.server.ts";
-import { amountsOf } from "./season-figures.server.ts";
+import { recordAudit } from "../audit.server.ts";
+import { directorsOf, peopleOf } from "../mail-recipients.server.ts";
+import { queueMail } from "../outbox.server.ts";
+import { getReviewQueue } from "../review.server.ts";
+import { amountsOf } from "../season-figures.server.ts";
 
 export type FieldNote = { field: FigureField; note: string };
 const changedMeanwhile = { ok: false, reason: "changed-meanwhile" } as const;

@@ -215,7 +215,7 @@ function pileEntries(random, { material, year, usedLb, isSlipped, priceFactor })
     ...deliveries,
     entry(
       "closing",
-      `${year + 1}-05-04`,
+      `${year + 1}-05-31`,
       closing,
       inYards ? { typed_quantity: yards, typed_unit: "cubic-yard", lb_per_cubic_yard: density } : {},
     ),

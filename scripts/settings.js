@@ -50,9 +50,18 @@ export function loadSettings(folder) {
  * @param {string} given.database
  * @param {boolean} given.devPages whether pages for developers are served
  * @param {boolean} [given.hasDemoPeople] whether the demo's invented weather service is there to ask
+ * @param {string} [given.logLevel]
  * @returns {Record<string, string>}
  */
-export function appEnvironment({ settings, ports, mariadb, database, devPages, hasDemoPeople = false }) {
+export function appEnvironment({
+  settings,
+  ports,
+  mariadb,
+  database,
+  devPages,
+  hasDemoPeople = false,
+  logLevel = "info",
+}) {
   return {
     NODE_ENV: "production",
     HOST: "127.0.0.1",
@@ -72,6 +81,7 @@ export function appEnvironment({ settings, ports, mariadb, database, devPages, h
     WORKER_TOKEN: settings.workerToken,
     DEV_PAGES: devPages ? "1" : "0",
     ...(hasDemoPeople ? { WEATHER_URL: `http://127.0.0.1:${ports.weather}/access/services/data/v1` } : {}),
+    LOG_LEVEL: logLevel,
   };
 }
 

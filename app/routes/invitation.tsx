@@ -3,7 +3,7 @@ import { Answer, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import type { Role } from "#app/context.ts";
-import { notFound } from "#app/lib/errors.ts";
+import { invitationGone } from "#app/lib/errors.ts";
 import { getInvitation } from "#app/services/accounts.server.ts";
 import { startSignIn } from "#app/services/sign-in.server.ts";
 import type { Route } from "./+types/invitation";
@@ -16,7 +16,7 @@ const duties: Record<Role, string> = {
 };
 
 function tokenParam(text: string) {
-  if (!/^[\w-]{43}$/.test(text)) throw notFound("open invitation");
+  if (!/^[\w-]{43}$/.test(text)) throw invitationGone();
   return text;
 }
 

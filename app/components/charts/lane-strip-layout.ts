@@ -59,7 +59,12 @@ export function layOutStrip(spec: LaneStripSpec, size: StripSize, widthPx: numbe
   const flag = parts.hasFlag && spec.own !== null ? layOutFlag(spec, spec.own, x, widthPx) : null;
   const band = layOutBand(spec, x, widthPx, labelPx, flag);
   const laneTop =
-    (flag === null ? 0 : 30) + (band === null ? (flag === null ? 2 : 0) : 18 * scale + (flag === null ? 4 : 0));
+    (flag === null ? 0 : 30) +
+    (band === null
+      ? flag === null
+        ? 2
+        : 0
+      : 18 * scale + (flag === null || isUnderCloth(band, flag, labelPx) ? 4 : 0));
   const laneBottom = laneTop + laneHeight;
   const base = { x, widthPx, scale, labelPx, laneTop, laneBottom, laneHeight, size };
   const plate = shown === null ? null : layOutPlate(spec, base, flag);
@@ -157,12 +162,14 @@ function layOutBand(spec: LaneStripSpec, x: Base["x"], widthPx: number, labelPx:
   return { x1, x2, label };
 }
 
-function layOutFlag(
-  spec: LaneStripSpec,
-  own: { value: number; label: string; note: string },
-  x: Base["x"],
-  widthPx: number,
-) {
+/** Whether the band's label stands below the cloth of our flag, so that it needs air above. */
+function isUnderCloth({ label }: NonNullable<StripLayout["band"]>, flag: FlagLayout, labelPx: number) {
+  const wide = textWidthPx(label.words, labelPx);
+  const left = label.x - { start: 0, middle: wide / 2, end: wide }[label.anchor];
+  return left < Math.max(flag.x, flag.flyX) && left + wide > Math.min(flag.x, flag.flyX);
+}
+
+function layOutFlag(spec: LaneStripSpec, own: NonNullable<LaneStripSpec["own"]>, x: Base["x"], widthPx: number) {
   const { from, to } = spec.axis;
   const label = own.label === "" ? figureWords(own.value, spec) : own.label;
   const words = own.value > to ? `${label} ›` : own.value < from ? `‹ ${label}` : label;
@@ -172,7 +179,8 @@ function layOutFlag(
   const isLeft = atX > flagTurnsAt * widthPx;
   const flyX = isLeft ? atX + 2 - flagPx : atX - 2 + flagPx;
   const room = isLeft ? flyX - 8 : widthPx - flyX - 8;
-  const note = own.note !== "" && textWidthPx(own.note, 14.4) <= room ? own.note : null;
+  const notes = [own.note, own.shortNote ?? ""].filter((words) => words !== "");
+  const note = notes.find((words) => textWidthPx(words, 14.4) <= room) ?? null;
   return { x: atX, flyX, isLeft, width: flagPx, words, note };
 }
 

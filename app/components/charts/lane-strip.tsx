@@ -90,7 +90,7 @@ function StripTable({ spec, title, tableNote, downloadTo, isTableOpen = false }:
       <p className="mt-2 mb-1 text-note text-gravel">
         {tableNote}{" "}
         {downloadTo !== undefined && (
-          <TextLink to={downloadTo} isDocument>
+          <TextLink to={downloadTo} isDocument className="print:hidden">
             Download these figures (CSV)
           </TextLink>
         )}
@@ -98,7 +98,7 @@ function StripTable({ spec, title, tableNote, downloadTo, isTableOpen = false }:
     );
   if (peers === null) return footnote;
   return (
-    <details open={isTableOpen} className="group -mt-11 print:mt-0">
+    <details open={isTableOpen} className="open-on-paper group -mt-11 print:mt-0">
       <summary className="relative -top-2.5 ml-auto flex min-h-target w-fit list-none items-center text-note font-semibold text-spruce underline decoration-1 underline-offset-3 hover:decoration-2 print:hidden">
         <span className="group-open:hidden">Table</span>
         <span className="hidden group-open:inline">Hide the table</span>

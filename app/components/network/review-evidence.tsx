@@ -1,4 +1,4 @@
-import { OwnSeasons } from "#app/components/charts/own-seasons.tsx";
+import { OwnSeasons } from "#app/components/season/own-seasons.tsx";
 import { TextArea } from "#app/components/forms/text-area.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
@@ -19,11 +19,7 @@ export function ReviewEvidence({ figureId, version, townName, seasons, others, d
   return (
     <div className="grid gap-x-10 gap-y-5 font-normal md:grid-cols-2">
       <div>
-        <OwnSeasons
-          title={`${townName}’s own seasons, tons of salt per lane mile`}
-          seasons={seasons.map(({ seasonStartYear, tonsPerLaneMile }) => ({ seasonStartYear, value: tonsPerLaneMile }))}
-          isDoubtful
-        />
+        <OwnSeasons title={`${townName}’s own seasons, tons of salt per lane mile`} seasons={seasons} isDoubtful />
         {others.length > 0 && <p className="mt-2 text-note text-gravel">Also: {others.join(" ")}</p>}
       </div>
       <Form method="post" action={`/network/review/${figureId}`} className="grid content-start gap-3">

@@ -13,12 +13,14 @@ export function SeasonSwitch({ seasonStartYears, current, toOf }: Props) {
   const others = seasonStartYears.filter((year) => year !== current);
   if (others.length === 0) return null;
   return (
-    <p className="mt-6 text-gravel">
+    <p className="mt-6 text-gravel print:hidden">
       Other seasons:{" "}
       {others.map((year, position) => (
         <span key={year}>
           {position > 0 && ", "}
-          <TextLink to={toOf(year)}>{seasonLabel(year)}</TextLink>
+          <TextLink to={toOf(year)} className="whitespace-nowrap">
+            {seasonLabel(year)}
+          </TextLink>
         </span>
       ))}
     </p>

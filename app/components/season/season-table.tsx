@@ -22,7 +22,8 @@ export type SeasonColumn = {
 
 /** One line of the table: its name with the unit, and how to read it from a season. */
 type Line = { label: string; read: (season: SeasonColumn) => string };
-const lines: readonly Line[] = [
+
+const reportedLines: readonly Line[] = [
   { label: "Lane miles", read: ({ amounts }) => formatOneDecimal(amounts.laneMiles) },
   { label: "Events", read: ({ amounts }) => formatWhole(amounts.eventCount) },
   { label: "Salt, tons", read: ({ amounts }) => formatTons(amounts.saltLb) },
@@ -31,11 +32,15 @@ const lines: readonly Line[] = [
   { label: "Sand and grit, tons", read: ({ amounts }) => formatTons(amounts.sandLb) },
   { label: "Brine, gallons", read: ({ amounts }) => formatWhole(amounts.brineGal) },
   { label: "Material cost", read: ({ amounts }) => formatDollars(amounts.materialCostCents) },
+];
+
+const workedOutLines: readonly Line[] = [
   { label: "Salt per lane mile, tons", read: ({ totals }) => formatOneDecimal(totals.saltTonsPerLaneMile) },
   { label: "Salt per lane mile and event, lb", read: ({ totals }) => formatWhole(totals.saltLbPerLaneMileEvent) },
   { label: "Chloride per lane mile, lb", read: ({ totals }) => formatWhole(totals.chlorideLbPerLaneMile) },
   { label: "Cost per lane mile", read: ({ totals }) => formatDollars(totals.materialCostCentsPerLaneMile) },
 ];
+
 /** Those that rest on more than the amounts. */
 const furtherLines: readonly Line[] = [
   { label: "Salt put down wetted or as brine", read: ({ liquidShare }) => formatShareOneDecimal(liquidShare ?? null) },
@@ -43,28 +48,29 @@ const furtherLines: readonly Line[] = [
   { label: "Winter index (AWSSI), points", read: ({ awssiPoints }) => formatWhole(awssiPoints ?? null) },
 ];
 
-/** Seasons side by side, the one in question first. */
+/** Seasons side by side, the one in question first: what was reported, then what is worked out from it. */
 export function SeasonTable({ seasons, caption }: { seasons: readonly SeasonColumn[]; caption: string }) {
+  const isSingle = seasons.length === 1;
   const hasFurther = seasons.some(({ awssiPoints }) => awssiPoints !== undefined);
-  const shown = hasFurther ? [...lines, ...furtherLines] : lines;
   return (
-    <div className="overflow-x-auto">
+    <div className={isSingle ? "max-w-measure" : ""}>
       <Timetable
         caption={caption}
-        isFolding={false}
+        onPhone={isSingle ? "keep" : "stack"}
         columns={[
-          { key: "line", label: "" },
+          { key: "line", label: "season" },
           ...seasons.map(({ seasonStartYear }) => ({
             key: String(seasonStartYear),
             label: seasonLabel(seasonStartYear),
             isNumeric: true,
           })),
         ]}
-        rows={shown.map(({ label, read }) => ({
-          key: label,
+        rows={[...reportedLines, ...workedOutLines, ...(hasFurther ? furtherLines : [])].map((line) => ({
+          key: line.label,
+          isPartStart: line === workedOutLines[0],
           cells: {
-            line: label,
-            ...Object.fromEntries(seasons.map((season) => [String(season.seasonStartYear), read(season)])),
+            line: line.label,
+            ...Object.fromEntries(seasons.map((season) => [String(season.seasonStartYear), line.read(season)])),
           },
         }))}
       />

@@ -28,9 +28,9 @@ export function seasonSentence({ seasonStartYear, figure }: Season): string {
 }
 
 /** How far the season is, and what happens next. */
-export function seasonStateWords({ figure, figuresDueOn, closesOn }: Season): string {
+export function seasonStateWords({ figure, figuresDueOn, closesOn }: Season, isLate: boolean): string {
   const closes = closesOn === null ? "" : ` The season closes ${formatDay(closesOn)}.`;
-  const due = `Figures are due ${formatDay(figuresDueOn)}.${closes}`;
+  const due = `Figures ${isLate ? "were" : "are"} due ${formatDay(figuresDueOn)}.${closes}`;
   if (!figure) return due;
   switch (figure.state) {
     case "draft":

@@ -56,7 +56,7 @@ export function StockPile({ pile: { name, balance, ladder } }: { pile: Pile }) {
         <Timetable
           caption={`${name}, step by step`}
           isCaptionHidden
-          isFolding={false}
+          onPhone="keep"
           columns={[
             { key: "step", label: "step" },
             { key: "tons", label: "tons", isNumeric: true },

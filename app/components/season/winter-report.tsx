@@ -96,7 +96,7 @@ export function WinterReport(props: Props) {
           <Timetable
             caption="Winter index of each season, newest first"
             isCaptionHidden
-            isFolding={false}
+            onPhone="keep"
             columns={[
               { key: "season", label: "season" },
               { key: "points", label: "points", isNumeric: true },
@@ -136,7 +136,7 @@ function CategoryTable({
       <Heading>How it is classed</Heading>
       <Timetable
         caption={`By the fifths of ${historyCount + 1} winters at the station`}
-        isFolding={false}
+        onPhone="keep"
         columns={[
           { key: "class", label: "class" },
           { key: "points", label: "points", isNumeric: true },
@@ -178,7 +178,7 @@ function CountTable({ counts }: { counts: WinterCounts }) {
       <Heading>Counted plainly</Heading>
       <Timetable
         caption="Days of the winter; our own counts"
-        isFolding={false}
+        onPhone="keep"
         columns={[
           { key: "kind", label: "days with" },
           { key: "days", label: "days", isNumeric: true },

@@ -87,9 +87,11 @@ export default function Fleet({ loaderData: { isDirector, today, trucks } }: Rou
         ) : over > 0 ? (
           <>
             <Over>
-              {sentenceStart(countWords(over, "truck", "trucks"))} of {salt.length}
+              {over === salt.length && over > 1
+                ? `All ${countWords(over, "salt truck", "salt trucks")}`
+                : `${sentenceStart(countWords(over, "", "").trim())} of ${countWords(salt.length, "salt truck", "salt trucks")}`}
             </Over>{" "}
-            {over === 1 ? "lays" : "lay"} more salt than the band at the working setting.
+            {over === 1 ? "lays" : "lay"} more than the band at the working setting.
           </>
         ) : (
           "No salt truck lays more than the band at its working setting."
@@ -112,13 +114,13 @@ export default function Fleet({ loaderData: { isDirector, today, trucks } }: Rou
         isCaptionHidden
         hasStickyHead
         columns={[
-          { key: "truck", label: "truck" },
-          { key: "spreader", label: "spreader" },
+          { key: "truck", label: "truck", foldPrefix: "Truck" },
+          { key: "spreader", label: "spreader", isWideOnly: true },
           { key: "material", label: "material" },
-          { key: "at", label: "working setting and speed" },
-          { key: "gate", label: "gate", unit: "in", isNumeric: true },
+          { key: "at", label: "working setting and speed", isWideOnly: true },
+          { key: "gate", label: "gate", unit: "in", isNumeric: true, isWideOnly: true },
           { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
-          { key: "weighed", label: "weighed", isNumeric: true },
+          { key: "weighed", label: "weighed" },
           { key: "due", label: "calibration" },
         ]}
         rows={lines.map(({ truck, materialName, inForce, due: state }) => ({
@@ -152,11 +154,11 @@ function ReadyCalibrations({ isDirector, ready }: { isDirector: boolean; ready: 
         caption="Calibrations that are weighed and not yet in force"
         isCaptionHidden
         columns={[
-          { key: "truck", label: "truck" },
+          { key: "truck", label: "truck", foldPrefix: "Truck" },
           { key: "material", label: "material" },
           { key: "gate", label: "gate", unit: "in", isNumeric: true },
           { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
-          { key: "weighed", label: "weighed", isNumeric: true },
+          { key: "weighed", label: "weighed" },
         ]}
         rows={ready.map(({ truck, calibration }) => ({
           key: String(calibration.id),

@@ -69,19 +69,23 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
     return () => clearInterval(timer);
   }, [isComputing, revalidate]);
   const label = preview && `${seasonLabel(preview.seasonStartYear)}, edition ${preview.nextNumber}`;
+  const out = editions.find(({ seasonStartYear }) => seasonStartYear === preview?.seasonStartYear) ?? null;
   return (
     <Page>
       <Answer>
         {isComputing
           ? "An edition is being computed."
-          : preview && preview.townCount > 0
-            ? `${label ?? ""} would show ${preview.shownCount} of ${preview.shownCount + preview.withheld.length} groups, from ${preview.townCount} contributors.`
-            : "There is nothing to publish yet."}
+          : out
+            ? `${seasonLabel(out.seasonStartYear)}, edition ${out.number} is out, from ${out.townCount} contributors.`
+            : preview && preview.townCount > 0
+              ? `${label ?? ""} would show ${preview.shownCount} of ${preview.shownCount + preview.withheld.length} groups, from ${preview.townCount} contributors.`
+              : "There is nothing to publish yet."}
       </Answer>
       <Method>
         An edition is computed once, frozen, and never changed.{" "}
-        {sentenceStart(countWords(waiting, "season waits", "seasons wait"))} for review and{" "}
-        {countWords(missing, "town has", "towns have")} not sent; they would not be in it.
+        {sentenceStart(countWords(waiting, "season waits", "seasons wait"))} for review
+        {waiting > 0 && " and would not be in the next one"};{" "}
+        {missing === 0 ? "no town is missing" : `${countWords(missing, "town has", "towns have")} not sent`}.
       </Method>
       <div className="mt-5">
         <NetworkPages />
@@ -99,6 +103,12 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
       )}
       {preview && preview.townCount > 0 && !isComputing && (
         <section>
+          <Heading>{out ? "The next edition" : "What it would hold"}</Heading>
+          {out && (
+            <p className="mb-3 max-w-method">
+              It would take the place of edition {out.number}; publish it once figures were accepted or corrected since.
+            </p>
+          )}
           <Facts
             facts={[
               { name: "contributors", value: preview.townCount },
@@ -116,7 +126,7 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
           <Form method="post" className="mt-4">
             <input type="hidden" name="season" value={preview.seasonStartYear} />
             <input type="hidden" name="number" value={preview.nextNumber} />
-            <Button>Publish {label}</Button>
+            <Button variant={out ? "quiet" : "primary"}>Publish {label}</Button>
           </Form>
           {preview.withheld.length > 0 && (
             <>
@@ -149,7 +159,7 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
             { key: "edition", label: "edition" },
             { key: "when", label: "published" },
             { key: "towns", label: "contributors", isNumeric: true },
-            { key: "hash", label: "checksum, first letters" },
+            { key: "hash", label: "checksum, first letters", isWideOnly: true },
           ]}
           rows={editions.map((edition) => ({
             key: String(edition.id),

@@ -1,5 +1,5 @@
 import { data, Form, redirect } from "react-router";
-import { OwnSeasons } from "#app/components/charts/own-seasons.tsx";
+import { OwnSeasons } from "#app/components/season/own-seasons.tsx";
 import { ErrorSummary } from "#app/components/forms/error-summary.tsx";
 import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
@@ -22,8 +22,10 @@ import { readForm } from "#app/lib/form.ts";
 import { formTexts } from "#app/lib/form-texts.ts";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
+import { countWords } from "#app/lib/words.ts";
 import { getFigureReview } from "#app/services/review.server.ts";
 import { acceptFigure, askAboutFigure, returnFigure } from "#app/services/review/verdicts.server.ts";
+import { workingSeason } from "#app/services/season-figures.server.ts";
 import type { Route } from "./+types/review-figure";
 
 export const handle = { notForSharing: true };
@@ -49,9 +51,9 @@ export async function action({ context, params, request }: Route.ActionArgs) {
         ? await askAboutFigure(actor, figureId, version, verdict.question)
         : await returnFigure(actor, figureId, version, verdict);
   if (outcome.ok) {
-    return redirect(
-      verdict.verdict === "ask" ? `/network/review/${figureId}` : `/network/review?season=${figure.seasonStartYear}`,
-    );
+    if (verdict.verdict === "ask") return redirect(`/network/review/${figureId}`);
+    const isWorking = figure.seasonStartYear === (await workingSeason());
+    return redirect(isWorking ? "/network/review" : `/network/review?season=${figure.seasonStartYear}`);
   }
   const refusal = "This season was settled or changed since you opened it. Nothing was done by this click.";
   return data({ errors: {}, refusal, values }, { status: 409 });
@@ -60,6 +62,11 @@ export async function action({ context, params, request }: Route.ActionArgs) {
 export const meta: Route.MetaFunction = ({ loaderData }) => [
   { title: `Review ${loaderData?.townName ?? ""} · Commonweigh` },
 ];
+
+function checkWords(findingCount: number) {
+  if (findingCount === 0) return "; it passed every check.";
+  return `: ${countWords(findingCount, "thing", "things")} to look at.`;
+}
 
 const stateWords = {
   draft: "",
@@ -71,15 +78,12 @@ const stateWords = {
 export default function ReviewFigure({ loaderData, actionData }: Route.ComponentProps) {
   const { figure, townName, earlier, basis, fleet, history } = loaderData;
   const label = seasonLabel(figure.seasonStartYear);
-  const [first] = figure.findings;
   const errors: Record<string, string> = actionData?.errors ?? {};
   const winter = figure.awssiPoints === null ? null : { points: figure.awssiPoints, category: null };
   return (
     <Page>
       <Answer>
-        {label} of {townName} {stateWords[figure.state]}
-        {figure.state === "sent" && (first ? `: ${first.message}` : ", and it passed every check.")}
-        {figure.state !== "sent" && "."}
+        {`${townName}’s ${label} ${stateWords[figure.state]}${figure.state === "sent" ? checkWords(figure.findings.length) : "."}`}
       </Answer>
       <Method>
         Sent {figure.sentAt === null ? "" : formatInstant(figure.sentAt)}. Beside it, the town’s own earlier seasons.
@@ -122,7 +126,7 @@ export default function ReviewFigure({ loaderData, actionData }: Route.Component
             title={`${townName}’s own seasons, tons of salt per lane mile`}
             seasons={[...earlier, figure].map(({ seasonStartYear, totals }) => ({
               seasonStartYear,
-              value: totals.saltTonsPerLaneMile,
+              tonsPerLaneMile: totals.saltTonsPerLaneMile,
             }))}
             isDoubtful={figure.findings.some(({ field }) => field === "saltLb")}
           />
@@ -181,7 +185,7 @@ function Decision({ loaderData, actionData }: Pick<Route.ComponentProps, "loader
           )}
           <div>
             <Button name="verdict" value="accept" variant={isDoubtful ? "quiet" : "primary"}>
-              {isDoubtful ? "Accept it as it is, with the reason" : "Accept it"}
+              {isDoubtful ? "Accept it as it is, with the reason" : "Accept it as it is"}
             </Button>
           </div>
         </Form>

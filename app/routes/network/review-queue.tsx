@@ -13,9 +13,9 @@ import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { notFound } from "#app/lib/errors.ts";
 import { readForm } from "#app/lib/form.ts";
-import { formatDay, formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
+import { formatDay, formatShortDay, formatWhole } from "#app/lib/format.ts";
 import { seasonParam } from "#app/lib/params.ts";
-import { countWords, listWords, sentenceStart } from "#app/lib/words.ts";
+import { countWords, listWords, missingWords, sentenceStart } from "#app/lib/words.ts";
 import { getReviewQueue, type ReviewItem } from "#app/services/review.server.ts";
 import { acceptCleanFigures } from "#app/services/review/verdicts.server.ts";
 import { getSeasonYears, workingSeason } from "#app/services/season-figures.server.ts";
@@ -46,7 +46,7 @@ function queueItem({ figure, townName }: ReviewItem) {
   return {
     key: String(figure.id),
     name: townName,
-    detail: `sent ${figure.sentAt === null ? "" : formatShortDay(figure.sentAt.slice(0, 10))}, ${formatOneDecimal(figure.amounts.laneMiles)} lane miles`,
+    detail: `sent ${figure.sentAt === null ? "" : formatShortDay(figure.sentAt.slice(0, 10))}, ${formatWhole(figure.amounts.laneMiles)} lane miles`,
     why: figure.findings
       .slice(0, 2)
       .map(({ message }) => message)
@@ -98,10 +98,9 @@ export default function ReviewQueuePage({ loaderData: { queue, seasonStartYears 
             <TextLink to="#clean">look through them</TextLink>.{" "}
           </>
         )}
-        {sentenceStart(countWords(acceptedCount, "town is", "towns are"))} accepted,{" "}
-        {countWords(missingTowns.length, "has", "have")} not sent
+        {sentenceStart(countWords(acceptedCount, "town is", "towns are"))} accepted, {missingWords(missingTowns.length)}
         {missingTowns.length > 0 && missingTowns.length <= 8 && ` (${listWords(missingTowns)})`}. Figures were due{" "}
-        {formatDay(figuresDueOn)}. Most doubtful first.
+        {formatDay(figuresDueOn)}. {doubtful.length > 1 && "Most doubtful first."}
       </Method>
       <div className="mt-5">
         <NetworkPages />

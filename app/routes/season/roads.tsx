@@ -79,7 +79,7 @@ export default function Roads({ loaderData, actionData }: Route.ComponentProps) 
         <div className="overflow-x-auto">
           <Timetable
             caption="Lane miles by class and season"
-            isFolding={false}
+            onPhone="keep"
             columns={[
               { key: "name", label: "class" },
               ...seasons.map(({ seasonStartYear }) => ({

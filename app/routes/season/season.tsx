@@ -17,6 +17,7 @@ import { WithMargin } from "#app/components/ui/side-by-side.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { townActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
+import { now } from "#app/lib/clock.server.ts";
 import { readForm } from "#app/lib/form.ts";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam, seasonParam } from "#app/lib/params.ts";
@@ -44,6 +45,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
       view.state === "known"
         ? { points: view.winter.severity.totalPoints, category: view.winter.category?.category ?? null }
         : null,
+    isLate: season.figuresDueOn < now().toISOString().slice(0, 10),
     isDirector: actor.role === "director",
   };
 }
@@ -81,7 +83,7 @@ export const meta: Route.MetaFunction = ({ params }) => [
 ];
 
 export default function SeasonPage({ loaderData, actionData }: Route.ComponentProps) {
-  const { season, history, fleet, winter, isDirector } = loaderData;
+  const { season, history, fleet, winter, isLate, isDirector } = loaderData;
   const { figure, otherSeasons, seasonStartYear, basis } = season;
   const label = seasonLabel(seasonStartYear);
   const isOpen = figure === null || figure.state === "draft" || figure.state === "returned";
@@ -89,7 +91,7 @@ export default function SeasonPage({ loaderData, actionData }: Route.ComponentPr
   return (
     <Page>
       <Answer>{seasonSentence(season)}</Answer>
-      <Method>{seasonStateWords(season)}</Method>
+      <Method>{seasonStateWords(season, isLate)}</Method>
       <SeasonPages seasonStartYear={seasonStartYear} />
       {actionData?.refusal != null && (
         <Notice tone="problem" title={actionData.refusal}>
@@ -132,14 +134,14 @@ export default function SeasonPage({ loaderData, actionData }: Route.ComponentPr
           margin={<SeasonRests seasonStartYear={seasonStartYear} basis={basis} fleet={fleet} winter={winter} />}
         >
           {isOpen && (
-            <div className="mb-6 flex flex-wrap items-center gap-x-5 gap-y-2">
+            <div className="mb-6 flex flex-wrap items-center gap-x-5 gap-y-2 print:hidden">
               {isDirector ? (
                 <Form method="post">
                   <input type="hidden" name="version" value={figure.version} />
                   <Button>Send {label} in</Button>
                 </Form>
               ) : (
-                <p className="font-semibold">The director looks these over and sends them in.</p>
+                <p>The director looks these over and sends them in.</p>
               )}
               <TextLink to={`/season/${seasonStartYear}/figures`} weight="bold">
                 Correct the figures

@@ -1,5 +1,5 @@
 import { data, Form, redirect } from "react-router";
-import { groupProblems, groupTitle, ProblemGroup } from "#app/components/season/problem-groups.tsx";
+import { groupKind, groupProblems, ProblemList } from "#app/components/season/problem-groups.tsx";
 import { SeasonTable } from "#app/components/season/season-table.tsx";
 import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
@@ -53,7 +53,8 @@ function answer(upload: Upload, errorCount: number, checkCount: number) {
   }
   const checks =
     checkCount === 0 ? "" : ` ${sentenceStart(countWords(checkCount, "thing", "things"))} to look at first.`;
-  return `All ${countWords(upload.rowCount, "row", "rows")} can be read: ${things}.${checks}`;
+  const rows = upload.rowCount === 1 ? "The row" : `All ${countWords(upload.rowCount, "row", "rows")}`;
+  return `${rows} can be read: ${things}.${checks}`;
 }
 
 function Holds({ upload }: { upload: Upload }) {
@@ -74,7 +75,7 @@ function Holds({ upload }: { upload: Upload }) {
     <Timetable
       caption="Calibrations as read from the file"
       columns={[
-        { key: "truck", label: "truck" },
+        { key: "truck", label: "truck", foldPrefix: "Truck" },
         { key: "material", label: "material" },
         { key: "day", label: "weighed" },
         { key: "gate", label: "gate", unit: "in", isNumeric: true },
@@ -127,16 +128,7 @@ export default function UploadPage({ loaderData: { upload }, actionData }: Route
           <SideBySide
             side={
               <>
-                <Kinds
-                  label="Problems by kind"
-                  kinds={groups.map(({ key, severity, problems }) => ({
-                    key,
-                    count: problems.length,
-                    to: `#${key}`,
-                    label: severity === "error" ? "to correct" : "to look at",
-                    detail: groupTitle(problems).replace(/^[^,]*, /, ""),
-                  }))}
-                />
+                <Kinds label="Problems by kind" kinds={groups.map(groupKind)} />
                 <p className="mt-3 text-note">
                   <TextLink to={`/uploads/${upload.id}/problems`} isDocument>
                     Download the list (CSV)
@@ -145,8 +137,8 @@ export default function UploadPage({ loaderData: { upload }, actionData }: Route
               </>
             }
           >
-            {groups.map(({ key, problems }) => (
-              <ProblemGroup key={key} id={key} problems={problems} />
+            {groups.map((group) => (
+              <ProblemList key={group.key} group={group} />
             ))}
           </SideBySide>
         )}
@@ -163,11 +155,15 @@ export default function UploadPage({ loaderData: { upload }, actionData }: Route
           summary={
             errors.length > 0 ? (
               <>
-                <b>{countWords(errors.length, "thing", "things")} to correct.</b> All rows go in together, or none do.
+                <b>{sentenceStart(countWords(errors.length, "thing", "things"))} to correct.</b>{" "}
+                <span className="max-sm:hidden">All rows go in together, or none do.</span>
               </>
             ) : (
               <>
-                <b>{countWords(upload.rowCount, "row", "rows")} ready.</b> All go in together, or none do.
+                <b>{sentenceStart(countWords(upload.rowCount, "row", "rows"))} ready.</b>{" "}
+                <span className="max-sm:hidden">
+                  {upload.rowCount === 1 ? "It counts once you accept." : "All go in together, or none do."}
+                </span>
               </>
             )
           }

@@ -17,7 +17,7 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { townActor } from "#app/context.ts";
 import { formatInstant } from "#app/lib/format.ts";
-import { countWords } from "#app/lib/words.ts";
+import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { isUploadKind, uploadKinds } from "#app/services/uploads/kinds.server.ts";
 import { listUploads } from "#app/services/uploads/read.server.ts";
 import { receiveUpload } from "#app/services/uploads/receive.server.ts";
@@ -78,6 +78,16 @@ export async function action({ context, request }: Route.ActionArgs) {
 
 export const meta: Route.MetaFunction = () => [{ title: "Uploads · Commonweigh" }];
 
+type Upload = Route.ComponentProps["loaderData"]["uploads"][number];
+
+/** A file that a later, accepted one of its kind has made good no longer waits for anybody. */
+function isWaiting(upload: Upload, uploads: readonly Upload[]) {
+  const isMadeGood = uploads.some(
+    (other) => other.kind === upload.kind && other.state === "accepted" && other.id > upload.id,
+  );
+  return upload.state === "checked" && !isMadeGood;
+}
+
 const stateWords = (state: "checked" | "accepted", errorCount: number) => {
   if (state === "accepted") return "accepted";
   return errorCount === 0 ? "ready to accept" : countWords(errorCount, "error", "errors");
@@ -86,13 +96,13 @@ const stateWords = (state: "checked" | "accepted", errorCount: number) => {
 export default function Uploads({ loaderData, actionData }: Route.ComponentProps) {
   const { kind, kinds, uploads, userId } = loaderData;
   const isSending = useNavigation().formMethod === "POST";
-  const open = uploads.filter(({ state }) => state === "checked").length;
+  const open = uploads.filter((upload) => isWaiting(upload, uploads)).length;
   return (
     <Page>
       <Answer>
         {open === 0
           ? "Upload a file: every row is checked, and nothing counts until you accept it."
-          : `${open === 1 ? "One file waits" : `${open} files wait`} for you to put right or accept.`}
+          : `${sentenceStart(countWords(open, "file waits", "files wait"))} for you to put right or accept.`}
       </Answer>
       <Method>A CSV file of at most 5 MB, as any spreadsheet saves it. The file is kept as it came.</Method>
       {actionData && (
@@ -139,8 +149,8 @@ export default function Uploads({ loaderData, actionData }: Route.ComponentProps
             isCaptionHidden
             columns={[
               { key: "file", label: "file" },
-              { key: "kind", label: "holds" },
-              { key: "rows", label: "rows", isNumeric: true },
+              { key: "kind", label: "holds", isWideOnly: true },
+              { key: "rows", label: "rows", isNumeric: true, isWideOnly: true },
               { key: "state", label: "state" },
               { key: "when", label: "received" },
             ]}

@@ -63,7 +63,7 @@ export default function Workshops({ loaderData, actionData }: Route.ComponentPro
     <Page>
       <Answer>
         {next
-          ? `${sentenceStart(countWords(workshops.length, "workshop is", "workshops are"))} on the calendar; the latest, “${next.title}”, on ${formatDay(next.heldOn)}.`
+          ? `${sentenceStart(countWords(workshops.length, "workshop is", "workshops are"))} on the calendar: ${workshops.length > 1 ? "the latest, " : ""}“${next.title}”, on ${formatDay(next.heldOn)}.`
           : "No workshop is on the calendar yet."}
       </Answer>
       <Method>
@@ -112,7 +112,7 @@ function NewWorkshop({ loaderData, actionData }: Pick<Route.ComponentProps, "loa
     lastResult: actionData,
     constraint: getZodConstraint(WorkshopForm),
     onValidate: ({ formData }) => parseWithZod(formData, { schema: WorkshopForm }),
-    shouldRevalidate: "onBlur",
+    shouldRevalidate: "onInput",
   });
   return (
     <section>
@@ -125,7 +125,7 @@ function NewWorkshop({ loaderData, actionData }: Pick<Route.ComponentProps, "loa
         className="grid gap-5"
       >
         <input type="hidden" name="clientRef" value={loaderData.clientRef} />
-        <TextField {...fieldWords(fields.title)} label="Title" maxLength={120} />
+        <TextField {...fieldWords(fields.title)} label="Title" isWide maxLength={120} />
         <TextField {...fieldWords(fields.heldOn)} type="date" label="Day" />
         <SelectField
           {...fieldWords(fields.editionId)}

@@ -88,12 +88,9 @@ async function checkCalibrations(
     Calibration.findAll({ where, attributes: ["truckId", "materialId", "testedOn", "gateOpeningIn"], transaction }),
   ]);
   return readCalibrationRows(rows, {
-    trucks: trucks.map(({ id, unitNumber, gateMaxIn, workingSetting }) => ({
-      id,
-      unitNumber,
-      gateMaxIn,
-      workingSetting,
-    })),
+    trucks: trucks
+      .map(({ id, unitNumber, gateMaxIn, workingSetting }) => ({ id, unitNumber, gateMaxIn, workingSetting }))
+      .sort((one, other) => one.unitNumber.localeCompare(other.unitNumber, "en", { numeric: true })),
     materials: materials.map(({ id, name }) => ({ id, name })),
     storedKeys: new Set(
       calibrations.map((stored) =>

@@ -17,7 +17,7 @@ export type GridLine = {
 export type StoredLine = { id: number; version: number; cells: Record<string, string> };
 
 /** A line nobody has written in yet. */
-export function blankLine(ref: string): GridLine {
+function blankLine(ref: string): GridLine {
   return { ref, id: null, version: null, cells: {}, stored: null, errors: {}, isOutdated: false };
 }
 
@@ -61,7 +61,7 @@ export function mergeLines(
 }
 
 /** The lines with a blank one at the end. */
-export function withBlank(lines: readonly GridLine[], newRef: () => string): GridLine[] {
+function withBlank(lines: readonly GridLine[], newRef: () => string): GridLine[] {
   const last = lines.at(-1);
   const hasBlank = last !== undefined && last.id === null && isBlankLine(last.cells);
   return hasBlank ? [...lines] : [...lines, blankLine(newRef())];

@@ -76,10 +76,10 @@ export default function Roads({ loaderData, actionData }: Route.ComponentProps) 
           Give each class the lane miles you treat: two lanes of a mile are two lane miles.
         </EmptyState>
       ) : (
-        <div className="overflow-x-auto">
+        <div>
           <Timetable
             caption="Lane miles by class and season"
-            onPhone="keep"
+            onPhone="stack"
             columns={[
               { key: "name", label: "class" },
               ...seasons.map(({ seasonStartYear }) => ({

@@ -1,3 +1,7 @@
+import type { DecimalMark } from "./readings.ts";
+import type { MeasureUnit } from "./upload/measure.ts";
+import type { DateOrder } from "./upload/read-day.ts";
+
 /** One thing wrong, or doubtful, in a file: where it is, what stands there, and what to do about it. */
 export type FileProblem = {
   /** Row as a spreadsheet counts, the heads being row 1; null when it concerns the whole file. */
@@ -12,7 +16,20 @@ export type FileProblem = {
 };
 
 /** One row of a file by column name. Every known column is there, blank when the file leaves it so. */
-export type FileRow = { row: number; cells: ReadonlyMap<string, string> };
+export type FileRow = {
+  row: number;
+  cells: ReadonlyMap<string, string>;
+  /** How its file is written; a decimal point, the month first and the columns' own units unless it says otherwise. */
+  style?: RowStyle;
+};
+
+/** How a file is written, the same for all its rows. */
+export type RowStyle = {
+  decimalMark: DecimalMark;
+  dateOrder: DateOrder;
+  /** Units of columns that are in another one than their template's. */
+  units: ReadonlyMap<string, MeasureUnit>;
+};
 
 /** A cell's text, trimmed; "" when the column is missing. */
 export function cellText({ cells }: FileRow, column: string): string {

@@ -1,11 +1,16 @@
 /** A number read from what somebody typed, or why it was not taken. */
 export type Reading = { ok: true; value: number } | { ok: false; code: "blank" | "not-a-number" | "ambiguous" };
 
+/** Which mark stands before the decimals. */
+export type DecimalMark = "point" | "comma";
+
 /** A double keeps fifteen decimal digits for certain; a sixteenth would be stored as something else than was typed. */
 const mostSignificantDigits = 15;
 
 const plainNumber = /^[+-]?(?:\d+\.?\d*|\.\d+)$/;
 const groupedNumber = /^[+-]?[1-9]\d{0,2}(?:,\d{3})+(?:\.\d*)?$/;
+const commaNumber = /^[+-]?(?:\d+,?\d*|,\d+)$/;
+const commaGroupedNumber = /^[+-]?[1-9]\d{0,2}(?:(?:\.\d{3})+|(?: \d{3})+)(?:,\d*)?$/;
 /** Digits in an order that another country would read as another number. */
 const digitsAndMarks = /^[+-]?\d[\d.,' ]*$/;
 
@@ -34,19 +39,24 @@ function significantDigits(text: string) {
 /**
  * The number that was typed: the only way in which a typed or uploaded number enters the program.
  *
- * Taken: a sign, digits, a decimal point, commas between groups of three; blanks around it, also fixed ones.
- * Refused as ambiguous: a decimal comma, points or blanks between groups. Refused as no number: letters, units,
- * exponents, digits of other scripts, more than fifteen significant digits.
+ * Taken: a sign, digits, a decimal point, commas between groups of three; blanks around it, also fixed ones. Where the
+ * file's decimal mark is a comma: a decimal comma, points or blanks between groups of three.
+ * Refused as ambiguous: the other mark. Refused as no number: letters, units, exponents, digits of other scripts, more
+ * than fifteen significant digits.
  *
  * @param text - as typed
+ * @param decimalMark - what the file, or the person, uses; a point unless something else is known
  * @returns the value, never rounded, or a code: "blank", "not-a-number", "ambiguous"
  * @example readNumber("1,234.5") // { ok: true, value: 1234.5 }
  */
-export function readNumber(text: string): Reading {
+export function readNumber(text: string, decimalMark: DecimalMark = "point"): Reading {
   const typed = tidy(text);
   if (typed === "") return { ok: false, code: "blank" };
   if (significantDigits(typed) > mostSignificantDigits) return { ok: false, code: "not-a-number" };
-  if (plainNumber.test(typed) || groupedNumber.test(typed)) {
+  if (decimalMark === "comma" && (commaNumber.test(typed) || commaGroupedNumber.test(typed))) {
+    return { ok: true, value: Number(typed.replace(/[. ]/g, "").replace(",", ".")) + 0 };
+  }
+  if (decimalMark === "point" && (plainNumber.test(typed) || groupedNumber.test(typed))) {
     // Adding zero turns a typed "-0" into 0.
     return { ok: true, value: Number(typed.replaceAll(",", "")) + 0 };
   }

@@ -1,7 +1,7 @@
 import { cellNumber } from "../cell-number.ts";
-import { isLocalDate } from "../dates.ts";
 import { cellProblem, cellText, type FileProblem, type FileRow } from "../file-problem.ts";
 import { readInches } from "../readings.ts";
+import { readDay } from "../upload/read-day.ts";
 import type { Catch } from "./catch-weight.ts";
 import type { Count } from "./count-rate.ts";
 import { calibrationFindings } from "./findings.ts";
@@ -26,6 +26,8 @@ export type KnownMaterial = { id: number; name: string };
 export type CalibrationKnowledge = {
   trucks: readonly KnownTruck[];
   materials: readonly KnownMaterial[];
+  /** What the town has said that other names mean, in small letters: ids. */
+  otherNames?: { truck: ReadonlyMap<string, number>; material: ReadonlyMap<string, number> };
   /** `truckId|materialId|testedOn|gateOpeningIn` of what is stored already. */
   storedKeys: ReadonlySet<string>;
   /** Local date of today: a test cannot lie in the future. */
@@ -62,18 +64,22 @@ function readHead(fileRow: FileRow, known: CalibrationKnowledge, problems: FileP
     problems.push(cellProblem(fileRow, column, code, message));
   };
   const unit = cellText(fileRow, "truck").replace(/^truck\s+/i, "");
-  const truck = known.trucks.find((candidate) => sameName(candidate.unitNumber, unit));
+  const truckId = known.otherNames?.truck.get(cellText(fileRow, "truck").toLowerCase());
+  const truck = known.trucks.find(({ id, unitNumber }) => id === truckId || sameName(unitNumber, unit));
   if (!truck) {
     const names = list(known.trucks.map((candidate) => candidate.unitNumber));
     refuse("truck", "unknown-truck", `No truck of this town has that number. Yours are: ${names}.`);
   }
-  const material = known.materials.find((candidate) => sameName(candidate.name, cellText(fileRow, "material")));
+  const materialText = cellText(fileRow, "material");
+  const materialId = known.otherNames?.material.get(materialText.toLowerCase());
+  const material = known.materials.find(({ id, name }) => id === materialId || sameName(name, materialText));
   if (!material) {
     const names = list(known.materials.map((candidate) => candidate.name));
     refuse("material", "unknown-material", `This town has no such material. Yours are: ${names}.`);
   }
-  const testedOn = cellText(fileRow, "tested_on");
-  const isDay = isLocalDate(testedOn);
+  const dayRead = readDay(cellText(fileRow, "tested_on"), fileRow.style?.dateOrder ?? "month-first");
+  const isDay = dayRead.ok;
+  const testedOn = dayRead.ok ? dayRead.day : "";
   if (!isDay) refuse("tested_on", "not-a-date", "Write the day as year-month-day, as in 2026-10-09.");
   else if (testedOn > known.today) refuse("tested_on", "future", "This day has not come yet.");
   const gate = readInches(cellText(fileRow, "gate_opening_in"));
@@ -101,11 +107,16 @@ function readReading(fileRow: FileRow, problems: FileProblem[]): { count: Count 
     }
     case "catch": {
       const revolutions = cellNumber(fileRow, "revolutions", turns, problems);
-      const grossLb = cellNumber(fileRow, "gross_lb", { what: "gross weight, lb", min: 0, max: 5000 }, problems);
+      const grossLb = cellNumber(
+        fileRow,
+        "gross_lb",
+        { what: "gross weight, lb", min: 0, max: 5000, unit: "lb" },
+        problems,
+      );
       const tare = cellNumber(
         fileRow,
         "tare_lb",
-        { what: "tare weight, lb", min: 0, max: 5000, mayBeBlank: true },
+        { what: "tare weight, lb", min: 0, max: 5000, unit: "lb", mayBeBlank: true },
         problems,
       );
       const tareLb = tare ?? 0;

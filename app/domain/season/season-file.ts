@@ -2,6 +2,7 @@ import { cellNumber } from "../cell-number.ts";
 import { parseSeasonLabel, seasonLabel } from "../dates.ts";
 import { cellProblem, cellText, type FileProblem, type FileRow } from "../file-problem.ts";
 import { shortTonsToLb } from "../units.ts";
+import { lbPerCubicYardOf } from "./bulk-density.ts";
 import { seasonFindings } from "./season-findings.ts";
 import type { SeasonAmounts } from "./season-totals.ts";
 
@@ -62,33 +63,53 @@ function readSeason(fileRow: FileRow, known: SeasonKnowledge, problems: FileProb
 
 function readAmounts(fileRow: FileRow, problems: FileProblem[]): SeasonAmounts | null {
   const before = problems.length;
-  const tons = { min: 0, max: 500_000 };
-  const laneMiles = cellNumber(fileRow, "lane_miles", { what: "lane miles", min: 0.1, max: 10_000 }, problems);
+  const tons = { min: 0, max: 500_000, unit: "ton" } as const;
+  const laneMiles = cellNumber(
+    fileRow,
+    "lane_miles",
+    { what: "lane miles", min: 0.1, max: 10_000, unit: "mile" },
+    problems,
+  );
   const eventCount = cellNumber(
     fileRow,
     "events",
     { what: "number of events", min: 0, max: 120, isWhole: true },
     problems,
   );
-  const saltTons = cellNumber(fileRow, "salt_tons", { what: "tons of salt", ...tons }, problems);
-  const mixTons = cellNumber(fileRow, "mix_tons", { what: "tons of sand and salt mix", ...tons }, problems);
-  const sandTons = cellNumber(fileRow, "sand_tons", { what: "tons of sand and grit", ...tons }, problems);
+  const saltTons = cellNumber(
+    fileRow,
+    "salt_tons",
+    { what: "tons of salt", ...tons, lbPerCubicYard: lbPerCubicYardOf.salt },
+    problems,
+  );
+  const mixTons = cellNumber(
+    fileRow,
+    "mix_tons",
+    { what: "tons of sand and salt mix", ...tons, lbPerCubicYard: lbPerCubicYardOf.mix },
+    problems,
+  );
+  const sandTons = cellNumber(
+    fileRow,
+    "sand_tons",
+    { what: "tons of sand and grit", ...tons, lbPerCubicYard: lbPerCubicYardOf.sand },
+    problems,
+  );
   const mixPercent = cellNumber(
     fileRow,
     "mix_salt_percent",
-    { what: "salt in the mix, percent", min: 0, max: 100, mayBeBlank: mixTons === 0 },
+    { what: "salt in the mix, percent", min: 0, max: 100, sign: "%", mayBeBlank: mixTons === 0 },
     problems,
   );
   const brineGal = cellNumber(
     fileRow,
     "brine_gal",
-    { what: "gallons of brine", min: 0, max: 50_000_000, mayBeBlank: true },
+    { what: "gallons of brine", min: 0, max: 50_000_000, unit: "gal", mayBeBlank: true },
     problems,
   );
   const costUsd = cellNumber(
     fileRow,
     "material_cost_usd",
-    { what: "material cost, dollars", min: 0, max: 40_000_000, mayBeBlank: true },
+    { what: "material cost, dollars", min: 0, max: 40_000_000, sign: "$", mayBeBlank: true },
     problems,
   );
   if (problems.length > before || laneMiles === null || eventCount === null) return null;

@@ -1,152 +1,125 @@
 import { Readable } from "node:stream";
 import { CsvError, parse } from "csv-parse";
 import { stringify } from "csv-stringify/sync";
-import type { FileProblem, FileRow } from "#app/domain/file-problem.ts";
+import { assertLength, assertWidth, FileError, sheetLimits, type SheetRow } from "./file-error.ts";
+import { decodedPieces, type TextEncodingName } from "./text-encoding.server.ts";
 
-const limits = { rows: 50_000, columns: 200, recordCharacters: 64_000 };
+const separators = [",", ";", "\t", "|"];
+/** Rows handed on at a time. */
+const batchRows = 1000;
 
-export type CsvTable = { rows: FileRow[]; problems: FileProblem[] };
-
-function refusal(code: string, message: string): CsvTable {
-  return { rows: [], problems: [{ row: null, column: null, value: null, code, severity: "error", message }] };
-}
-
-/** UTF-8 with or without its mark, UTF-16 with one, or Windows-1252: what spreadsheets write. */
-function decoderFor(content: Uint8Array): TextDecoder | null {
-  if (content[0] === 0xff && content[1] === 0xfe) return new TextDecoder("utf-16le");
-  if (content[0] === 0xfe && content[1] === 0xff) return new TextDecoder("utf-16be");
-  // No text file holds a zero byte; workbooks and pictures do.
-  if (content.includes(0)) return null;
-  try {
-    new TextDecoder("utf-8", { fatal: true }).decode(content);
-    return new TextDecoder("utf-8");
-  } catch {
-    return new TextDecoder("windows-1252");
-  }
-}
-
-function* pieces(content: Uint8Array, decoder: TextDecoder) {
-  const step = 64 * 1024;
-  for (let start = 0; start < content.length; start += step) {
-    yield decoder.decode(content.subarray(start, start + step), { stream: true });
-  }
-  yield decoder.decode();
-}
-
-/** The separator that the first line holds most of. */
-function separatorOf(content: Uint8Array, decoder: TextDecoder) {
-  const firstLine = decoder.decode(content.subarray(0, 4096)).split(/[\r\n]/)[0] ?? "";
-  const counts = [",", ";", "\t"].map((separator) => ({ separator, count: firstLine.split(separator).length }));
-  return counts.reduce((best, next) => (next.count > best.count ? next : best)).separator;
-}
-
-function columnName(head: string) {
-  return head
-    .trim()
-    .toLowerCase()
-    .replace(/[\s-]+/g, "_");
-}
-
-function headProblem(heads: readonly string[], columns: readonly string[]): CsvTable | null {
-  const missing = columns.filter((column) => !heads.includes(column));
-  const doubled = columns.filter((column) => heads.filter((head) => head === column).length > 1);
-  if (doubled.length > 0)
-    return refusal("doubled-columns", `Two columns have the same head: ${doubled.join(", ")}. Keep one.`);
-  if (missing.length === 0) return null;
-  if (missing.length === columns.length) {
-    return refusal(
-      "other-columns",
-      `This file has other columns. It should begin with the heads ${columns.join(", ")}.`,
-    );
-  }
-  return refusal("missing-columns", `These columns are missing: ${missing.join(", ")}. The template has all of them.`);
+/** The first lines without what stands in quotation marks, so that a comma in a note does not count. */
+function linesWithoutQuotes(text: string) {
+  return text
+    .replace(/"(?:[^"]|"")*"?/g, "")
+    .split(/\r\n|\n|\r/)
+    .filter((line) => line.trim() !== "")
+    .slice(0, 12);
 }
 
 /**
- * Read a CSV file row by row.
+ * The separator between columns: the one that most of the first lines hold, and hold most often.
  *
- * @param content - the file's bytes, any of the usual encodings and separators
- * @param columns - the heads it must have, in any order and case
- * @returns the rows by column name, blank rows left out; or one problem that says why it is no such file.
- *   Columns with other heads are left out and named in a check.
+ * @param text - the beginning of the file
+ * @returns a comma when no line holds any
+ * @example separatorOf("a;b\n1,5;2\n") // ";"
  */
-export async function readCsv(content: Uint8Array, columns: readonly string[]): Promise<CsvTable> {
-  if (content.length === 0) return refusal("empty", "This file is empty. Choose the file again, or save it once more.");
-  const decoder = decoderFor(content);
-  if (!decoder) {
-    return refusal(
-      "not-csv",
-      "This is not a CSV file. In a spreadsheet, save it as “CSV, comma separated” and upload that.",
-    );
+export function separatorOf(text: string): string {
+  const declared = /^\ufeff?"?sep=([,;|\t])/i.exec(text)?.[1];
+  if (declared !== undefined) return declared;
+  const lines = linesWithoutQuotes(text);
+  const scores = separators.map((separator) => {
+    const counts = lines.map((line) => line.split(separator).length - 1);
+    const usual = counts.filter((count) => count > 0).sort((a, b) => a - b);
+    const middle = usual[Math.floor(usual.length / 2)] ?? 0;
+    // Lines that all hold it equally often make it more likely than one line that holds it often.
+    const even = counts.filter((count) => count === middle && count > 0).length;
+    return { separator, score: even * 100 + middle };
+  });
+  return scores.reduce((best, next) => (next.score > best.score ? next : best)).separator;
+}
+
+/** "sep=;" is an instruction to a spreadsheet, not a row of the table; it still counts as a row. */
+function isSeparatorLine(row: number, record: readonly string[]) {
+  return row === 1 && /^"?sep=/i.test(record[0] ?? "");
+}
+
+function brokenAt(row: number, error: CsvError): FileError {
+  if (error.code === "CSV_MAX_RECORD_SIZE") {
+    const message = `Row ${row} is longer than ${sheetLimits.recordCharacters.toLocaleString("en-US")} characters. A quotation mark may be opened there and not closed.`;
+    return new FileError("row-too-long", message);
   }
-  const parser = Readable.from(pieces(content, decoder)).pipe(
+  const message = `The file cannot be read past row ${row}: a quotation mark is opened and not closed, or stands inside a cell.`;
+  return new FileError("broken", message);
+}
+
+/**
+ * The rows of a CSV file, read as they are asked for: at no time is more than a piece of the file in memory.
+ *
+ * @param pieces - the file's bytes in order
+ * @param encoding - as found when the file was received
+ * @returns batches of rows that are not blank, each with the row number a spreadsheet would show
+ * @throws FileError when the file is no text, is too long or too wide, or breaks off inside quotation marks
+ */
+export async function* csvRows(
+  pieces: AsyncIterable<Uint8Array>,
+  encoding: TextEncodingName,
+): AsyncGenerator<SheetRow[]> {
+  if (encoding === "none") {
+    const message = "This is neither a CSV file nor a workbook. In a spreadsheet, save it as CSV or as .xlsx.";
+    throw new FileError("not-csv", message);
+  }
+  const texts = decodedPieces(pieces, encoding);
+  let opening = "";
+  for (let next = await texts.next(); next.done !== true; next = await texts.next()) {
+    opening += next.value;
+    if (opening.length >= 65_536) break;
+  }
+  async function* all() {
+    yield opening;
+    yield* texts;
+  }
+  const parser = Readable.from(all()).pipe(
     parse({
       bom: true,
-      delimiter: separatorOf(content, decoderFor(content) ?? decoder),
+      delimiter: separatorOf(opening.slice(0, 65_536)),
       relax_column_count: true,
-      relax_quotes: false,
+      relax_quotes: true,
       skip_empty_lines: false,
-      max_record_size: limits.recordCharacters,
+      max_record_size: sheetLimits.recordCharacters,
     }),
   );
   const records: AsyncIterable<string[]> = parser;
-  const rows: FileRow[] = [];
-  let heads: string[] | null = null;
+  let batch: SheetRow[] = [];
   let row = 0;
   try {
     for await (const record of records) {
       row++;
-      if (record.length > limits.columns) {
-        return refusal("too-wide", `Row ${row} has ${record.length} columns; ${limits.columns} are the most.`);
+      assertLength(row);
+      assertWidth(row, record.length);
+      if (record.every((cell) => cell.trim() === "") || isSeparatorLine(row, record)) continue;
+      batch.push({ row, cells: record });
+      if (batch.length === batchRows) {
+        yield batch;
+        batch = [];
       }
-      if (record.every((cell) => cell.trim() === "")) continue;
-      if (heads === null) {
-        heads = record.map(columnName);
-        const problem = headProblem(heads, columns);
-        if (problem) return problem;
-        continue;
-      }
-      if (rows.length === limits.rows) return refusal("too-long", "This file has over 50,000 rows. Split it.");
-      const cells = new Map<string, string>();
-      heads.forEach((head, index) => {
-        if (columns.includes(head)) cells.set(head, record[index] ?? "");
-      });
-      rows.push({ row, cells });
     }
   } catch (error) {
-    if (!(error instanceof CsvError)) throw error;
-    return refusal(
-      "broken",
-      `The file cannot be read past row ${row + 1}: a quotation mark is opened and not closed, or stands inside a cell.`,
-    );
+    if (error instanceof CsvError) throw brokenAt(row + 1, error);
+    throw error;
   } finally {
     parser.destroy();
   }
-  if (heads === null) return refusal("empty", "This file holds no rows. Choose the file again, or save it once more.");
-  if (rows.length === 0) return refusal("only-heads", "This file has its heads but no rows under them.");
-  const extra = heads.filter((head) => head !== "" && !columns.includes(head));
-  const problems: FileProblem[] =
-    extra.length === 0
-      ? []
-      : [
-          {
-            row: 1,
-            column: null,
-            value: null,
-            code: "extra-columns",
-            severity: "check",
-            message: `These columns are not used: ${extra.slice(0, 20).join(", ")}.`,
-          },
-        ];
-  return { rows, problems };
+  if (batch.length > 0) yield batch;
 }
 
-/** A text cell that a spreadsheet would take for a formula gets a leading apostrophe; numbers keep their sign. */
+/** A text cell that a spreadsheet would take for a formula gets a leading apostrophe; figures keep their sign. */
 function guarded(cell: string | number | null): string | number | null {
-  return typeof cell === "string" && /^[=+\-@\t\r\0＝＋－＠]/.test(cell) ? `'${cell}` : cell;
+  if (typeof cell !== "string" || /^[+-]?\d[\d.,]*$/.test(cell)) return cell;
+  return /^[=+\-@\t\r\0＝＋－＠]/.test(cell) ? `'${cell}` : cell;
 }
 
 /** Rows as CSV after RFC 4180: CRLF line ends, quotes where needed, null as an empty cell. */
 export function writeCsv(heads: readonly string[], rows: readonly (readonly (string | number | null)[])[]): string {
-  return stringify([heads, ...rows.map((row) => row.map(guarded))], { record_delimiter: "windows" });
+  return stringify([heads.map(guarded), ...rows.map((row) => row.map(guarded))], { record_delimiter: "windows" });
 }

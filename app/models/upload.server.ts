@@ -1,9 +1,11 @@
 import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
 
-export type UploadKind = "season-figures" | "calibrations";
+export type UploadKind = "season-figures" | "calibrations" | "storms" | "stock" | "weather";
+export type UploadState =
+  "received" | "matching" | "checking" | "checked" | "accepting" | "accepted" | "cancelled" | "failed";
 
-/** A file as it came, with what the checks made of it. */
+/** A file as it came, and how far it has got. Its bytes are in upload_chunk, its rows in upload_row. */
 export class Upload extends Model<InferAttributes<Upload>, InferCreationAttributes<Upload>> {
   declare id: CreationOptional<number>;
   declare townId: number;
@@ -11,11 +13,22 @@ export class Upload extends Model<InferAttributes<Upload>, InferCreationAttribut
   declare fileName: string;
   declare byteCount: number;
   declare sha256: string;
-  declare content: Buffer;
-  declare rowCount: number;
-  declare staged: unknown;
-  declare problems: unknown;
-  declare state: "checked" | "accepted";
+  declare format: "csv" | "xlsx";
+  declare encoding: string;
+  declare state: UploadState;
+  declare matching: CreationOptional<unknown>;
+  declare run: CreationOptional<number>; // counts the steps begun
+  declare rowsTotal: CreationOptional<number | null>; // an estimate until the file has been read
+  declare rowsRead: CreationOptional<number>;
+  declare rowsOk: CreationOptional<number>;
+  declare rowsCheck: CreationOptional<number>;
+  declare rowsError: CreationOptional<number>;
+  declare rowsLeftOut: CreationOptional<number>;
+  declare failure: CreationOptional<string | null>;
+  declare periodStart: CreationOptional<string | null>;
+  declare periodEnd: CreationOptional<string | null>;
+  declare isReplacing: CreationOptional<boolean>;
+  declare rowsAccepted: CreationOptional<number | null>;
   declare createdById: number;
   declare createdAt: Date;
   declare settledById: CreationOptional<number | null>;
@@ -30,11 +43,22 @@ Upload.init(
     fileName: { type: DataTypes.STRING(200), allowNull: false },
     byteCount: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
     sha256: { type: DataTypes.STRING(64), allowNull: false },
-    content: { type: DataTypes.BLOB("medium"), allowNull: false },
-    rowCount: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
-    staged: { type: DataTypes.JSON, allowNull: false },
-    problems: { type: DataTypes.JSON, allowNull: false },
-    state: { type: DataTypes.STRING(24), allowNull: false },
+    format: { type: DataTypes.STRING(4), allowNull: false },
+    encoding: { type: DataTypes.STRING(12), allowNull: false },
+    state: { type: DataTypes.STRING(12), allowNull: false },
+    matching: DataTypes.JSON,
+    run: DataTypes.INTEGER.UNSIGNED,
+    rowsTotal: DataTypes.INTEGER.UNSIGNED,
+    rowsRead: DataTypes.INTEGER.UNSIGNED,
+    rowsOk: DataTypes.INTEGER.UNSIGNED,
+    rowsCheck: DataTypes.INTEGER.UNSIGNED,
+    rowsError: DataTypes.INTEGER.UNSIGNED,
+    rowsLeftOut: DataTypes.INTEGER.UNSIGNED,
+    failure: DataTypes.STRING(400),
+    periodStart: DataTypes.DATEONLY,
+    periodEnd: DataTypes.DATEONLY,
+    isReplacing: DataTypes.BOOLEAN,
+    rowsAccepted: DataTypes.INTEGER.UNSIGNED,
     createdById: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
     createdAt: { type: DataTypes.DATE(3), allowNull: false },
     settledById: DataTypes.INTEGER.UNSIGNED,

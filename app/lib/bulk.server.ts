@@ -1,0 +1,31 @@
+import type { Transaction } from "sequelize";
+
+type Cell = string | number | Buffer | Date | null;
+type BatchConnection = { batch: (sql: string, rows: Cell[][]) => Promise<unknown> };
+
+function canBatch(connection: unknown): connection is BatchConnection {
+  return (
+    typeof connection === "object" &&
+    connection !== null &&
+    "batch" in connection &&
+    typeof connection.batch === "function"
+  );
+}
+
+/** Rows sent to the database at a time. */
+export const bulkRows = 2000;
+
+/**
+ * Insert many rows in a transaction, by the connector's own bulk protocol: some ten times as fast as through models.
+ *
+ * @param sql - an INSERT with one question mark for each cell
+ * @param rows - cells in the order of the question marks; none is fine
+ * @param transaction - whose connection is used
+ */
+export async function insertRows(sql: string, rows: Cell[][], transaction: Transaction): Promise<void> {
+  const connection: unknown = Reflect.get(transaction, "connection");
+  if (!canBatch(connection)) throw new Error("This transaction has no connection that can take rows in bulk.");
+  for (let start = 0; start < rows.length; start += bulkRows) {
+    await connection.batch(sql, rows.slice(start, start + bulkRows));
+  }
+}

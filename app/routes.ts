@@ -24,7 +24,9 @@ export default [
   route("uploads", "routes/season/uploads.tsx"),
   route("uploads/templates/:kind", "routes/season/upload-template.ts"),
   route("uploads/:uploadId", "routes/season/upload.tsx"),
+  route("uploads/:uploadId/columns", "routes/season/upload-columns.tsx"),
   route("uploads/:uploadId/problems", "routes/season/upload-problems.ts"),
+  route("uploads/:uploadId/file", "routes/season/upload-file.ts"),
 
   route("peers", "routes/peers/peers.tsx"),
   route("peers/table", "routes/peers/peer-table.ts"),

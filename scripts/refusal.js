@@ -1,5 +1,7 @@
 const methods = ["GET", "HEAD", "POST", "PUT", "PATCH", "DELETE"];
 const bodyLimitBytes = 6_000_000;
+/** Files of storm logs: 50 MB and what a form puts around it. */
+const uploadLimitBytes = 53_000_000;
 
 /**
  * Why a request is turned away before the application sees it, or null when it is let through.
@@ -17,10 +19,22 @@ export function refusalOf({ method, url, headers }, host) {
   if (headers.host !== host && path !== "/healthz")
     return { status: 421, sentence: "This address is not served here." };
   // Without a length the application's own limits hold; with one there is no need to read the body at all.
-  if (Number(headers["content-length"] ?? 0) > bodyLimitBytes) {
-    return { status: 413, sentence: "This is more than 6 MB. Send a smaller file.", headers: { Connection: "close" } };
+  const isUpload = isUploadOfFile({ method, url });
+  if (Number(headers["content-length"] ?? 0) > (isUpload ? uploadLimitBytes : bodyLimitBytes)) {
+    const sentence = `This is more than ${isUpload ? "50" : "6"} MB. Send a smaller file.`;
+    return { status: 413, sentence, headers: { Connection: "close" } };
   }
   return null;
+}
+
+/**
+ * Whether a file is being sent: the one request that may be large, and may take minutes over a poor line.
+ *
+ * @param {{ method: string, url: string }} request
+ * @returns {boolean}
+ */
+export function isUploadOfFile({ method, url }) {
+  return method === "POST" && /^\/uploads(?:\.data)?\/?(?:$|\?)/.test(url);
 }
 
 /** @param {string} url @returns {string | null} */

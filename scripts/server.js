@@ -3,7 +3,7 @@ import { join } from "node:path";
 import { fileURLToPath, pathToFileURL } from "node:url";
 import { createRequestHandler } from "@react-router/express";
 import express from "express";
-import { refusalOf } from "./refusal.js";
+import { isUploadOfFile, refusalOf } from "./refusal.js";
 import { defaultHeaders, fillInHeaders, unreadableRequestAnswer } from "./response-headers.js";
 import { projectFolder } from "./settings.js";
 import { stopOnRequest } from "./stop.js";
@@ -28,6 +28,7 @@ export function createServer({ build, origin }) {
     for (const name of Object.keys(request.headers)) {
       if (/^x-(react-router|remix|user)-/.test(name)) delete request.headers[name];
     }
+    if (!isUploadOfFile(request)) endWhenSlow(request);
     // The address is the configured one, never what a header claims.
     request.headers["x-forwarded-proto"] = address.protocol.slice(0, -1);
     delete request.headers["x-forwarded-host"];
@@ -43,10 +44,20 @@ export function createServer({ build, origin }) {
     sendPlain(response, 500, "Something went wrong on our side. Nothing was stored. Try again in a minute.");
   });
 
-  const limits = { requestTimeout: 30_000, headersTimeout: 10_000, keepAliveTimeout: 65_000 };
+  const limits = { requestTimeout: 600_000, headersTimeout: 10_000, keepAliveTimeout: 65_000 };
   return createHttpServer(limits, app).on("clientError", (error, socket) => {
     if (socket.writable) socket.end(unreadableRequestAnswer(error.code, headers));
   });
+}
+
+/** Only files may take their time: whoever sends anything else byte by byte is cut off after half a minute. */
+function endWhenSlow(request) {
+  const hasBody = "transfer-encoding" in request.headers || Number(request.headers["content-length"] ?? 0) > 0;
+  if (!hasBody) return;
+  const limit = setTimeout(() => {
+    if (!request.complete) request.destroy();
+  }, 30_000);
+  request.once("close", () => clearTimeout(limit));
 }
 
 function sendPlain(response, status, sentence) {

@@ -3,16 +3,11 @@ import { tmpdir } from "node:os";
 import { join } from "node:path";
 
 /**
- * Do something with a file of one's own that is gone afterwards, however it goes.
+ * A place for a file of one's own, in a folder that only this account can look into.
  *
- * @param work - gets the path of a file that is not there yet, in a folder that only this account can look into
- * @returns what `work` returns
+ * @returns the path, where nothing is yet, and how to remove what lies there
  */
-export async function withTemporaryFile<T>(work: (path: string) => Promise<T>): Promise<T> {
+export async function temporaryFile(): Promise<{ path: string; remove: () => Promise<void> }> {
   const folder = await mkdtemp(join(tmpdir(), "commonweigh-file-"));
-  try {
-    return await work(join(folder, "file"));
-  } finally {
-    await rm(folder, { recursive: true, force: true });
-  }
+  return { path: join(folder, "file"), remove: () => rm(folder, { recursive: true, force: true }) };
 }

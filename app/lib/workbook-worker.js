@@ -1,3 +1,4 @@
+/* global require, setTimeout, process */
 /*
  * Reads one sheet of a workbook in a thread of its own, with a heap of its own: whatever the file does, the application
  * goes on. Plain JavaScript, given to the thread as text, because the build bundles everything else into one file.

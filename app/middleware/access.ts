@@ -37,7 +37,9 @@ const access: Record<Page, Rule> = {
   "/uploads": session(town, town),
   "/uploads/templates/:kind": session(town),
   "/uploads/:uploadId": session(town, town),
+  "/uploads/:uploadId/columns": session(town, town),
   "/uploads/:uploadId/problems": session(town),
+  "/uploads/:uploadId/file": session(town),
   "/peers": session(town),
   "/peers/table": session(town),
 

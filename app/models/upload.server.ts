@@ -16,7 +16,7 @@ export class Upload extends Model<InferAttributes<Upload>, InferCreationAttribut
   declare format: "csv" | "xlsx";
   declare encoding: string;
   declare state: UploadState;
-  declare matching: CreationOptional<unknown>;
+  declare matching: CreationOptional<object | null>;
   declare run: CreationOptional<number>; // counts the steps begun
   declare rowsTotal: CreationOptional<number | null>; // an estimate until the file has been read
   declare rowsRead: CreationOptional<number>;

@@ -138,10 +138,10 @@ export async function down({ sql }) {
     ADD COLUMN IF NOT EXISTS staged JSON NOT NULL DEFAULT '[]',
     ADD COLUMN IF NOT EXISTS problems JSON NOT NULL DEFAULT '[]'`);
   // What the older program does not know it cannot keep: other kinds of file, and files above its limit.
-  await sql(`UPDATE storm SET upload_id = NULL WHERE upload_id IN
-    (SELECT id FROM upload WHERE kind NOT IN ('season-figures','calibrations') OR byte_count > 5242880)`);
-  await sql(`UPDATE stock_entry SET upload_id = NULL WHERE upload_id IN
-    (SELECT id FROM upload WHERE kind NOT IN ('season-figures','calibrations') OR byte_count > 5242880)`);
+  const lost = "SELECT id FROM upload WHERE kind NOT IN ('season-figures','calibrations') OR byte_count > 5242880";
+  for (const table of ["storm", "stock_entry", "season_figure", "calibration"]) {
+    await sql(`UPDATE ${table} SET upload_id = NULL WHERE upload_id IN (${lost})`);
+  }
   await sql("DELETE FROM upload WHERE kind NOT IN ('season-figures','calibrations') OR byte_count > 5242880");
   await sql("SET SESSION group_concat_max_len = 16777215");
   await sql(`UPDATE upload u SET row_count = rows_read, content = COALESCE(

@@ -237,8 +237,3 @@ export function readStormRow(
   checkAmounts(fileRow, staged, known, problems);
   return { staged, problems };
 }
-
-/** What makes two lines the same: everything but the note. For finding a line that stands twice in a file. */
-export function stormSignature({ note: _note, ...storm }: StagedStorm): string {
-  return JSON.stringify(storm);
-}

@@ -1,11 +1,13 @@
 import { townActor } from "#app/context.ts";
-import { csvResponse } from "#app/lib/download.server.ts";
+import { streamedResponse } from "#app/lib/download.server.ts";
 import { idParam } from "#app/lib/params.ts";
-import { uploadProblemsCsv } from "#app/services/uploads/read.server.ts";
+import { rejectedRowsCsv } from "#app/services/uploads/files.server.ts";
 import type { Route } from "./+types/upload-problems";
 
-/** What is wrong with a file, to put right beside it. */
+/** The rows of a file that are not ready, with the reasons, to put right in a spreadsheet. */
 export async function loader({ context, params }: Route.LoaderArgs) {
   const uploadId = idParam(params.uploadId, "upload");
-  return csvResponse(`upload-${uploadId}-problems.csv`, await uploadProblemsCsv(townActor(context), uploadId));
+  const pieces = await rejectedRowsCsv(townActor(context), uploadId);
+  const fileName = `upload-${uploadId}-rows-to-look-at.csv`;
+  return streamedResponse({ fileName, contentType: "text/csv; charset=utf-8", pieces });
 }

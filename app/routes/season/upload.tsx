@@ -1,187 +1,74 @@
-import { data, Form, redirect } from "react-router";
-import { groupProblems, groupTitle, ProblemGroup } from "#app/components/season/problem-groups.tsx";
-import { SeasonTable } from "#app/components/season/season-table.tsx";
-import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
-import { Page } from "#app/components/layout/page.tsx";
-import { Button, ButtonLink } from "#app/components/ui/button.tsx";
-import { Dock } from "#app/components/ui/dock.tsx";
-import { Kinds } from "#app/components/ui/kinds.tsx";
-import { Notice } from "#app/components/ui/notice.tsx";
-import { SideBySide } from "#app/components/ui/side-by-side.tsx";
-import { TextLink } from "#app/components/ui/text-link.tsx";
-import { Timetable } from "#app/components/ui/timetable.tsx";
+import { data, redirect } from "react-router";
+import { CheckPage } from "#app/components/season/check-page.tsx";
+import { UploadOutcome } from "#app/components/season/upload-outcome.tsx";
+import { UploadProgress } from "#app/components/season/upload-progress.tsx";
 import { townActor } from "#app/context.ts";
-import { catchVariationPercent } from "#app/domain/calibration/catch-weight.ts";
-import { seasonTotals } from "#app/domain/season/season-totals.ts";
-import { formatInches, formatInstant, formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
+import { badRequest } from "#app/lib/errors.ts";
 import { idParam } from "#app/lib/params.ts";
-import { countWords, sentenceStart } from "#app/lib/words.ts";
-import { acceptUpload } from "#app/services/uploads/accept.server.ts";
+import { answerUpload } from "#app/services/uploads/answers.server.ts";
+import { acceptUpload, cancelUpload, startAgain } from "#app/services/uploads/decide.server.ts";
+import { readAnswer } from "#app/services/uploads/answer-form.server.ts";
 import { getUpload } from "#app/services/uploads/read.server.ts";
 import type { Route } from "./+types/upload";
 
-export async function loader({ context, params }: Route.LoaderArgs) {
-  return { upload: await getUpload(townActor(context), idParam(params.uploadId, "upload")) };
+export async function loader({ context, params, url }: Route.LoaderArgs) {
+  const shownKey = url.searchParams.get("show");
+  const upload = await getUpload(townActor(context), idParam(params.uploadId, "upload"), shownKey);
+  if (upload.state === "matching") throw redirect(`/uploads/${upload.id}/columns`);
+  return { upload, shownKey, isKnown: url.searchParams.has("known") };
 }
 
 const refusals = {
-  "errors-stand": "Errors stand in this file. Correct them in your spreadsheet and upload it again.",
+  "errors-stand": "Errors stand in this file. Put them right here or in your spreadsheet, or leave those rows out.",
   "accepted-before": "This file has been accepted already; it counts once.",
+  "nothing-ready": "No row of this file is ready, so there is nothing to take in.",
+  "not-checked": "This file is still being read. Its rows can be accepted once all of them have been checked.",
 } as const;
 
-export async function action({ context, params }: Route.ActionArgs) {
+export async function action({ context, params, request }: Route.ActionArgs) {
+  const actor = townActor(context);
   const uploadId = idParam(params.uploadId, "upload");
-  const outcome = await acceptUpload(townActor(context), uploadId);
-  if (outcome.ok) return redirect(`/uploads/${uploadId}`);
-  return data({ refusal: refusals[outcome.reason] }, { status: 409 });
+  const form = await request.formData();
+  const intent = form.get("intent");
+  const here = `/uploads/${uploadId}`;
+  switch (intent) {
+    case "cancel":
+      await cancelUpload(actor, uploadId);
+      return redirect(here);
+    case "again":
+      await startAgain(actor, uploadId);
+      return redirect(here);
+    case null:
+    case "accept":
+    case "accept-without": {
+      const choice = { leaveOut: intent === "accept-without", isReplacing: form.get("isReplacing") !== "0" };
+      const outcome = await acceptUpload(actor, uploadId, choice);
+      return outcome.ok ? redirect(here) : data({ refusal: refusals[outcome.reason] }, { status: 409 });
+    }
+    default: {
+      const answer = readAnswer(form);
+      if (!answer) throw badRequest("This answer could not be read, so nothing was changed. Go back and try again.");
+      await answerUpload(actor, uploadId, answer);
+      return redirect(here);
+    }
+  }
 }
 
 export const meta: Route.MetaFunction = () => [{ title: "Check an upload · Commonweigh" }];
 
-type Upload = Route.ComponentProps["loaderData"]["upload"];
-
-function answer(upload: Upload, errorCount: number, checkCount: number) {
-  const things =
-    upload.kind === "season-figures"
-      ? countWords(upload.seasons.length, "season", "seasons")
-      : countWords(upload.calibrations.length, "calibration", "calibrations");
-  if (upload.state === "accepted")
-    return `Accepted: ${things} ${upload.kind === "season-figures" ? "in your figures" : "in your fleet"}.`;
-  if (upload.rowCount === 0) return "This file cannot be read.";
-  if (errorCount > 0) {
-    return `${sentenceStart(countWords(errorCount, "thing is", "things are"))} wrong in ${countWords(upload.rowCount, "row", "rows")}. Correct ${errorCount === 1 ? "it" : "them"} in your spreadsheet and upload it again.`;
+export default function UploadPage({ loaderData, actionData }: Route.ComponentProps) {
+  const { upload, shownKey, isKnown } = loaderData;
+  switch (upload.state) {
+    case "received":
+    case "matching":
+    case "checking":
+    case "accepting":
+      return <UploadProgress upload={upload} />;
+    case "checked":
+      return <CheckPage upload={upload} shownKey={shownKey} isKnown={isKnown} refusal={actionData?.refusal ?? null} />;
+    case "accepted":
+    case "cancelled":
+    case "failed":
+      return <UploadOutcome upload={upload} isKnown={isKnown} />;
   }
-  const checks =
-    checkCount === 0 ? "" : ` ${sentenceStart(countWords(checkCount, "thing", "things"))} to look at first.`;
-  return `All ${countWords(upload.rowCount, "row", "rows")} can be read: ${things}.${checks}`;
-}
-
-function Holds({ upload }: { upload: Upload }) {
-  if (upload.seasons.length > 0) {
-    return (
-      <SeasonTable
-        caption="As read from the file, and worked out from it"
-        seasons={upload.seasons.map(({ seasonStartYear, amounts }) => ({
-          seasonStartYear,
-          amounts,
-          totals: seasonTotals(amounts),
-        }))}
-      />
-    );
-  }
-  if (upload.calibrations.length === 0) return null;
-  return (
-    <Timetable
-      caption="Calibrations as read from the file"
-      columns={[
-        { key: "truck", label: "truck" },
-        { key: "material", label: "material" },
-        { key: "day", label: "weighed" },
-        { key: "gate", label: "gate", unit: "in", isNumeric: true },
-        { key: "counts", label: "settings counted", isNumeric: true },
-        { key: "catches", label: "catches", isNumeric: true },
-        { key: "spread", label: "catches differ by", unit: "%", isNumeric: true },
-      ]}
-      rows={upload.calibrations.map((calibration) => ({
-        key: String(calibration.row),
-        cells: {
-          truck: calibration.unitNumber,
-          material: calibration.materialName,
-          day: formatShortDay(calibration.testedOn),
-          gate: formatInches(calibration.gateOpeningIn),
-          counts: calibration.counts.length,
-          catches: calibration.catches.length,
-          spread: calibration.catches.length === 0 ? "–" : formatOneDecimal(catchVariationPercent(calibration.catches)),
-        },
-      }))}
-    />
-  );
-}
-
-export default function UploadPage({ loaderData: { upload }, actionData }: Route.ComponentProps) {
-  const errors = upload.problems.filter(({ severity }) => severity === "error");
-  const checks = upload.problems.filter(({ severity }) => severity === "check");
-  const groups = groupProblems(upload.problems);
-  const isOpen = upload.state === "checked";
-  const next =
-    upload.kind === "season-figures"
-      ? { to: "/season", words: "Open the season" }
-      : { to: "/fleet", words: "Open the fleet" };
-  return (
-    <>
-      <Page>
-        <Answer>{answer(upload, errors.length, checks.length)}</Answer>
-        <Method>
-          <b className="text-asphalt">{upload.fileName}</b>, read {formatInstant(upload.createdAt)}.{" "}
-          {isOpen
-            ? "Nothing counts until you accept, and your file is not changed. You can leave and come back."
-            : "The file is kept as it came."}
-        </Method>
-        {actionData && <Notice tone="problem" title={actionData.refusal} />}
-        {!isOpen && (
-          <p className="mt-5">
-            <ButtonLink to={next.to}>{next.words}</ButtonLink>
-          </p>
-        )}
-        {isOpen && groups.length > 0 && (
-          <SideBySide
-            side={
-              <>
-                <Kinds
-                  label="Problems by kind"
-                  kinds={groups.map(({ key, severity, problems }) => ({
-                    key,
-                    count: problems.length,
-                    to: `#${key}`,
-                    label: severity === "error" ? "to correct" : "to look at",
-                    detail: groupTitle(problems).replace(/^[^,]*, /, ""),
-                  }))}
-                />
-                <p className="mt-3 text-note">
-                  <TextLink to={`/uploads/${upload.id}/problems`} isDocument>
-                    Download the list (CSV)
-                  </TextLink>
-                </p>
-              </>
-            }
-          >
-            {groups.map(({ key, problems }) => (
-              <ProblemGroup key={key} id={key} problems={problems} />
-            ))}
-          </SideBySide>
-        )}
-        {(upload.seasons.length > 0 || upload.calibrations.length > 0) && (
-          <>
-            <Heading>{errors.length > 0 ? "What could be read" : "What the file holds"}</Heading>
-            <Holds upload={upload} />
-          </>
-        )}
-      </Page>
-      {isOpen && (
-        <Dock
-          summaryId="dock-summary"
-          summary={
-            errors.length > 0 ? (
-              <>
-                <b>{countWords(errors.length, "thing", "things")} to correct.</b> All rows go in together, or none do.
-              </>
-            ) : (
-              <>
-                <b>{countWords(upload.rowCount, "row", "rows")} ready.</b> All go in together, or none do.
-              </>
-            )
-          }
-        >
-          <TextLink to={`/uploads?kind=${upload.kind}`} weight="bold">
-            Upload another file
-          </TextLink>
-          <Form method="post">
-            <Button notYet={errors.length > 0 && { reasonId: "dock-summary" }}>
-              Accept {countWords(upload.rowCount, "row", "rows")}
-            </Button>
-          </Form>
-        </Dock>
-      )}
-    </>
-  );
 }

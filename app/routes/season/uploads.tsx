@@ -1,4 +1,3 @@
-import { FormDataParseError, MaxFileSizeExceededError, parseFormData } from "@remix-run/form-data-parser";
 import { data, redirect, useNavigation } from "react-router";
 import { FileField } from "#app/components/forms/field.tsx";
 import { ErrorSummary } from "#app/components/forms/error-summary.tsx";
@@ -11,80 +10,97 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { townActor } from "#app/context.ts";
 import { formatInstant } from "#app/lib/format.ts";
+import { receiveForm } from "#app/lib/multipart.server.ts";
+import { temporaryFile } from "#app/lib/temporary-file.server.ts";
 import { countWords } from "#app/lib/words.ts";
 import { isUploadKind, uploadKinds } from "#app/services/uploads/kinds.server.ts";
 import { listUploads } from "#app/services/uploads/read.server.ts";
 import { receiveUpload } from "#app/services/uploads/receive.server.ts";
 import type { Route } from "./+types/uploads";
 
-const largestFile = 5 * 1024 * 1024;
+const largestFileBytes = 50 * 1024 * 1024;
 
 export async function loader({ context, url }: Route.LoaderArgs) {
   const actor = townActor(context);
   const kind = url.searchParams.get("kind");
   return {
     userId: actor.userId,
-    kind: isUploadKind(kind) ? kind : "season-figures",
+    kind: isUploadKind(kind) ? kind : "storms",
     kinds: Object.entries(uploadKinds).map(([value, { label }]) => ({ value, label })),
     uploads: await listUploads(actor),
   };
 }
 
-async function readForm(request: Request) {
-  try {
-    const form = await parseFormData(request, { maxFiles: 1, maxFileSize: largestFile });
-    const file = form.get("file");
-    const kind = form.get("kind");
-    if (!isUploadKind(kind)) return { ok: false, status: 400, message: "Choose what the file holds." } as const;
-    if (!(file instanceof File) || file.name === "")
-      return { ok: false, status: 400, message: "Choose a file first." } as const;
-    return { ok: true, kind, file } as const;
-  } catch (error) {
-    if (error instanceof MaxFileSizeExceededError) {
-      return {
-        ok: false,
-        status: 413,
-        message: "This file is over 5 MB. Split it, or leave out what is not needed.",
-      } as const;
-    }
-    if (error instanceof FormDataParseError) {
-      return {
-        ok: false,
-        status: 400,
-        message: "The file did not arrive whole. Choose it again and send it once more.",
-      } as const;
-    }
-    throw error;
-  }
+const refusals = {
+  "too-large": { status: 413, message: "This file is over 50 MB. Split it by season and upload the parts." },
+  "not-whole": { status: 400, message: "The file did not arrive whole. Choose it again and send it once more." },
+  "not-a-form": { status: 400, message: "This was not sent as a file. Choose it in the form below." },
+  "disk-full": { status: 507, message: "There is no room for this file just now. Nothing was kept; try again later." },
+} as const;
+
+function refuse(status: number, message: string) {
+  return data({ message }, { status, ...(status === 413 ? { statusText: "Content Too Large" } : {}) });
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await readForm(request);
-  if (!form.ok) return data({ message: form.message }, { status: form.status });
-  const content = new Uint8Array(await form.file.arrayBuffer());
-  const uploadId = await receiveUpload(townActor(context), { kind: form.kind, fileName: form.file.name, content });
-  return redirect(`/uploads/${uploadId}`);
+  const actor = townActor(context);
+  const place = await temporaryFile();
+  try {
+    const form = await receiveForm(request, place.path, largestFileBytes);
+    if (!form.ok) return refuse(refusals[form.reason].status, refusals[form.reason].message);
+    const kind = form.fields.get("kind");
+    if (!isUploadKind(kind)) return refuse(400, "Choose what the file holds.");
+    if (!form.file) return refuse(400, "Choose a file first.");
+    if (form.file.byteCount === 0) {
+      return refuse(400, `“${form.file.fileName}” is empty. Choose the file again, or save it once more.`);
+    }
+    const { uploadId, isKnown } = await receiveUpload(actor, kind, form.file, place.path);
+    return redirect(`/uploads/${uploadId}${isKnown ? "?known" : ""}`);
+  } finally {
+    await place.remove();
+  }
 }
 
 export const meta: Route.MetaFunction = () => [{ title: "Uploads · Commonweigh" }];
 
-const stateWords = (state: "checked" | "accepted", errorCount: number) => {
-  if (state === "accepted") return "accepted";
-  return errorCount === 0 ? "ready to accept" : countWords(errorCount, "error", "errors");
-};
+type Line = Route.ComponentProps["loaderData"]["uploads"][number];
+
+function stateWords({ state, errorCount, isReplaced }: Line) {
+  switch (state) {
+    case "received":
+    case "checking":
+      return "being read";
+    case "matching":
+      return "columns to match";
+    case "checked":
+      return errorCount === 0 ? "ready to accept" : `${countWords(errorCount, "row", "rows")} to put right`;
+    case "accepting":
+      return "being taken in";
+    case "accepted":
+      return isReplaced ? "accepted, since given way" : "accepted";
+    case "cancelled":
+      return "taken back";
+    case "failed":
+      return "cannot be read";
+  }
+}
+
+function answer(uploads: readonly Line[]) {
+  const open = uploads.filter(({ state }) => state === "checked" || state === "matching").length;
+  if (open > 0) return `${open === 1 ? "One file waits" : `${open} files wait`} for you to put right or accept.`;
+  return "Upload a file: every row is checked, and nothing counts until you accept it.";
+}
 
 export default function Uploads({ loaderData, actionData }: Route.ComponentProps) {
   const { kind, kinds, uploads, userId } = loaderData;
   const isSending = useNavigation().formMethod === "POST";
-  const open = uploads.filter(({ state }) => state === "checked").length;
   return (
     <Page>
-      <Answer>
-        {open === 0
-          ? "Upload a file: every row is checked, and nothing counts until you accept it."
-          : `${open === 1 ? "One file waits" : `${open} files wait`} for you to put right or accept.`}
-      </Answer>
-      <Method>A CSV file of at most 5 MB, as any spreadsheet saves it. The file is kept as it came.</Method>
+      <Answer>{answer(uploads)}</Answer>
+      <Method>
+        A CSV file or an .xlsx workbook of at most 50 MB and 250,000 rows, with the columns it happens to have. The file
+        is kept as it came.
+      </Method>
       {actionData && (
         <ErrorSummary key={actionData.message} errors={[{ fieldId: "file", message: actionData.message }]} />
       )}
@@ -99,12 +115,12 @@ export default function Uploads({ loaderData, actionData }: Route.ComponentProps
         <FileField
           name="file"
           label="The file"
-          accept=".csv,text/csv"
+          accept=".csv,.xlsx,text/csv,application/vnd.openxmlformats-officedocument.spreadsheetml.sheet"
           required
           error={actionData?.message}
           hint={
             <>
-              Templates:{" "}
+              Nothing to fill in yet? Templates:{" "}
               {kinds.map(({ value, label }, position) => (
                 <span key={value}>
                   {position > 0 && ", "}
@@ -118,7 +134,7 @@ export default function Uploads({ loaderData, actionData }: Route.ComponentProps
           }
         />
         <div>
-          <Button busy={isSending && "Checking every row"}>Check the file</Button>
+          <Button busy={isSending && "Sending the file"}>Check the file</Button>
         </div>
       </KeptForm>
       {uploads.length > 0 && (
@@ -137,10 +153,14 @@ export default function Uploads({ loaderData, actionData }: Route.ComponentProps
             rows={uploads.map((upload) => ({
               key: String(upload.id),
               cells: {
-                file: <TextLink to={`/uploads/${upload.id}`}>{upload.fileName}</TextLink>,
-                kind: kinds.find(({ value }) => value === upload.kind)?.label.toLowerCase() ?? "",
+                file: (
+                  <TextLink to={`/uploads/${upload.id}`} className="[overflow-wrap:anywhere]">
+                    {upload.fileName}
+                  </TextLink>
+                ),
+                kind: upload.kindLabel.toLowerCase(),
                 rows: upload.rowCount.toLocaleString("en-US"),
-                state: stateWords(upload.state, upload.errorCount),
+                state: stateWords(upload),
                 when: formatInstant(upload.createdAt),
               },
             }))}

@@ -1,126 +1,184 @@
 import type { Transaction } from "sequelize";
-import { z } from "zod";
 import type { TownActor } from "#app/context.ts";
-import {
-  calibrationFileColumns,
-  calibrationKey,
-  readCalibrationRows,
-  type StagedCalibration,
-} from "#app/domain/calibration/calibration-file.ts";
+import { calibrationFileColumns } from "#app/domain/calibration/calibration-file.ts";
 import type { FileProblem, FileRow } from "#app/domain/file-problem.ts";
-import { readSeasonRows, seasonFileColumns, type StagedSeason } from "#app/domain/season/season-file.ts";
-import { now } from "#app/lib/clock.server.ts";
-import { Calibration } from "#app/models/calibration.server.ts";
-import { Material } from "#app/models/material.server.ts";
-import { Season } from "#app/models/season.server.ts";
-import { SeasonFigure } from "#app/models/season-figure.server.ts";
-import { Truck } from "#app/models/truck.server.ts";
+import { seasonFileColumns } from "#app/domain/season/season-file.ts";
+import { readStockRow, stockFields, stockTemplate } from "#app/domain/season/stock-file.ts";
+import { stormFields, stormTemplate } from "#app/domain/season/storm-fields.ts";
+import { readStormRow } from "#app/domain/season/storm-file.ts";
+import type { UploadField } from "#app/domain/upload/field.ts";
 import type { UploadKind } from "#app/models/upload.server.ts";
+import { checkCalibrations, checkSeasons } from "./whole-files.server.ts";
+import { calibrationFields, seasonFields } from "./template-fields.ts";
+import { stockKnowledge, stormKnowledge, townMaterials } from "./knowledge.server.ts";
 
-const Positive = z.number().positive();
-const Amount = z.number().nonnegative();
+/** What a row came to: what would be stored, or null while an error stands; and what is wrong or doubtful. */
+export type RowOutcome = { staged: unknown; problems: FileProblem[] };
 
-export const StagedSeasons = z.array(
-  z.object({
-    row: z.number(),
-    seasonStartYear: z.number().int(),
-    amounts: z.object({
-      laneMiles: Positive,
-      eventCount: Amount,
-      saltLb: Amount,
-      mixLb: Amount,
-      mixSaltShare: Amount.nullable(),
-      sandLb: Amount,
-      brineGal: Amount.nullable(),
-      materialCostCents: Amount.nullable(),
-    }),
-  }),
-) satisfies z.ZodType<StagedSeason[]>;
+/** Reads rows that do not depend on each other. */
+export type RowReader = (row: FileRow) => RowOutcome;
 
-export const StagedCalibrations = z.array(
-  z.object({
-    row: z.number(),
-    truckId: z.number().int(),
-    unitNumber: z.string(),
-    materialId: z.number().int(),
-    materialName: z.string(),
-    testedOn: z.string(),
-    gateOpeningIn: Positive,
-    counts: z.array(z.object({ setting: z.number().int(), revolutions: Positive, seconds: Positive })),
-    catches: z.array(z.object({ revolutions: Positive, grossLb: Positive, tareLb: Amount })),
-  }),
-) satisfies z.ZodType<StagedCalibration[]>;
+type Reading =
+  | { by: "row"; reader: (actor: TownActor, transaction?: Transaction) => Promise<RowReader> }
+  /** Rows that make sense only together; at most so many. */
+  | {
+      by: "file";
+      mostRows: number;
+      check: (actor: TownActor, rows: readonly FileRow[]) => Promise<Map<number, RowOutcome>>;
+    }
+  /** The public archive's own layout: no columns to match. */
+  | { by: "station" };
 
-type Checked = { staged: unknown[]; problems: FileProblem[] };
-type Kind = {
+export type Kind = {
   label: string;
-  columns: readonly string[];
-  /** A row that shows how to fill the template in. */
-  example: readonly (readonly string[])[];
-  check: (actor: TownActor, rows: readonly FileRow[], transaction: Transaction) => Promise<Checked>;
+  /** One row and many, in a sentence. */
+  things: { one: string; many: string };
+  /** Where what was accepted is seen. */
+  home: { to: string; words: string };
+  fields: (actor: TownActor) => Promise<readonly UploadField[]>;
+  /** The heads of the file to fill in, and rows that show how. */
+  template: (actor: TownActor) => Promise<{ heads: readonly string[]; example: readonly (readonly string[])[] }>;
+  reading: Reading;
+  /** Whether the rest makes sense without the rows that have errors. */
+  canLeaveOut: boolean;
+  /** Whether a later file of the same days takes the place of an earlier one. */
+  isReplacing: boolean;
 };
 
-async function checkSeasons(actor: TownActor, rows: readonly FileRow[], transaction: Transaction): Promise<Checked> {
-  const [seasons, figures] = await Promise.all([
-    Season.findAll({ attributes: ["startYear"], transaction }),
-    SeasonFigure.findAll({ where: { townId: actor.townId }, transaction }),
-  ]);
-  return readSeasonRows(rows, {
-    seasonStartYears: seasons.map((season) => season.startYear),
-    closedStartYears: figures
-      .filter((figure) => figure.state === "sent" || figure.state === "accepted")
-      .map((figure) => figure.seasonStartYear),
-    earlier: figures
-      .filter((figure) => figure.state === "accepted")
-      .map((figure) => ({ seasonStartYear: figure.seasonStartYear, amounts: figure })),
-  });
+async function stormReader(actor: TownActor, transaction?: Transaction): Promise<RowReader> {
+  const known = await stormKnowledge(actor, transaction);
+  return (row) => readStormRow(row, known);
 }
 
-async function checkCalibrations(
-  actor: TownActor,
-  rows: readonly FileRow[],
-  transaction: Transaction,
-): Promise<Checked> {
-  const where = { townId: actor.townId };
-  const [trucks, materials, calibrations] = await Promise.all([
-    Truck.findAll({ where, transaction }),
-    Material.findAll({ where, transaction }),
-    Calibration.findAll({ where, attributes: ["truckId", "materialId", "testedOn", "gateOpeningIn"], transaction }),
-  ]);
-  return readCalibrationRows(rows, {
-    trucks: trucks.map(({ id, unitNumber, gateMaxIn, workingSetting }) => ({
-      id,
-      unitNumber,
-      gateMaxIn,
-      workingSetting,
-    })),
-    materials: materials.map(({ id, name }) => ({ id, name })),
-    storedKeys: new Set(
-      calibrations.map((stored) =>
-        calibrationKey(stored.truckId, stored.materialId, stored.testedOn, stored.gateOpeningIn),
-      ),
-    ),
-    today: now().toISOString().slice(0, 10),
-  });
+async function stockReader(actor: TownActor, transaction?: Transaction): Promise<RowReader> {
+  const known = await stockKnowledge(actor, transaction);
+  return (row) => readStockRow(row, known);
+}
+
+async function stormExample(actor: TownActor) {
+  const materials = await townMaterials(actor);
+  const heads = stormTemplate(materials);
+  const shown: Record<string, string> = {
+    start_date: "2026-01-05",
+    start_time: "04:30",
+    end_date: "2026-01-05",
+    end_time: "11:00",
+    kind: "snow",
+    pavement_temp_f: "27",
+    passes: "2",
+    lane_miles: "24",
+    hours: "6.5",
+    truck: "12",
+    route: "North hill",
+    note: "",
+  };
+  const [first] = materials;
+  const amountHead = first
+    ? heads.find((head) => head.startsWith(first.name.toLowerCase().split(" ")[0] ?? ""))
+    : undefined;
+  const row = heads.map((head) => shown[head] ?? (head === amountHead ? "5.5" : ""));
+  return { heads, example: [row] };
 }
 
 /** The kinds of file that are taken, each with its columns and its checks. */
 export const uploadKinds: Record<UploadKind, Kind> = {
+  storms: {
+    label: "Storm log",
+    things: { one: "line of the storm log", many: "lines of the storm log" },
+    home: { to: "/season", words: "Open the season" },
+    fields: async (actor) => stormFields(await townMaterials(actor)),
+    template: stormExample,
+    reading: { by: "row", reader: stormReader },
+    canLeaveOut: true,
+    isReplacing: true,
+  },
+  stock: {
+    label: "Stock",
+    things: { one: "stock entry", many: "stock entries" },
+    home: { to: "/season", words: "Open the season" },
+    fields: async () => stockFields,
+    template: async () => ({
+      heads: stockTemplate,
+      example: [
+        ["2025-10-01", "opening", "Salt", "420", "", "measured by tape"],
+        ["2025-11-14", "delivery", "Salt", "210.5", "15997", "pit on the county road"],
+      ],
+    }),
+    reading: { by: "row", reader: stockReader },
+    canLeaveOut: true,
+    isReplacing: true,
+  },
   "season-figures": {
     label: "Season figures",
-    columns: seasonFileColumns,
-    example: [["2025-26", "118", "24", "1890.5", "0", "", "240", "", "131400"]],
-    check: checkSeasons,
+    things: { one: "season", many: "seasons" },
+    home: { to: "/season", words: "Open the season" },
+    fields: async () => seasonFields,
+    template: async () => ({
+      heads: seasonFileColumns,
+      example: [["2025-26", "118", "24", "1890.5", "0", "", "240", "", "131400"]],
+    }),
+    reading: { by: "file", mostRows: 5_000, check: checkSeasons },
+    canLeaveOut: true,
+    isReplacing: false,
   },
   calibrations: {
     label: "Calibrations",
-    columns: calibrationFileColumns,
-    example: [
-      ["12", "Salt", "2026-10-09", "1 7/8", "count", "1", "11.25", "60", "", ""],
-      ["12", "Salt", "2026-10-09", "1 7/8", "count", "2", "19.5", "60", "", ""],
-      ["12", "Salt", "2026-10-09", "1 7/8", "catch", "", "1", "", "9.4", "1.6"],
-    ],
-    check: checkCalibrations,
+    things: { one: "calibration", many: "calibrations" },
+    home: { to: "/fleet", words: "Open the fleet" },
+    fields: async () => calibrationFields,
+    template: async () => ({
+      heads: calibrationFileColumns,
+      example: [
+        ["12", "Salt", "2026-10-09", "1 7/8", "count", "1", "11.25", "60", "", ""],
+        ["12", "Salt", "2026-10-09", "1 7/8", "count", "2", "19.5", "60", "", ""],
+        ["12", "Salt", "2026-10-09", "1 7/8", "catch", "", "1", "", "9.4", "1.6"],
+      ],
+    }),
+    reading: { by: "file", mostRows: 20_000, check: checkCalibrations },
+    // Without one of its readings a calibration would be another one.
+    canLeaveOut: false,
+    isReplacing: false,
+  },
+  weather: {
+    label: "Daily weather",
+    things: { one: "day", many: "days" },
+    home: { to: "/season", words: "Open the season" },
+    fields: async () => [],
+    template: async () => ({
+      heads: [
+        "STATION",
+        "DATE",
+        "TMAX",
+        "TMAX_ATTRIBUTES",
+        "TMIN",
+        "TMIN_ATTRIBUTES",
+        "SNOW",
+        "SNOW_ATTRIBUTES",
+        "SNWD",
+        "SNWD_ATTRIBUTES",
+        "PRCP",
+        "PRCP_ATTRIBUTES",
+      ],
+      example: [
+        [
+          "USC00000001",
+          "2026-01-15",
+          "-22",
+          ",,0,0700",
+          "-100",
+          ",,0,0700",
+          "51",
+          ",,0,0700",
+          "102",
+          ",,0,0700",
+          "64",
+          ",,0,0700",
+        ],
+      ],
+    }),
+    reading: { by: "station" },
+    canLeaveOut: false,
+    isReplacing: false,
   },
 };
 

@@ -1,0 +1,139 @@
+import { SeasonTable } from "#app/components/season/season-table.tsx";
+import { Timetable } from "#app/components/ui/timetable.tsx";
+import { catchVariationPercent } from "#app/domain/calibration/catch-weight.ts";
+import type { StagedCalibration } from "#app/domain/calibration/calibration-file.ts";
+import type { StagedSeason } from "#app/domain/season/season-file.ts";
+import { seasonTotals } from "#app/domain/season/season-totals.ts";
+import { type StagedStock, stockKindWords } from "#app/domain/season/stock-file.ts";
+import type { StagedStorm } from "#app/domain/season/storm-file.ts";
+import { stormKindWords } from "#app/domain/season/storm-kind.ts";
+import { unitWords } from "#app/domain/upload/measure.ts";
+import {
+  formatDollars,
+  formatInches,
+  formatOneDecimal,
+  formatShortDay,
+  formatTons,
+  formatWhole,
+} from "#app/lib/format.ts";
+
+export type ReadySample = {
+  seasons: StagedSeason[];
+  calibrations: StagedCalibration[];
+  storms: (StagedStorm & { sheetRow: number })[];
+  stock: (StagedStock & { sheetRow: number })[];
+  truckNames: Record<number, string>;
+  materialNames: Record<number, string>;
+};
+
+function Storms({ sample }: { sample: ReadySample }) {
+  const used = (storm: StagedStorm) =>
+    storm.uses
+      .map(({ materialId, usedLb, usedGal }) => {
+        const amount = usedGal === null ? `${formatTons(usedLb)} tons` : `${formatWhole(usedGal)} gal`;
+        return `${amount} ${sample.materialNames[materialId] ?? ""}`;
+      })
+      .join(", ");
+  return (
+    <Timetable
+      caption="The first rows, as they were understood"
+      columns={[
+        { key: "row", label: "row" },
+        { key: "began", label: "began" },
+        { key: "kind", label: "kind" },
+        { key: "truck", label: "truck" },
+        { key: "miles", label: "lane miles", isNumeric: true },
+        { key: "hours", label: "hours", isNumeric: true },
+        { key: "used", label: "used" },
+      ]}
+      rows={sample.storms.map((storm) => ({
+        key: String(storm.sheetRow),
+        cells: {
+          row: storm.sheetRow,
+          began: `${formatShortDay(storm.startedAt.slice(0, 10))}, ${storm.startedAt.slice(11, 16)}`,
+          kind: stormKindWords[storm.kind],
+          truck: storm.truckId === null ? "–" : (sample.truckNames[storm.truckId] ?? "–"),
+          miles: formatOneDecimal(storm.laneMilesTreated),
+          hours: formatOneDecimal(storm.hours),
+          used: storm.uses.length === 0 ? "–" : used(storm),
+        },
+      }))}
+    />
+  );
+}
+
+function Stock({ sample }: { sample: ReadySample }) {
+  return (
+    <Timetable
+      caption="The first rows, as they were understood"
+      columns={[
+        { key: "row", label: "row" },
+        { key: "day", label: "day" },
+        { key: "what", label: "what" },
+        { key: "material", label: "material" },
+        { key: "written", label: "as written" },
+        { key: "tons", label: "quantity", unit: "tons", isNumeric: true },
+        { key: "price", label: "price", isNumeric: true },
+      ]}
+      rows={sample.stock.map((entry) => ({
+        key: String(entry.sheetRow),
+        cells: {
+          row: entry.sheetRow,
+          day: formatShortDay(entry.day),
+          what: stockKindWords[entry.kind],
+          material: sample.materialNames[entry.materialId] ?? "–",
+          written: `${formatOneDecimal(entry.typedQuantity)} ${unitWords[entry.typedUnit]}`,
+          tons: formatTons(entry.quantityLb),
+          price: formatDollars(entry.priceCents),
+        },
+      }))}
+    />
+  );
+}
+
+function Calibrations({ sample }: { sample: ReadySample }) {
+  return (
+    <Timetable
+      caption="Calibrations as read from the file"
+      columns={[
+        { key: "truck", label: "truck" },
+        { key: "material", label: "material" },
+        { key: "day", label: "weighed" },
+        { key: "gate", label: "gate", unit: "in", isNumeric: true },
+        { key: "counts", label: "settings counted", isNumeric: true },
+        { key: "catches", label: "catches", isNumeric: true },
+        { key: "spread", label: "catches differ by", unit: "%", isNumeric: true },
+      ]}
+      rows={sample.calibrations.map((calibration) => ({
+        key: String(calibration.row),
+        cells: {
+          truck: calibration.unitNumber,
+          material: calibration.materialName,
+          day: formatShortDay(calibration.testedOn),
+          gate: formatInches(calibration.gateOpeningIn),
+          counts: calibration.counts.length,
+          catches: calibration.catches.length,
+          spread: calibration.catches.length === 0 ? "–" : formatOneDecimal(catchVariationPercent(calibration.catches)),
+        },
+      }))}
+    />
+  );
+}
+
+/** What would be taken in, as it was understood. */
+export function ReadyRows({ sample }: { sample: ReadySample }) {
+  if (sample.storms.length > 0) return <Storms sample={sample} />;
+  if (sample.stock.length > 0) return <Stock sample={sample} />;
+  if (sample.calibrations.length > 0) return <Calibrations sample={sample} />;
+  if (sample.seasons.length === 0) return null;
+  return (
+    <SeasonTable
+      caption="As read from the file, and worked out from it"
+      seasons={sample.seasons.map(({ seasonStartYear, amounts }) => ({
+        seasonStartYear,
+        amounts,
+        totals: seasonTotals(amounts),
+      }))}
+    />
+  );
+}

@@ -1,0 +1,159 @@
+import { setTimeout as sleep } from "node:timers/promises";
+import { Op, type Transaction } from "sequelize";
+import { z } from "zod";
+import type { TownActor } from "#app/context.ts";
+import { now } from "#app/lib/clock.server.ts";
+import { inTransaction } from "#app/lib/db.server.ts";
+import { FileError } from "#app/lib/file-error.ts";
+import { log } from "#app/lib/log.server.ts";
+import { Upload, type UploadState } from "#app/models/upload.server.ts";
+import { type JobHandlers, queueJob, runJobNow } from "../jobs.server.ts";
+
+export type StepName = "upload-read" | "upload-check" | "upload-accept";
+
+/** The state an upload is in while the step is waited for and done. */
+const stateOfStep: Record<StepName, UploadState> = {
+  "upload-read": "received",
+  "upload-check": "checking",
+  "upload-accept": "accepting",
+};
+
+/** Short work is waited for, so that its outcome is on the page one comes to; the rest goes on by itself. */
+const patienceMs = 2_500;
+
+const Payload = z.object({
+  uploadId: z.number().int(),
+  actor: z.object({
+    userId: z.number(),
+    name: z.string(),
+    role: z.enum(["recorder", "director"]),
+    townId: z.number(),
+    townName: z.string(),
+  }),
+});
+
+/**
+ * Ask for the next step of an upload, in the transaction that decides on it.
+ *
+ * @returns the name of the job, for startNow
+ */
+export async function queueStep(
+  actor: TownActor,
+  upload: Upload,
+  step: StepName,
+  transaction: Transaction,
+): Promise<string> {
+  const run = upload.run + 1;
+  await upload.update({ state: stateOfStep[step], run, failure: null }, { transaction });
+  const { userId, name, role, townId, townName } = actor;
+  const payload = { uploadId: upload.id, actor: { userId, name, role, townId, townName } };
+  const dedupeKey = `upload:${upload.id}:${run}`;
+  await queueJob({ kind: step, payload, dedupeKey, createdById: userId }, transaction);
+  return dedupeKey;
+}
+
+/** Begin a queued step at once, and wait a moment for it. */
+export async function startNow(dedupeKey: string, handlers: JobHandlers, requestId: string): Promise<void> {
+  const work = runJobNow(dedupeKey, handlers, requestId).catch((error: unknown) => {
+    log.error({ requestId, dedupeKey, reason: String(error) }, "a step of an upload broke off; the worker takes it up");
+  });
+  await Promise.race([work, sleep(patienceMs, undefined, { ref: false })]);
+}
+
+/** Thrown when the upload was cancelled, or another process has taken the step over: nothing more is to be done. */
+export class StepOver extends Error {}
+
+/** One step of one upload under way. */
+export type Step = {
+  upload: Upload;
+  actor: TownActor;
+  /**
+   * Write something as part of this step.
+   *
+   * @throws StepOver when it is no longer this step's turn; what `work` wrote is then undone
+   */
+  write: (progress: Progress, work: (transaction: Transaction) => Promise<void>) => Promise<void>;
+};
+type Progress = Partial<
+  Pick<
+    Upload,
+    | "state"
+    | "rowsTotal"
+    | "rowsRead"
+    | "rowsOk"
+    | "rowsCheck"
+    | "rowsError"
+    | "rowsLeftOut"
+    | "matching"
+    | "failure"
+    | "periodStart"
+    | "periodEnd"
+  >
+>;
+
+/**
+ * Take a step on. Whoever took it before and still writes is shut out by the number of the run.
+ *
+ * @returns null when the upload is no longer in that step: it was cancelled, or the step is done
+ */
+async function beginStep(step: StepName, payload: unknown, requestId: string): Promise<Step | null> {
+  const { uploadId, actor } = Payload.parse(payload);
+  const state = stateOfStep[step];
+  const upload = await inTransaction(async (transaction) => {
+    const found = await Upload.findOne({
+      where: { id: uploadId, townId: actor.townId, state },
+      lock: transaction.LOCK.UPDATE,
+      transaction,
+    });
+    return found ? found.update({ run: found.run + 1 }, { transaction }) : null;
+  });
+  if (!upload) return null;
+  const { run } = upload;
+  const write: Step["write"] = (progress, work) =>
+    inTransaction(async (transaction) => {
+      const states = [state, "checking"];
+      const where = { id: uploadId, run, state: { [Op.in]: states } };
+      // First of all, so that the row is locked until the rest is written.
+      const [own] = await Upload.update({ run, ...progress }, { where, transaction });
+      if (own === 0) throw new StepOver();
+      await work(transaction);
+    });
+  return { upload, actor: { kind: "town", ...actor, requestId, sessionId: null }, write };
+}
+
+/**
+ * A job that does one step of an upload. A file that cannot be read is an outcome, not a failed job; a fault of ours
+ * leaves the upload in a state from which it can be started again.
+ *
+ * @param afterFault - the state to fall back to
+ */
+export function stepHandler(step: StepName, afterFault: UploadState, work: (step: Step) => Promise<void>): JobHandlers {
+  return {
+    [step]: async (payload, requestId) => {
+      const begun = await beginStep(step, payload, requestId);
+      if (!begun) return;
+      try {
+        await work(begun);
+      } catch (error) {
+        if (error instanceof StepOver) return;
+        const isFileFault = error instanceof FileError;
+        if (!isFileFault)
+          log.error({ requestId, uploadId: begun.upload.id, step, err: error }, "a step of an upload failed");
+        const failure = isFileFault
+          ? error.message.slice(0, 400)
+          : "Something went wrong on our side, and nothing was taken in. Start this step again.";
+        const state = isFileFault ? "failed" : afterFault;
+        await begun
+          .write({ state, failure }, async () => {})
+          .catch((after: unknown) => {
+            if (!(after instanceof StepOver)) throw after;
+          });
+      }
+    },
+  };
+}
+
+/** Now, for columns that say when. */
+export function settledNow(actor: TownActor) {
+  return { settledAt: now(), settledById: actor.userId };
+}

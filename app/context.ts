@@ -23,8 +23,11 @@ export const actorContext = createContext<Actor>();
 export const visitorContext = createContext<PersonActor | null>();
 /** One per response, for the content security policy. */
 export const nonceContext = createContext<string>();
-/** Names this request in the log, the audit trail and on error pages. */
-export const requestIdContext = createContext<string>();
+/**
+ * Names this request in the log, the audit trail and on error pages. Given by the root middleware; the framework refuses
+ * some requests before that, and they are written down without a name.
+ */
+export const requestIdContext = createContext<string>("none");
 
 type Context = Readonly<Pick<RouterContextProvider, "get">>;
 

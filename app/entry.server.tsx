@@ -6,20 +6,17 @@ import { type EntryContext, isRouteErrorResponse, type RouterContextProvider, Se
 import { nonceContext, requestIdContext } from "#app/context.ts";
 import { NonceContext } from "#app/components/layout/nonce.ts";
 import { env } from "#app/lib/env.server.ts";
+import { placesOf, reasonOf } from "#app/lib/error-reason.ts";
 import { log } from "#app/lib/log.server.ts";
 
 export const streamTimeout = 5_000;
 
 type Handled = { request: Request; context: Readonly<RouterContextProvider> };
 
-/** The one place where unexpected errors are written down. */
+/** Where unexpected errors of loaders, actions and middleware are written down. */
 export function handleError(error: unknown, { request, context }: Handled) {
   if (request.signal.aborted || isRouteErrorResponse(error)) return;
-  const requestId = context.get(requestIdContext);
-  log.error({
-    requestId,
-    err: error instanceof Error ? { message: error.message, stack: error.stack } : { message: String(error) },
-  });
+  log.error({ requestId: context.get(requestIdContext), reason: reasonOf(error), at: placesOf(error) });
 }
 
 function contentPolicy(nonce: string) {
@@ -76,7 +73,7 @@ export default function handleRequest(
         onShellError: reject,
         onError(error: unknown) {
           isFailed = true;
-          if (isShellReady) log.error({ requestId: loadContext.get(requestIdContext), reason: String(error) });
+          if (isShellReady) log.error({ requestId: loadContext.get(requestIdContext), reason: reasonOf(error) });
         },
       },
     );

@@ -1,5 +1,6 @@
 import { use } from "react";
 import {
+  type ErrorResponse,
   isRouteErrorResponse,
   Links,
   Meta,
@@ -90,22 +91,23 @@ export function Layout({ children }: { children: React.ReactNode }) {
 }
 
 /** What a page tells the frame around it. */
-export type FrameHandle = { isWall?: boolean; notForSharing?: boolean };
+export type FrameHandle = { isWall?: boolean; notForSharing?: boolean; isSignIn?: boolean };
 
 function useFrame(): FrameHandle {
   return useMatches().reduce<FrameHandle>((frame, { handle }) => {
     const isHandle = typeof handle === "object" && handle !== null;
     return {
       isWall: frame.isWall === true || (isHandle && "isWall" in handle && handle.isWall === true),
+      isSignIn: frame.isSignIn === true || (isHandle && "isSignIn" in handle && handle.isSignIn === true),
       notForSharing:
         frame.notForSharing === true || (isHandle && "notForSharing" in handle && handle.notForSharing === true),
     };
   }, {});
 }
 
-function Bar({ notForSharing }: { notForSharing: boolean }) {
+function Bar({ notForSharing, isSignIn = false }: { notForSharing: boolean; isSignIn?: boolean }) {
   const frame = useRouteLoaderData<typeof loader>("root");
-  if (!frame?.visitor) return <PublicBar />;
+  if (!frame?.visitor) return <PublicBar hasSignIn={!isSignIn} />;
   const { visitor, period } = frame;
   return (
     <TopBar
@@ -123,7 +125,7 @@ export default function App() {
   if (frame.isWall === true) return <Outlet />;
   return (
     <>
-      <Bar notForSharing={frame.notForSharing === true} />
+      <Bar notForSharing={frame.notForSharing === true} isSignIn={frame.isSignIn === true} />
       <Outlet />
     </>
   );
@@ -132,21 +134,30 @@ export default function App() {
 const titles: Record<number, string> = {
   400: "This request was not understood.",
   401: "You are not signed in.",
-  403: "This page is not for you.",
-  404: "There is no such page here.",
+  403: "This is not open to you.",
   409: "Somebody else was first.",
   413: "This file is too large.",
   503: "Something this page needs is away just now.",
 };
 
+/** A page that is not there says in its first sentence what is not there; the others have a title by their status. */
+function words(error: ErrorResponse | null) {
+  const message = error !== null && isPublicError(error.data) ? error.data.message : null;
+  const [first = "", ...rest] = message?.split(/(?<=\.) /) ?? [];
+  if (error?.status === 404 && message !== null) return { title: first, message: rest.join(" ") };
+  return { title: titles[error?.status ?? 500] ?? "Something went wrong on our side.", message };
+}
+
 export function ErrorBoundary({ error }: Route.ErrorBoundaryProps) {
   const frame = useRouteLoaderData<typeof loader>("root");
   const isExpected = isRouteErrorResponse(error);
-  const title = (isExpected ? titles[error.status] : undefined) ?? "Something went wrong on our side.";
-  const message = isExpected && isPublicError(error.data) ? error.data.message : null;
+  const isSignedIn = frame?.visitor !== undefined && frame.visitor !== null;
+  // Whoever is told that a page is not open to them has signed in, though the refusal comes before their name is read.
+  const isKnown = isSignedIn || (isExpected && error.status === 403);
+  const { title, message } = words(isExpected ? error : null);
   return (
     <>
-      <Bar notForSharing={false} />
+      {isKnown && !isSignedIn ? <PublicBar hasSignIn={false} /> : <Bar notForSharing={false} />}
       <Page>
         <Answer>{title}</Answer>
         {message !== null && <Method>{message}</Method>}
@@ -157,8 +168,8 @@ export function ErrorBoundary({ error }: Route.ErrorBoundaryProps) {
           </Method>
         )}
         <p className="mt-6">
-          <ButtonLink to={frame?.visitor ? "/today" : "/"} isDocument>
-            {frame?.visitor ? "Go to Today" : "Go to the front page"}
+          <ButtonLink to={isKnown ? "/today" : "/"} isDocument>
+            {isKnown ? "Go to Today" : "Go to the front page"}
           </ButtonLink>
         </p>
       </Page>

@@ -101,6 +101,18 @@ module.exports = {
       to: { path: "^node_modules/csv-" },
     },
     {
+      name: "one-owner-workbook",
+      severity: "error",
+      from: { path: "^app", pathNot: "^app/lib/workbook" },
+      to: { path: "^node_modules/(exceljs|yauzl)" },
+    },
+    {
+      name: "one-owner-forms-with-files",
+      severity: "error",
+      from: { path: "^app", pathNot: "^app/lib/multipart" },
+      to: { path: "^node_modules/(busboy|@remix-run/form-data-parser)" },
+    },
+    {
       name: "one-owner-mail",
       severity: "error",
       from: { path: "^app", pathNot: "^app/lib/mailer" },
@@ -122,7 +134,10 @@ module.exports = {
       name: "lib-is-the-floor",
       severity: "error",
       from: { path: ["^app/lib", "^app/context\\.ts$"] },
-      to: { path: "^app", pathNot: ["^app/lib", "^app/domain/(units|dates|readings|file-problem)"] },
+      to: {
+        path: "^app",
+        pathNot: ["^app/lib", "^app/domain/(units|dates|readings|file-problem|severity/weather-day)"],
+      },
     },
     { name: "app-border", severity: "error", from: { path: "^app" }, to: { path: "^(tests|idp|scripts|data)/" } },
     { name: "idp-border", severity: "error", from: { path: "^idp" }, to: { path: "^app" } },

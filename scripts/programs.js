@@ -17,9 +17,10 @@ import { appEnvironment, plainEnvironment } from "./settings.js";
  * @param {boolean} given.devPages
  * @param {boolean} given.hasDemoPeople
  * @param {string} [given.faults] "1" lets tests make the provider fail
+ * @param {string} [given.logLevel] of the application; "info" when not given
  * @param {AbortSignal} [given.signal] stops the waiting, and what was started
  * @returns {Promise<{ origin: string, idpOrigin: string, mailOrigin: string, env: Record<string, string>,
- *   firstEnd: Promise<string>, stop: () => Promise<void> }>} firstEnd: the last words of the first program to end by itself
+ *   appPid: number, firstEnd: Promise<string>, stop: () => Promise<void> }>} firstEnd: the last words of the first program to end by itself
  * @throws {Failure} when one does not come up; the others are stopped first
  */
 export async function startPrograms(given) {
@@ -69,7 +70,7 @@ export async function startPrograms(given) {
   const firstEnd = Promise.race(
     inStoppingOrder.map((program) => program.ended.then(() => lastWords(program, "has ended"))),
   );
-  return { origin, idpOrigin: env.OIDC_ISSUER, mailOrigin, env, firstEnd, stop };
+  return { origin, idpOrigin: env.OIDC_ISSUER, mailOrigin, env, appPid: app.child.pid ?? 0, firstEnd, stop };
 }
 
 /** @template T @param {AbortSignal | undefined} signal @param {Promise<T>} work @returns {Promise<T>} */

@@ -18,11 +18,15 @@ export function refusalOf({ method, url, headers }, host) {
   if (path === null) return { status: 400, sentence: "This address is malformed." };
   if (headers.host !== host && path !== "/healthz")
     return { status: 421, sentence: "This address is not served here." };
-  // Without a length the application's own limits hold; with one there is no need to read the body at all.
+  // A body in chunks says its length only once it is there. Browsers never send one, so none need be read.
+  if (headers["transfer-encoding"] !== undefined) {
+    return { status: 411, sentence: "Send the length of what you send.", headers: { Connection: "close" } };
+  }
   const isUpload = isUploadOfFile({ method, url });
   if (Number(headers["content-length"] ?? 0) > (isUpload ? uploadLimitBytes : bodyLimitBytes)) {
-    const sentence = `This is more than ${isUpload ? "50" : "6"} MB. Send a smaller file.`;
-    return { status: 413, sentence, headers: { Connection: "close" } };
+    // The connection stays: closed in the middle of the sending, it would be all that a browser tells of the answer. What
+    // still comes is thrown away, for as long as the server's time for one request.
+    return { status: 413, sentence: `This is more than ${isUpload ? "50" : "6"} MB. Send a smaller file.` };
   }
   return null;
 }

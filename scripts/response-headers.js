@@ -19,6 +19,21 @@ export function defaultHeaders(origin) {
 }
 
 /**
+ * The default headers of one address: a service worker has a policy of its own, and fetches for the pages of this site.
+ *
+ * @param {Record<string, string>} headers the defaults
+ * @param {string} path without its query
+ * @returns {Record<string, string>}
+ */
+export function headersFor(headers, path) {
+  if (path !== "/sw.js") return headers;
+  return {
+    ...headers,
+    "Content-Security-Policy": "default-src 'none'; connect-src 'self'; frame-ancestors 'none'",
+  };
+}
+
+/**
  * Fill in the default headers at the last moment, when it is known which ones the answer has set itself. Setting them
  * earlier would send some twice, since the framework adds headers instead of replacing them.
  *

@@ -4,7 +4,7 @@ import { fileURLToPath, pathToFileURL } from "node:url";
 import { createRequestHandler } from "@react-router/express";
 import express from "express";
 import { isUploadOfFile, refusalOf } from "./refusal.js";
-import { defaultHeaders, fillInHeaders, unreadableRequestAnswer } from "./response-headers.js";
+import { defaultHeaders, fillInHeaders, headersFor, unreadableRequestAnswer } from "./response-headers.js";
 import { projectFolder } from "./settings.js";
 import { stopOnRequest } from "./stop.js";
 
@@ -22,7 +22,8 @@ export function createServer({ build, origin }) {
   const app = express().disable("x-powered-by").set("trust proxy", "loopback");
 
   app.use((request, response, next) => {
-    fillInHeaders(response, headers);
+    fillInHeaders(response, headersFor(headers, request.path));
+    response.on("finish", () => discardRest(request));
     const refusal = refusalOf(request, address.host);
     if (refusal !== null) return sendPlain(response.set(refusal.headers ?? {}), refusal.status, refusal.sentence);
     for (const name of Object.keys(request.headers)) {
@@ -50,10 +51,15 @@ export function createServer({ build, origin }) {
   });
 }
 
+/** Left unread, what still comes of a form that is answered already would keep the connection's next request waiting. */
+function discardRest(request) {
+  request.removeAllListeners("data");
+  request.resume();
+}
+
 /** Only files may take their time: whoever sends anything else byte by byte is cut off after half a minute. */
 function endWhenSlow(request) {
-  const hasBody = "transfer-encoding" in request.headers || Number(request.headers["content-length"] ?? 0) > 0;
-  if (!hasBody) return;
+  if (Number(request.headers["content-length"] ?? 0) === 0) return;
   const limit = setTimeout(() => {
     if (!request.complete) request.destroy();
   }, 30_000);

@@ -49,9 +49,10 @@ export function loadSettings(folder) {
  * @param {{ host: string, port: number }} given.mariadb
  * @param {string} given.database
  * @param {boolean} given.devPages whether pages for developers are served
+ * @param {string} [given.logLevel]
  * @returns {Record<string, string>}
  */
-export function appEnvironment({ settings, ports, mariadb, database, devPages }) {
+export function appEnvironment({ settings, ports, mariadb, database, devPages, logLevel = "info" }) {
   return {
     NODE_ENV: "production",
     HOST: "127.0.0.1",
@@ -70,6 +71,7 @@ export function appEnvironment({ settings, ports, mariadb, database, devPages })
     MAIL_FROM: "Commonweigh <network@commonweigh.example>",
     WORKER_TOKEN: settings.workerToken,
     DEV_PAGES: devPages ? "1" : "0",
+    LOG_LEVEL: logLevel,
   };
 }
 

@@ -12,6 +12,16 @@ function canBatch(connection: unknown): connection is BatchConnection {
   );
 }
 
+/** Carries the database's error the way models do, so that whoever asks for its code finds it. */
+class BulkError extends Error {
+  readonly original: unknown;
+
+  constructor(original: unknown) {
+    super("Rows could not be inserted in bulk.", { cause: original });
+    this.original = original;
+  }
+}
+
 /** Rows sent to the database at a time. */
 export const bulkRows = 2000;
 
@@ -26,6 +36,10 @@ export async function insertRows(sql: string, rows: Cell[][], transaction: Trans
   const connection: unknown = Reflect.get(transaction, "connection");
   if (!canBatch(connection)) throw new Error("This transaction has no connection that can take rows in bulk.");
   for (let start = 0; start < rows.length; start += bulkRows) {
-    await connection.batch(sql, rows.slice(start, start + bulkRows));
+    try {
+      await connection.batch(sql, rows.slice(start, start + bulkRows));
+    } catch (error) {
+      throw new BulkError(error);
+    }
   }
 }

@@ -1,5 +1,6 @@
 import { Sequelize, type Transaction } from "sequelize";
 import { env } from "./env.server.ts";
+import { databaseCode } from "./error-reason.ts";
 
 declare global {
   // The server entry closes the pool through this when it is told to stop.
@@ -35,13 +36,6 @@ globalThis.__commonweigh = { close: () => db.close() };
 
 const retryable = new Set(["ER_LOCK_DEADLOCK", "ER_LOCK_WAIT_TIMEOUT", "ER_CHECKREAD"]);
 
-function driverCode(error: unknown): string | null {
-  if (typeof error !== "object" || error === null || !("original" in error)) return null;
-  const original = error.original;
-  if (typeof original !== "object" || original === null || !("code" in original)) return null;
-  return typeof original.code === "string" ? original.code : null;
-}
-
 /**
  * Run `work` in a transaction and, when the database asks for another try (deadlock, lock wait), run the whole of it
  * again in a new one. `work` must do nothing that a rollback does not undo: no mail, no fetch, no file.
@@ -54,7 +48,7 @@ export async function inTransaction<T>(work: (transaction: Transaction) => Promi
     try {
       return await db.transaction(work);
     } catch (error) {
-      if (attempt === 5 || !retryable.has(driverCode(error) ?? "")) throw error;
+      if (attempt === 5 || !retryable.has(databaseCode(error) ?? "")) throw error;
       await new Promise((resume) => setTimeout(resume, 20 * 2 ** attempt * (0.5 + Math.random())));
     }
   }

@@ -8,12 +8,15 @@ function publicError(status: number, statusText: string, code: string, message: 
 }
 
 /** 404, also for another town's record: the answer is the same as for one that never was. */
-export function notFound(what: string) {
-  return publicError(
-    404,
-    "Not Found",
-    "not-found",
-    `There is no such ${what} here. It may have moved, or the address is mistyped.`,
+export function notFound(what: string, hint = "It may have moved, or the address is mistyped.") {
+  return publicError(404, "Not Found", "not-found", `There is no such ${what} here. ${hint}`);
+}
+
+/** 404 for an invitation that is unknown, used or past its seven days: the answer is the same for all three. */
+export function invitationGone() {
+  return notFound(
+    "open invitation",
+    "It has been used, or its seven days are over. Ask your coordinator for a new one.",
   );
 }
 

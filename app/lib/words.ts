@@ -5,7 +5,12 @@ export function countWords(count: number, one: string, many: string): string {
   return `${small[count] ?? count.toLocaleString("en-US")} ${count === 1 ? one : many}`;
 }
 
-/** The same with a capital, for the start of a sentence. */
+/** How many towns have not sent. @example missingWords(0) // "none is missing" */
+export function missingWords(count: number): string {
+  return count === 0 ? "none is missing" : `${countWords(count, "has", "have")} not sent`;
+}
+
+/** Words with a capital, for the start of a sentence. */
 export function sentenceStart(text: string): string {
   return text.charAt(0).toUpperCase() + text.slice(1);
 }

@@ -52,7 +52,7 @@ const access: Record<Page, Rule> = {
   "/dataset/editions/:editionId/:file": session(everyone),
 
   "/network": session(["coordinator"]),
-  "/network/review": session(["coordinator"]),
+  "/network/review": session(["coordinator"], ["coordinator"]),
   "/network/review/:figureId": session(["coordinator"], ["coordinator"]),
   "/network/editions": session(["coordinator"], ["coordinator"]),
   "/network/people": session(["coordinator"], ["coordinator"]),

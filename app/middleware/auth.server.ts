@@ -56,7 +56,7 @@ export const accessMiddleware: MiddlewareFunction<Response> = async ({ context, 
   const allowed = ["GET", "HEAD"].includes(request.method) ? rule.read : rule.write;
   if (!allowed.includes(actor.role)) {
     log.warn({ event: "access.denied", requestId, role: actor.role, pattern, method: request.method }, "denied");
-    throw forbidden("Your role does not include this page.");
+    throw forbidden("Your role does not include this page. If you need it, ask your coordinator.");
   }
   context.set(actorContext, actor);
 };

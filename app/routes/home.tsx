@@ -65,10 +65,23 @@ export default function Home({ loaderData: { svg } }: Route.ComponentProps) {
           isCaptionHidden
           columns={[
             { key: "who", label: "if you are" },
-            { key: "come", label: "you come to" },
-            { key: "leave", label: "and leave with" },
+            { key: "come", label: "you come to", isProse: true },
+            { key: "leave", label: "and leave with", isProse: true },
           ]}
-          rows={people.map((person) => ({ key: person.who, cells: person }))}
+          rows={people.map(({ who, come, leave }) => ({
+            key: who,
+            cells: {
+              who,
+              come,
+              // On a phone there is no head to say it.
+              leave: (
+                <>
+                  <span className="text-gravel sm:hidden">and leave with </span>
+                  {leave}
+                </>
+              ),
+            },
+          }))}
         />
         <p className="mt-8">
           Towns join through their regional office, by invitation.{" "}

@@ -3,7 +3,7 @@ import { Answer, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import type { Role } from "#app/context.ts";
-import { notFound } from "#app/lib/errors.ts";
+import { invitationGone } from "#app/lib/errors.ts";
 import { getInvitation } from "#app/services/accounts.server.ts";
 import { startSignIn } from "#app/services/sign-in.server.ts";
 import type { Route } from "./+types/invitation";
@@ -16,7 +16,7 @@ const duties: Record<Role, string> = {
 };
 
 function tokenParam(text: string) {
-  if (!/^[\w-]{43}$/.test(text)) throw notFound("open invitation");
+  if (!/^[\w-]{43}$/.test(text)) throw invitationGone();
   return text;
 }
 
@@ -32,10 +32,9 @@ export async function action({ params, request }: Route.ActionArgs) {
   return started ?? redirect("/login?problem=provider-away");
 }
 
-export const meta: Route.MetaFunction = () => [
-  { title: "Invitation · Commonweigh" },
-  { name: "referrer", content: "no-referrer" },
-];
+// The address holds a secret; the Referrer-Policy header keeps it on this site. A stricter policy would make browsers
+// send the form below as Origin: null, which is refused.
+export const meta: Route.MetaFunction = () => [{ title: "Invitation · Commonweigh" }];
 
 export default function Invitation({ loaderData: { name, role, townName } }: Route.ComponentProps) {
   const article = role === "analyst" ? "an" : "a";

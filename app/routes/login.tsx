@@ -10,6 +10,8 @@ import { env } from "#app/lib/env.server.ts";
 import { safeReturnTo } from "#app/lib/return-address.ts";
 import type { Route } from "./+types/login";
 
+export const handle = { isSignIn: true };
+
 const problems: Record<string, { title: string; words: string }> = {
   "provider-away": {
     title: "The sign-in service does not answer.",

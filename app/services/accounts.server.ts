@@ -4,7 +4,7 @@ import { invitationLetter } from "#app/emails/invitation.ts";
 import { dayMs, now } from "#app/lib/clock.server.ts";
 import { inTransaction, isDuplicate } from "#app/lib/db.server.ts";
 import { env } from "#app/lib/env.server.ts";
-import { notFound } from "#app/lib/errors.ts";
+import { invitationGone, notFound } from "#app/lib/errors.ts";
 import { newSecret, sha256 } from "#app/lib/secrets.server.ts";
 import { Invitation } from "#app/models/invitation.server.ts";
 import { Session } from "#app/models/session.server.ts";
@@ -88,7 +88,7 @@ export async function getInvitation(token: string): Promise<InvitationView> {
   const invitation = await Invitation.findOne({
     where: { tokenHash, acceptedAt: null, expiresAt: { [Op.gt]: now() } },
   });
-  if (!invitation) throw notFound("open invitation");
+  if (!invitation) throw invitationGone();
   const town = invitation.townId === null ? null : await Town.findByPk(invitation.townId, { attributes: ["name"] });
   return { name: invitation.name, role: invitation.role, townName: town?.name ?? null, tokenHash };
 }

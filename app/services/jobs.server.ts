@@ -1,6 +1,7 @@
 import { Op, QueryTypes, type Transaction } from "sequelize";
 import { minuteMs, now } from "#app/lib/clock.server.ts";
 import { db, inTransaction } from "#app/lib/db.server.ts";
+import { reasonOf } from "#app/lib/error-reason.ts";
 import { log } from "#app/lib/log.server.ts";
 import { Job, type JobState } from "#app/models/job.server.ts";
 
@@ -12,14 +13,20 @@ const mostAttempts = 3;
 export type NewJob = { kind: string; payload: Record<string, unknown>; dedupeKey: string; createdById: number };
 
 /**
- * Put work into the queue, in the transaction that asks for it.
+ * Put work into the queue, in the transaction that asks for it. Work that failed is put in again.
  *
- * @returns false when the same work was asked for before
+ * @returns false when the same work waits, runs or is done
  */
 export async function queueJob(job: NewJob, transaction: Transaction): Promise<boolean> {
-  const known = await Job.count({ where: { dedupeKey: job.dedupeKey }, transaction });
-  if (known > 0) return false;
-  await Job.create({ ...job, runAfter: now(), createdAt: now() }, { transaction });
+  const known = await Job.findOne({
+    where: { dedupeKey: job.dedupeKey },
+    lock: transaction.LOCK.UPDATE,
+    transaction,
+  });
+  if (known && known.state !== "failed") return false;
+  if (known)
+    await known.update({ ...job, state: "ready", attempts: 0, runAfter: now(), lastError: null }, { transaction });
+  else await Job.create({ ...job, runAfter: now(), createdAt: now() }, { transaction });
   return true;
 }
 
@@ -48,10 +55,20 @@ function keepClaimed(job: Job) {
   const timer = setInterval(() => {
     const lockedUntil = new Date(now().getTime() + leaseMs);
     Job.update({ lockedUntil }, { where: { id, state: "running", attempts } }).catch((error: unknown) => {
-      log.warn({ jobId: id, reason: String(error) }, "claim not renewed");
+      log.warn({ jobId: id, reason: reasonOf(error) }, "claim not renewed");
     });
   }, renewalMs);
   return () => clearInterval(timer);
+}
+
+/** A job whose process died: run again, but no more often than one that fails by itself. */
+async function takeBackAbandonedJobs() {
+  const abandoned = { state: "running", lockedUntil: { [Op.lt]: now() } } as const;
+  await Job.update(
+    { state: "failed", lastError: "The program stopped each time while it was doing this." },
+    { where: { ...abandoned, attempts: { [Op.gte]: mostAttempts } } },
+  );
+  await Job.update({ state: "ready" }, { where: abandoned });
 }
 
 /** Does the work of one kind. */
@@ -72,7 +89,7 @@ async function runClaimed(job: Job, handlers: JobHandlers, requestId: string): P
     await settle(job, { state: "done", finishedAt: now(), lastError: null });
     return true;
   } catch (error) {
-    const reason = error instanceof Error ? error.message.slice(0, 300) : "unknown";
+    const reason = reasonOf(error);
     log.error({ jobId: job.id, kind: job.kind, attempts: job.attempts, reason }, "job failed");
     await settle(
       job,
@@ -87,12 +104,13 @@ async function runClaimed(job: Job, handlers: JobHandlers, requestId: string): P
 }
 
 /**
- * Run every job that is due. Handlers must be safe to run twice: a job whose process died is run again.
+ * Run every job that is due. Handlers must be safe to run twice: a job whose process died is run again, three times in
+ * all.
  *
  * @returns how many were finished
  */
 export async function runDueJobs(handlers: JobHandlers, requestId: string): Promise<number> {
-  await Job.update({ state: "ready" }, { where: { state: "running", lockedUntil: { [Op.lt]: now() } } });
+  await takeBackAbandonedJobs();
   let finished = 0;
   for (;;) {
     const job = await claimJob(null);

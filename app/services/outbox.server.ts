@@ -59,12 +59,12 @@ function mayHaveGoneOut(error: unknown) {
 async function deliver(mail: OutboxMail): Promise<boolean> {
   try {
     await sendMail(mail);
-    await mail.update({ state: "sent", sentAt: now(), lastError: null });
-    return true;
   } catch (error) {
     const wait = waits[mail.attempts - 1];
     const reason = error instanceof Error ? error.message.slice(0, 300) : "unknown";
-    log.warn({ mailId: mail.id, attempts: mail.attempts, reason }, "mail not sent");
+    // The server's own words may repeat the address, so the log gets the code alone.
+    const code = error instanceof Error && "code" in error ? error.code : "unknown";
+    log.warn({ mailId: mail.id, attempts: mail.attempts, code }, "mail not sent");
     await mail.update(
       mayHaveGoneOut(error)
         ? { state: "uncertain", lastError: reason }
@@ -74,6 +74,9 @@ async function deliver(mail: OutboxMail): Promise<boolean> {
     );
     return false;
   }
+  // Outside the try: a mail that went out is not queued again because the note of it failed.
+  await mail.update({ state: "sent", sentAt: now(), lastError: null });
+  return true;
 }
 
 /**

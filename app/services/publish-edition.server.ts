@@ -9,7 +9,7 @@ import type { WithheldReason } from "#app/domain/peers/cell.ts";
 import { type IndicatorKey, isIndicatorKey } from "#app/domain/peers/indicators.ts";
 import { editionLetter } from "#app/emails/season.ts";
 import { now } from "#app/lib/clock.server.ts";
-import { inTransaction } from "#app/lib/db.server.ts";
+import { inTransaction, isDuplicate } from "#app/lib/db.server.ts";
 import { env } from "#app/lib/env.server.ts";
 import { sha256 } from "#app/lib/secrets.server.ts";
 import { Edition } from "#app/models/edition.server.ts";
@@ -80,13 +80,14 @@ export async function previewEdition(_actor: NetworkActor, seasonStartYear: numb
 }
 
 /**
- * Ask for an edition to be computed and published. It is done by the queue; asking twice asks once.
+ * Ask for an edition to be computed and published. It is done by the queue; asking twice asks once, and asking again
+ * after it failed has it tried again.
  *
  * @param number - the number the coordinator was shown
  * @returns `{ ok: false }` when another edition was published meanwhile
  */
 export async function requestEdition(actor: NetworkActor, seasonStartYear: number, number: number) {
-  return inTransaction(async (transaction) => {
+  const request = async (transaction: Transaction) => {
     const last = await Edition.max<number | null, Edition>("number", { where: { seasonStartYear }, transaction });
     if (number !== (last ?? 0) + 1) return { ok: false, reason: "published-meanwhile" } as const;
     const payload = { seasonStartYear, number, requestedById: actor.userId, isAnnounced: true };
@@ -103,7 +104,14 @@ export async function requestEdition(actor: NetworkActor, seasonStartYear: numbe
       );
     }
     return { ok: true } as const;
-  });
+  };
+  try {
+    return await inTransaction(request);
+  } catch (error) {
+    // The same button was pressed twice in one moment: the other press has asked.
+    if (!isDuplicate(error)) throw error;
+    return { ok: true } as const;
+  }
 }
 
 const Payload = z.object({

@@ -1,4 +1,4 @@
-import type { Transaction } from "sequelize";
+import { Op, type Transaction } from "sequelize";
 import type { NetworkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { seasonAcceptedLetter, seasonReturnedLetter } from "#app/emails/season.ts";
@@ -45,7 +45,7 @@ export async function getReviewQueue(_actor: NetworkActor, seasonStartYear: numb
   const ofSeason = figures.filter((figure) => figure.seasonStartYear === seasonStartYear);
   const items = ofSeason.map((figure) => {
     const earlier = figures.filter(
-      (other) => other.townId === figure.townId && other.seasonStartYear < seasonStartYear,
+      (other) => other.townId === figure.townId && other.seasonStartYear < seasonStartYear && other.state !== "draft",
     );
     const view = figureView(figure, earlier);
     return { figure: view, townName: figure.town?.name ?? "", doubts: doubtsOf(view) };
@@ -71,7 +71,9 @@ export type FigureReview = { figure: FigureView; townName: string; earlier: Figu
 export async function getFigureReview(_actor: NetworkActor, figureId: number): Promise<FigureReview> {
   const figure = await SeasonFigure.findByPk(figureId, { include: [figureTown] });
   if (!figure || figure.state === "draft") throw notFound("sent season");
-  const figures = await SeasonFigure.findAll({ where: { townId: figure.townId }, order: [["seasonStartYear", "ASC"]] });
+  // Neither shown nor compared with: what a town has not sent is not the coordinator's to see.
+  const where = { townId: figure.townId, state: { [Op.ne]: "draft" } };
+  const figures = await SeasonFigure.findAll({ where, order: [["seasonStartYear", "ASC"]] });
   const earlier = figures.filter((other) => other.seasonStartYear < figure.seasonStartYear);
   const before = (year: number) => figures.filter((other) => other.seasonStartYear < year);
   return {

@@ -6,6 +6,7 @@ import { Op } from "sequelize";
 import { z } from "zod";
 import { minuteMs, now } from "#app/lib/clock.server.ts";
 import { env } from "#app/lib/env.server.ts";
+import { reasonOf } from "#app/lib/error-reason.ts";
 import { log } from "#app/lib/log.server.ts";
 import { safeReturnTo } from "#app/lib/return-address.ts";
 import { sha256 } from "#app/lib/secrets.server.ts";
@@ -134,7 +135,7 @@ export async function startSignIn(request: Request, start: Start): Promise<Respo
     throw new Error("The strategy did not redirect.");
   } catch (outcome) {
     if (!(outcome instanceof Response)) {
-      log.error({ reason: outcome instanceof Error ? outcome.message : "unknown" }, "sign-in service away");
+      log.error({ reason: reasonOf(outcome) }, "sign-in service away");
       return null;
     }
     const address = new URL(outcome.headers.get("Location") ?? "");
@@ -193,7 +194,7 @@ export async function finishSignIn(request: Request): Promise<SignInOutcome> {
     const { authenticator } = await provider();
     identity = await authenticator.authenticate("oidc", onOurOrigin(request, `/auth/callback${url.search}`));
   } catch (error) {
-    log.warn({ event: "sign-in.failed", reason: error instanceof Error ? error.message : "unknown" }, "sign-in failed");
+    log.warn({ event: "sign-in.failed", reason: reasonOf(error) }, "sign-in failed");
     return { ok: false, reason: error instanceof OAuth2RequestError ? "refused" : "start-again" };
   }
   const opened = await openAccount(identity, attempt.invitationHash, request.headers.get("user-agent") ?? "");

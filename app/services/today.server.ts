@@ -16,6 +16,8 @@ export type FleetLine = {
   place: "under" | "in" | "over" | null;
   testedOn: string | null;
   isDue: boolean;
+  /** Weighed again, and not yet approved. */
+  isWaiting: boolean;
 };
 
 export type TownToday = {
@@ -37,6 +39,9 @@ export async function getTownToday(actor: TownActor): Promise<TownToday> {
       const salt = truck.calibrations.find(
         ({ materialKind, state }) => materialKind === "salt" && state === "approved",
       );
+      const isWaiting = truck.calibrations.some(
+        ({ materialKind, state }) => materialKind === "salt" && state === "ready",
+      );
       return {
         truckId: truck.id,
         unitNumber: truck.unitNumber,
@@ -44,7 +49,8 @@ export async function getTownToday(actor: TownActor): Promise<TownToday> {
         rateLbPerLaneMile: salt?.workingRateLbPerLaneMile ?? null,
         place: salt?.workingPlace ?? null,
         testedOn: salt?.testedOn ?? null,
-        isDue: dueState(salt?.testedOn ?? null, today) !== "in-date",
+        isDue: !isWaiting && dueState(salt?.testedOn ?? null, today) !== "in-date",
+        isWaiting,
       };
     });
   const ready = trucks.flatMap((truck) => truck.calibrations).filter(({ state }) => state === "ready");

@@ -59,7 +59,12 @@ export function layOutStrip(spec: LaneStripSpec, size: StripSize, widthPx: numbe
   const flag = parts.hasFlag && spec.own !== null ? layOutFlag(spec, spec.own, x, widthPx) : null;
   const band = layOutBand(spec, x, widthPx, labelPx, flag);
   const laneTop =
-    (flag === null ? 0 : 30) + (band === null ? (flag === null ? 2 : 0) : 18 * scale + (flag === null ? 4 : 0));
+    (flag === null ? 0 : 30) +
+    (band === null
+      ? flag === null
+        ? 2
+        : 0
+      : 18 * scale + (flag === null || isUnderCloth(band, flag, labelPx) ? 4 : 0));
   const laneBottom = laneTop + laneHeight;
   const base = { x, widthPx, scale, labelPx, laneTop, laneBottom, laneHeight, size };
   const plate = shown === null ? null : layOutPlate(spec, base, flag);
@@ -157,12 +162,14 @@ function layOutBand(spec: LaneStripSpec, x: Base["x"], widthPx: number, labelPx:
   return { x1, x2, label };
 }
 
-function layOutFlag(
-  spec: LaneStripSpec,
-  own: { value: number; label: string; note: string },
-  x: Base["x"],
-  widthPx: number,
-) {
+/** Whether the band's label stands below the cloth of our flag, so that it needs air above. */
+function isUnderCloth({ label }: NonNullable<StripLayout["band"]>, flag: FlagLayout, labelPx: number) {
+  const wide = textWidthPx(label.words, labelPx);
+  const left = label.x - { start: 0, middle: wide / 2, end: wide }[label.anchor];
+  return left < Math.max(flag.x, flag.flyX) && left + wide > Math.min(flag.x, flag.flyX);
+}
+
+function layOutFlag(spec: LaneStripSpec, own: NonNullable<LaneStripSpec["own"]>, x: Base["x"], widthPx: number) {
   const { from, to } = spec.axis;
   const label = own.label === "" ? figureWords(own.value, spec) : own.label;
   const words = own.value > to ? `${label} ›` : own.value < from ? `‹ ${label}` : label;
@@ -172,7 +179,8 @@ function layOutFlag(
   const isLeft = atX > flagTurnsAt * widthPx;
   const flyX = isLeft ? atX + 2 - flagPx : atX - 2 + flagPx;
   const room = isLeft ? flyX - 8 : widthPx - flyX - 8;
-  const note = own.note !== "" && textWidthPx(own.note, 14.4) <= room ? own.note : null;
+  const notes = [own.note, own.shortNote ?? ""].filter((words) => words !== "");
+  const note = notes.find((words) => textWidthPx(words, 14.4) <= room) ?? null;
   return { x: atX, flyX, isLeft, width: flagPx, words, note };
 }
 
@@ -193,7 +201,11 @@ function layOutPlate(spec: LaneStripSpec, base: Base, flag: FlagLayout | null) {
       .map((place) => inside(place))
       .filter((place) => flag === null || Math.abs(place - flag.x) >= clear - 1)
       .sort((a, b) => Math.abs(a - tickX) - Math.abs(b - tickX))[0] ?? inside(tickX);
-  return { x1: middle - wide / 2, x2: middle + wide / 2, tickX, height: base.size === "wall" ? 43.7 : 20.8, words };
+  return { x1: middle - wide / 2, x2: middle + wide / 2, tickX, height: plateHeightPx(base.size), words };
+}
+
+function plateHeightPx(size: StripSize) {
+  return size === "wall" ? 43.7 : 20.8;
 }
 
 function layOutHeaps(spec: LaneStripSpec, base: Base) {
@@ -216,7 +228,8 @@ function layOutHeaps(spec: LaneStripSpec, base: Base) {
     );
     return { ...empty, grains, grainRadius, notches };
   }
-  const roomPx = base.laneHeight * (1 - centreShare) - (edgeInset + 8) * base.scale;
+  // From the foot of the heaps up to the lower edge of the plate, which no bar may touch.
+  const roomPx = base.laneHeight * (1 - centreShare) - (edgeInset + 5) * base.scale - plateHeightPx(base.size) / 2;
   const pitch = Math.min(12.35 * base.scale, roomPx / Math.max(1, ...counts));
   const halfWidth = Math.min(narrowest - 3 * base.scale, 35 * base.scale) / 2;
   const foot = base.laneBottom - (edgeInset + 3) * base.scale;

@@ -23,9 +23,11 @@ export type LaneStripSpec = {
   axis: { from: number; to: number; step: number };
   band: { low: number; high: number; label: string } | null;
   peers: { state: "withheld"; reason: string } | ShownPeers;
-  /** `label` stands on the flag ("388", "you 388"), `note` beside it ("85th percentile"). */
-  own: { value: number; label: string; note: string } | null;
+  /** `label` stands on the flag ("388", "you 388"), `note` beside it; where there is no room for that, `shortNote`. */
+  own: { value: number; label: string; note: string; shortNote?: string } | null;
   townCountWords: string;
+  /** Bars even where dots would do, because another strip of the page needs them. */
+  isInBars?: boolean;
 };
 
 export type StripSize = "desk" | "phone" | "wall";
@@ -56,7 +58,7 @@ export function stripParts(spec: LaneStripSpec, size: StripSize = "desk"): Strip
   const { peers } = spec;
   const isShown = peers.state === "shown";
   const hasMiddleHalf = isShown && peers.middleHalf !== null;
-  const marks = isShown ? heapMarks(peers, size) : { heaps: "none" as const, townsPerMark: 1 };
+  const marks = isShown ? heapMarks(peers, size, spec.isInBars === true) : { heaps: "none" as const, townsPerMark: 1 };
   return {
     hasPlate: isShown,
     hasInterval: isShown && !hasMiddleHalf && peers.interval !== null,
@@ -64,6 +66,12 @@ export function stripParts(spec: LaneStripSpec, size: StripSize = "desk"): Strip
     ...marks,
     hasFlag: spec.own !== null && size !== "wall",
   };
+}
+
+/** The strips of one page, all in dots or all in bars: a page that counts in two ways would be misread. */
+export function markedAlike(specs: readonly LaneStripSpec[]): LaneStripSpec[] {
+  const isInBars = specs.some((spec) => stripParts(spec).heaps === "bars");
+  return specs.map((spec) => ({ ...spec, isInBars }));
 }
 
 /** How many dots or bars each heap is drawn with, in the order of the heaps. */
@@ -80,11 +88,11 @@ export function townsInHeap(peers: ShownPeers, heap: Heap) {
   return peers.heapKind === "bars" ? heap.count * townsPerBar : heap.count;
 }
 
-function heapMarks(peers: ShownPeers, size: StripSize): Pick<StripParts, "heaps" | "townsPerMark"> {
+function heapMarks(peers: ShownPeers, size: StripSize, isInBars: boolean): Pick<StripParts, "heaps" | "townsPerMark"> {
   if (peers.heaps.length === 0) return { heaps: "none", townsPerMark: 1 };
   const tallestTownCount = Math.max(...peers.heaps.map((heap) => townsInHeap(peers, heap)));
   const isLow = tallestTownCount <= rowsOfGrains * grainsInRow;
-  if (peers.heapKind === "grains" && isLow && size !== "wall") return { heaps: "grains", townsPerMark: 1 };
+  if (peers.heapKind === "grains" && isLow && !isInBars && size !== "wall") return { heaps: "grains", townsPerMark: 1 };
   return { heaps: "bars", townsPerMark: townsPerBarFor(tallestTownCount) };
 }
 

@@ -11,6 +11,7 @@ export type FleetLine = {
   place: "under" | "in" | "over" | null;
   testedOn: string | null;
   isDue: boolean;
+  isWaiting: boolean;
 };
 
 /** A rate with the shape that says where it lies; the bare figure where there is no band. */
@@ -22,6 +23,12 @@ export function RateWords({ rate, place }: { rate: number | null; place: FleetLi
   return words;
 }
 
+function weighedWords({ isWaiting, isDue, testedOn }: FleetLine) {
+  if (isWaiting) return "to approve";
+  if (isDue) return <b>due</b>;
+  return testedOn === null ? "–" : formatShortDay(testedOn);
+}
+
 /** The fleet at a glance: what each truck lays, and when it was weighed. */
 export function FleetTable({ lines }: { lines: readonly FleetLine[] }) {
   return (
@@ -29,7 +36,7 @@ export function FleetTable({ lines }: { lines: readonly FleetLine[] }) {
       <Timetable
         caption="Trucks, what they lay at the working setting and speed, and when they were weighed"
         isCaptionHidden
-        isFolding={false}
+        onPhone="keep"
         columns={[
           { key: "truck", label: "truck" },
           { key: "lays", label: "lays", isNumeric: true },
@@ -40,7 +47,7 @@ export function FleetTable({ lines }: { lines: readonly FleetLine[] }) {
           cells: {
             truck: <TextLink to={`/fleet/${line.truckId}`}>{line.unitNumber}</TextLink>,
             lays: <RateWords rate={line.rateLbPerLaneMile} place={line.place} />,
-            weighed: line.isDue ? <b>due</b> : line.testedOn === null ? "–" : formatShortDay(line.testedOn),
+            weighed: weighedWords(line),
           },
         }))}
       />

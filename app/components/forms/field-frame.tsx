@@ -11,6 +11,8 @@ export type FieldWords = {
   isOptional?: boolean;
   /** Only where two forms on a page share a name. */
   id?: string;
+  /** For long words: as wide as a line of text. */
+  isWide?: boolean;
 };
 
 export const fieldLook =
@@ -35,7 +37,7 @@ export function fieldTies({ name, id, hint, error }: FieldWords) {
 export function FieldFrame({ words, children }: { words: FieldWords; children: ReactNode }) {
   const controlId = words.id ?? words.name;
   return (
-    <div className="max-w-field">
+    <div className={words.isWide === true ? "max-w-measure" : "max-w-field"}>
       <label htmlFor={controlId} className="mb-1 block font-semibold">
         {words.label}
         {words.isOptional === true && <span className="font-normal text-gravel"> (may be left empty)</span>}

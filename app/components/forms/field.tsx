@@ -4,8 +4,8 @@ import { FieldFrame, fieldLook, fieldTies, type FieldWords } from "./field-frame
 /** Words first; every other attribute of the control may be given too, so a form library's props can be spread in. */
 type InputProps = FieldWords & Omit<ComponentProps<"input">, keyof FieldWords | "className">;
 
-export function TextField({ name, label, hint, error, id, isOptional, ...rest }: InputProps) {
-  const words = { name, label, hint, error, id, isOptional };
+export function TextField({ name, label, hint, error, id, isOptional, isWide, ...rest }: InputProps) {
+  const words = { name, label, hint, error, id, isOptional, isWide };
   return (
     <FieldFrame words={words}>
       <input type="text" {...rest} {...fieldTies(words)} className={fieldLook} />

@@ -10,12 +10,17 @@ type SelectProps = FieldWords &
     prompt?: string;
   };
 
-export function SelectField({ name, label, hint, error, id, isOptional, choices, prompt, ...rest }: SelectProps) {
-  const words = { name, label, hint, error, id, isOptional };
+export function SelectField(props: SelectProps) {
+  const { name, label, hint, error, id, isOptional, isWide, choices, prompt, ...rest } = props;
+  const words = { name, label, hint, error, id, isOptional, isWide };
   return (
     <FieldFrame words={words}>
       <span className="relative block">
-        <select {...rest} {...fieldTies(words)} className={`${fieldLook} appearance-none pr-9 font-semibold`}>
+        <select
+          {...rest}
+          {...fieldTies(words)}
+          className={`${fieldLook} appearance-none pr-9 font-semibold text-ellipsis`}
+        >
           {prompt !== undefined && <option value="">{prompt}</option>}
           {choices.map((choice) => (
             <option key={choice.value} value={choice.value}>

@@ -1,9 +1,12 @@
 import type { ReactNode } from "react";
+import { WholeSeasons } from "./whole-seasons.tsx";
 
 /** The sentence a page opens with: it answers the question one came with, in words computed from the data. */
 export function Answer({ children }: { children: ReactNode }) {
   return (
-    <h1 className="max-w-answer text-xl font-semibold tracking-[-0.012em] text-balance sm:text-2xl">{children}</h1>
+    <h1 className="max-w-answer text-xl font-semibold tracking-[-0.012em] text-balance sm:text-2xl">
+      <WholeSeasons>{children}</WholeSeasons>
+    </h1>
   );
 }
 

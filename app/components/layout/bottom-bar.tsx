@@ -4,7 +4,7 @@ type Props = { areas: readonly { label: string; to: string }[]; person: string }
 
 const onBarCount = 4;
 const item =
-  "relative flex min-h-14 w-full items-center justify-center text-note font-semibold text-asphalt no-underline";
+  "relative flex min-h-14 w-full items-center justify-center px-2 text-note font-semibold text-asphalt no-underline";
 const here =
   "aria-[current=page]:text-spruce aria-[current=page]:after:absolute aria-[current=page]:after:inset-x-2 aria-[current=page]:after:-top-1 aria-[current=page]:after:h-1 aria-[current=page]:after:bg-spruce aria-[current=page]:after:shadow-[-6px_0_var(--color-salt),6px_0_var(--color-salt)]";
 
@@ -19,15 +19,15 @@ export function BottomBar({ areas, person }: Props) {
       aria-label="Areas, at the thumb"
       className="fixed inset-x-0 bottom-0 z-20 border-t border-line bg-salt pt-[3px] sm:hidden print:hidden"
     >
-      <ul className="grid auto-cols-fr grid-flow-col border-t-4 border-line px-2 pb-[env(safe-area-inset-bottom)]">
+      <ul className="flex justify-between border-t-4 border-line px-1 pb-[env(safe-area-inset-bottom)]">
         {areas.slice(0, onBarCount).map((area) => (
-          <li key={area.to}>
+          <li key={area.to} className="flex-auto">
             <NavLink to={area.to} className={`${item} ${here}`}>
               {area.label}
             </NavLink>
           </li>
         ))}
-        <li>
+        <li className="flex-auto">
           {/* The key closes it again when the page changes. */}
           <details key={pathname} className="group">
             <summary

@@ -13,7 +13,7 @@ const pages = [
 export function NetworkPages() {
   return (
     <nav aria-label="Network" className="mb-6 border-b border-rule print:hidden">
-      <ul className="-mb-px flex flex-wrap gap-x-6">
+      <ul className="-mb-px flex flex-wrap justify-between gap-x-2 max-sm:text-note sm:justify-start sm:gap-x-6">
         {pages.map(({ label, to }) => (
           <li key={to}>
             <NavLink

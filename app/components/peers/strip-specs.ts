@@ -37,6 +37,7 @@ export function memberStripSpec({ indicator, cell, own }: MemberStrip): LaneStri
       value: own.value,
       label: formatWhole(own.value),
       note: own.percentile === null ? own.townName : `${own.townName}, ${own.percentile}th percentile`,
+      ...(own.percentile === null ? {} : { shortNote: `${own.percentile}th percentile` }),
     },
     townCountWords: cell.state === "shown" ? `${cell.towns} towns` : "",
   };

@@ -80,7 +80,7 @@ export function PartSamples() {
             <Timetable
               caption="Salt in the fleet by truck"
               isCaptionHidden
-              isFolding={false}
+              onPhone="keep"
               columns={[
                 { key: "truck", label: "truck" },
                 { key: "rate", label: "lays", unit: "lb per lane mile", isNumeric: true },

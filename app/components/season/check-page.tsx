@@ -9,7 +9,8 @@ import { SideBySide } from "#app/components/ui/side-by-side.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { formatInstant } from "#app/lib/format.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
-import { kindLabel, ProblemGroup, type ProblemGroupView, type RepairProps } from "./problem-groups.tsx";
+import { kindLabel, ProblemGroup } from "./problem-groups.tsx";
+import { type ProblemGroupView, type RepairProps, withSinglesTogether } from "./problem-view.ts";
 import { ReadyRows, type ReadySample } from "./ready-rows.tsx";
 import { checkedAnswer, type UploadSummary } from "./upload-words.ts";
 
@@ -34,7 +35,8 @@ type Props = { upload: CheckedUpload; shownKey: string | null; refusal: string |
 const acceptForm = "accept-form";
 
 function KindList({ upload, shownKey }: { upload: CheckedUpload; shownKey: string | null }) {
-  const { counts, groups, settledNames } = upload;
+  const { counts, settledNames } = upload;
+  const groups = withSinglesTogether(upload.groups);
   const settledOf = (group: ProblemGroupView) => settledNames.filter(({ sort }) => sort === group.names?.sort).length;
   const kinds = groups.map((group, place) => {
     const settled = settledOf(group);
@@ -173,9 +175,15 @@ function Decision({ upload }: { upload: CheckedUpload }) {
 
 /** A file whose rows have been looked at: what is ready, what is not, and the decision. */
 export function CheckPage({ upload, shownKey, refusal, isKnown }: Props) {
-  const { groups, counts } = upload;
+  const { counts } = upload;
+  const groups = withSinglesTogether(upload.groups);
   const hasProblems = groups.length > 0 || counts.leftOut > 0;
-  const shared = { uploadId: upload.id, choices: upload.choices, settledNames: upload.settledNames };
+  const shared = {
+    uploadId: upload.id,
+    canFix: upload.hasColumns,
+    choices: upload.choices,
+    settledNames: upload.settledNames,
+  };
   return (
     <>
       <Page>

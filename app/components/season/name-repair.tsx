@@ -1,7 +1,7 @@
 import { Form } from "react-router";
 import { Button } from "#app/components/ui/button.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
-import type { RepairProps } from "./problem-groups.tsx";
+import type { RepairProps } from "./problem-view.ts";
 
 const prompts = { truck: "choose a truck", material: "choose a material", "storm-kind": "choose a kind" };
 const selectLook =

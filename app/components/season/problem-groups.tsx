@@ -3,28 +3,8 @@ import { Button } from "#app/components/ui/button.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { NameRepair } from "./name-repair.tsx";
+import type { ProblemGroupView, RepairProps } from "./problem-view.ts";
 import { RowRepair } from "./row-repair.tsx";
-
-type Choice = { value: string; label: string };
-export type ProblemGroupView = {
-  key: string;
-  code: string;
-  field: string;
-  columnName: string | null;
-  severity: "error" | "check";
-  rowCount: number;
-  message: string | null;
-  names: { sort: "truck" | "material" | "storm-kind"; values: { value: string; rowCount: number }[] } | null;
-  contextHeads: string[];
-  rows: { sheetRow: number; value: string | null; message: string; context: string[] }[];
-};
-
-export type RepairProps = {
-  uploadId: number;
-  group: ProblemGroupView;
-  choices: Record<"truck" | "material" | "storm-kind", Choice[]>;
-  settledNames: readonly { sort: string; name: string; meaning: string }[];
-};
 
 const heads: Record<string, (rows: string, isOne: boolean) => string> = {
   "unknown-truck": (rows, isOne) => `${rows} ${isOne ? "names" : "name"} a truck that is not in the fleet list`,
@@ -37,6 +17,7 @@ const heads: Record<string, (rows: string, isOne: boolean) => string> = {
   twice: (rows, isOne) => `${rows} ${isOne ? "says" : "say"} what another one says, too`,
   "totals-row": (rows, isOne) => `${rows} ${isOne ? "looks" : "look"} like a total`,
   "other-town": (rows, isOne) => `${rows} ${isOne ? "is" : "are"} of another town`,
+  single: (rows) => `${rows} to look at, one by one`,
   "no-material": (rows, isOne) => `${rows} ${isOne ? "gives" : "give"} no material`,
 };
 
@@ -67,7 +48,9 @@ const kindLabels: Record<string, string> = {
   blank: "left blank",
   "unknown-unit": "unit not known",
   "other-unit": "another sort of unit",
+  single: "one by one",
   "long-text": "long text",
+  "weather-units": "the file’s units",
   formulas: "formulas",
   "extra-columns": "columns not used",
 };
@@ -135,7 +118,7 @@ export function ProblemGroup(props: RepairProps & { canLeaveOut: boolean; isShow
         {group.code === "tons-or-pounds" && (
           <GroupAnswer group={group} intent="as-pounds">{`Read ${all} as pounds`}</GroupAnswer>
         )}
-        {group.severity === "check" && group.names === null && (
+        {group.severity === "check" && group.names === null && group.code !== "single" && (
           <GroupAnswer group={group} intent="stands">
             {isWholeFile
               ? "That is right"

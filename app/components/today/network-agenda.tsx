@@ -5,7 +5,7 @@ import { ButtonLink } from "#app/components/ui/button.tsx";
 import { EmptyState } from "#app/components/ui/empty-state.tsx";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { formatShortDay } from "#app/lib/format.ts";
-import { countWords, sentenceStart } from "#app/lib/words.ts";
+import { countWords, missingWords, sentenceStart } from "#app/lib/words.ts";
 
 type Props = {
   season: {
@@ -53,7 +53,7 @@ function steps({ season, edition }: Props): Step[] {
         to: "/network/editions",
         button: "Prepare the edition",
         title: `Publish edition 1 of ${label}`,
-        children: `${sentenceStart(countWords(season.accepted, "town is", "towns are"))} accepted; ${countWords(season.missing, "has", "have")} not sent.`,
+        children: `${sentenceStart(countWords(season.accepted, "town is", "towns are"))} accepted; ${missingWords(season.missing)}.`,
       });
     }
   }

@@ -1,5 +1,6 @@
 import type { ReactNode } from "react";
 import { Link } from "react-router";
+import { WholeSeasons } from "#app/components/layout/whole-seasons.tsx";
 
 export type AgendaItem = {
   key: string;
@@ -64,10 +65,10 @@ function AgendaTitle({ item, isFirst }: { item: AgendaItem; isFirst: boolean }) 
   return (
     <h2 className={`tracking-[-0.005em] ${look}`}>
       {item.to === undefined ? (
-        item.title
+        <WholeSeasons>{item.title}</WholeSeasons>
       ) : (
         <Link to={item.to} className="text-asphalt no-underline decoration-2 underline-offset-4 hover:underline">
-          {item.title}
+          <WholeSeasons>{item.title}</WholeSeasons>
         </Link>
       )}
     </h2>

@@ -19,8 +19,8 @@ export function Dock({ summary, children, summaryId, label = "What is left, and 
       className="sticky bottom-[3.9rem] z-10 border-t border-line bg-salt pt-[3px] sm:bottom-0 print:static print:hidden"
     >
       <div className="border-t-4 border-line">
-        <div className="mx-auto flex w-full max-w-column flex-wrap items-center gap-x-5 gap-y-2 px-4 py-3.5 sm:px-8">
-          <p id={summaryId} className="mr-auto">
+        <div className="mx-auto flex w-full max-w-column flex-wrap items-center gap-x-5 gap-y-1 px-4 py-2.5 max-sm:justify-between sm:px-8 sm:py-3.5">
+          <p id={summaryId} className="mr-auto max-sm:w-full">
             {summary}
           </p>
           {children}

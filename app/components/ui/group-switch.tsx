@@ -4,6 +4,8 @@ export type GroupChoice = {
   key: string;
   label: string;
   to: string;
+  /** What the groups of one row have in common: "by size". */
+  part?: string;
   /** How many towns, in words fit to show: "36", or "25 to 49". */
   townCountWords?: string;
   isCurrent?: boolean;
@@ -11,19 +13,57 @@ export type GroupChoice = {
   hiddenReason?: string;
 };
 
-/** Which peers to stand beside. Links, so that a choice has an address and works without script. */
-export function GroupSwitch({ label, choices }: { label: string; choices: readonly GroupChoice[] }) {
+type Props = { label: string; choices: readonly GroupChoice[] };
+
+/**
+ * Which peers to stand beside. Links, so that a choice has an address and works without script. On a phone the choice
+ * is one line that opens, so that the strips stay in sight.
+ */
+export function GroupSwitch({ label, choices }: Props) {
+  const current = choices.find(({ isCurrent }) => isCurrent === true);
   return (
-    <nav aria-label={label} className="mt-6 border-b border-line print:hidden">
-      <ul className="-mb-px flex flex-wrap gap-x-7">
-        {choices.map((choice) => (
-          <li key={choice.key} className="max-sm:w-full max-sm:border-b max-sm:border-rule max-sm:last:border-0">
-            <Choice choice={choice} />
-          </li>
+    <nav aria-label={label} className="mt-5 border-b border-line print:hidden">
+      <details key={current?.key} className="group sm:hidden">
+        <summary className="flex min-h-target list-none items-center justify-between gap-4">
+          <span>
+            <span className="text-gravel">{label} </span>
+            <b>{current?.label}</b> {current?.townCountWords}
+          </span>
+          <span className="font-semibold text-spruce underline underline-offset-3">
+            <span className="group-open:hidden">Change</span>
+            <span className="hidden group-open:inline">Close</span>
+          </span>
+        </summary>
+        <ul>
+          {choices.map((choice) => (
+            <li key={choice.key} className="border-t border-rule">
+              <Choice choice={choice} />
+            </li>
+          ))}
+        </ul>
+      </details>
+      <div className="max-sm:hidden">
+        {parts(choices).map(([part, own]) => (
+          <div key={part} className="flex gap-x-6">
+            {part !== "" && <p className="w-20 flex-none py-2.5 text-gravel">{part}</p>}
+            <ul className="flex flex-wrap gap-x-7">
+              {own.map((choice) => (
+                <li key={choice.key}>
+                  <Choice choice={choice} />
+                </li>
+              ))}
+            </ul>
+          </div>
         ))}
-      </ul>
+      </div>
     </nav>
   );
+}
+
+/** The choices by row, in the order they come. */
+function parts(choices: readonly GroupChoice[]) {
+  const names = [...new Set(choices.map(({ part = "" }) => part))];
+  return names.map((name) => [name, choices.filter(({ part = "" }) => part === name)] as const);
 }
 
 function Choice({ choice }: { choice: GroupChoice }) {
@@ -41,7 +81,7 @@ function Choice({ choice }: { choice: GroupChoice }) {
       to={choice.to}
       preventScrollReset
       aria-current={choice.isCurrent === true ? "true" : undefined}
-      className="relative flex w-fit min-h-target items-center gap-1.75 text-gravel no-underline underline-offset-4 hover:underline aria-[current=true]:font-bold aria-[current=true]:text-asphalt aria-[current=true]:no-underline aria-[current=true]:after:absolute aria-[current=true]:after:inset-x-0 aria-[current=true]:after:-bottom-0.5 aria-[current=true]:after:h-1.25 aria-[current=true]:after:bg-spruce"
+      className="relative flex w-fit min-h-target items-center gap-1.75 text-gravel no-underline underline-offset-4 hover:underline aria-[current=true]:font-bold aria-[current=true]:text-asphalt aria-[current=true]:no-underline aria-[current=true]:after:absolute aria-[current=true]:after:inset-x-0 aria-[current=true]:after:bottom-0.5 aria-[current=true]:after:h-1 aria-[current=true]:after:bg-spruce"
     >
       {choice.label}
       {count}

@@ -30,7 +30,7 @@ function QueueRow({ item, number }: { item: QueueItem; number: number }) {
   const isOpen = item.open !== undefined;
   return (
     <li
-      className={`grid grid-cols-[2rem_minmax(0,1fr)] gap-x-5 gap-y-1.5 leading-snug md:grid-cols-[2rem_12.4rem_minmax(0,1fr)_auto] ${isOpen ? "border-b-2 border-line pt-4.5 pb-6" : "border-b border-rule py-3.25"}`}
+      className={`grid grid-cols-[2rem_minmax(0,1fr)] gap-x-5 gap-y-1.5 leading-snug md:grid-cols-[2rem_15.5rem_minmax(0,1fr)_auto] ${isOpen ? "border-b-2 border-line pt-4.5 pb-6" : "border-b border-rule py-3.25"}`}
     >
       <span className={`font-bold ${isOpen ? "text-2xl leading-none" : "text-l leading-tight text-gravel"}`}>
         {number}

@@ -6,12 +6,14 @@ type Props = {
   isWordHidden?: boolean;
 };
 
+/** In a table the sign never parts from its figure; in a sentence the words may run on. */
+const look = (isWordHidden: boolean) => `font-bold ${isWordHidden ? "whitespace-nowrap" : ""}`;
 const glyph = "mr-[0.2em] inline-block size-[0.72em] align-[-0.02em] fill-current";
 
 /** Over the band, or wrong: rust, triangle up, and a word. */
 export function Over({ children, isWordHidden = false }: Props) {
   return (
-    <span className="font-bold text-rust">
+    <span className={`${look(isWordHidden)} text-rust`}>
       <svg viewBox="0 0 10 10" aria-hidden="true" className={glyph}>
         <path d="M5 0 10 10H0z" />
       </svg>
@@ -24,7 +26,7 @@ export function Over({ children, isWordHidden = false }: Props) {
 /** Under the band: glacier, triangle down, and a word. */
 export function Under({ children, isWordHidden = false }: Props) {
   return (
-    <span className="font-bold text-glacier">
+    <span className={`${look(isWordHidden)} text-glacier`}>
       <svg viewBox="0 0 10 10" aria-hidden="true" className={glyph}>
         <path d="M0 0h10L5 10z" />
       </svg>
@@ -37,7 +39,7 @@ export function Under({ children, isWordHidden = false }: Props) {
 /** In the band: beacon ink, a boxed square, and a word. */
 export function InBand({ children, isWordHidden = false }: Props) {
   return (
-    <span className="font-bold text-beacon-ink">
+    <span className={`${look(isWordHidden)} text-beacon-ink`}>
       <svg viewBox="0 0 10 10" aria-hidden="true" className={glyph}>
         <path fillRule="evenodd" d="M0 0h10v10H0zM1.6 1.6v6.8h6.8V1.6zM3.2 3.2h3.6v3.6H3.2z" />
       </svg>

@@ -16,6 +16,9 @@ export const commonPracticeBands: Partial<Record<MaterialKind, Band>> = {
   mix: { lowLbPerLaneMile: 450, highLbPerLaneMile: 550 },
 };
 
+/** Weights subtracted in binary miss a band's end by a last digit: closer than this share of the end is on the end. */
+const onTheEndRatio = 1e-9;
+
 /**
  * How far a rate lies outside the band.
  *
@@ -26,8 +29,9 @@ export const commonPracticeBands: Partial<Record<MaterialKind, Band>> = {
  */
 export function distanceFromBand(rateLbPerLaneMile: number, band: Band): number {
   if (!Number.isFinite(rateLbPerLaneMile)) throw new RangeError("a rate must be a finite number");
-  if (rateLbPerLaneMile > band.highLbPerLaneMile) return rateLbPerLaneMile - band.highLbPerLaneMile;
-  if (rateLbPerLaneMile < band.lowLbPerLaneMile) return rateLbPerLaneMile - band.lowLbPerLaneMile;
+  const { lowLbPerLaneMile: low, highLbPerLaneMile: high } = band;
+  if (rateLbPerLaneMile > high * (1 + onTheEndRatio)) return rateLbPerLaneMile - high;
+  if (rateLbPerLaneMile < low * (1 - onTheEndRatio)) return rateLbPerLaneMile - low;
   return 0;
 }
 

@@ -5,6 +5,8 @@ export type Count = { setting: number; revolutions: number; seconds: number };
 export type SettingCount = { setting: number; revPerMin: number; isAtHydraulicLimit: boolean };
 
 const secondsPerMinute = 60;
+/** Counts closer than this are the same count: whole revolutions are counted, give or take a half. */
+const countErrorRevPerMin = 0.5;
 
 /**
  * The count brought to one minute.
@@ -45,4 +47,45 @@ export function settingsWithLimit(counts: readonly Count[]): SettingCount[] {
     });
   }
   return settings;
+}
+
+/**
+ * Where the hydraulics give no more.
+ *
+ * @param settings - as `settingsWithLimit` gives them
+ * @returns the last setting whose count still rose, its count, and the settings above that give no more than it; null
+ *   when every count rises
+ * @example counts of 10, 20 and 20 at settings 1 to 3 // { lastRisingSetting: 2, revPerMin: 20, limitedSettings: [3] }
+ */
+export function hydraulicLimit(
+  settings: readonly SettingCount[],
+): { lastRisingSetting: number; revPerMin: number; limitedSettings: number[] } | null {
+  const limitedSettings = settings.filter((one) => one.isAtHydraulicLimit).map(({ setting }) => setting);
+  const lastRising = settings.filter((one) => !one.isAtHydraulicLimit).at(-1);
+  if (!lastRising || limitedSettings.length === 0) return null;
+  return { lastRisingSetting: lastRising.setting, revPerMin: lastRising.revPerMin, limitedSettings };
+}
+
+/**
+ * The places at which the count falls though the setting rises, by more than counting can be wrong.
+ *
+ * @param counts - in any order, each above 0
+ * @returns pairs of neighbouring settings, the lower setting first; empty when the count never falls
+ * @throws RangeError when a count is not above 0
+ * @example counts of 20 and 15 a minute at settings 3 and 4 // one pair
+ */
+export function fallsInCount<One extends Count>(counts: readonly One[]): { before: One; after: One }[] {
+  const rising = [...counts].sort((a, b) => a.setting - b.setting);
+  return rising.slice(1).flatMap((after, place) => {
+    const before = rising[place];
+    if (!before || revolutionsPerMinute(after) >= revolutionsPerMinute(before) - countErrorRevPerMin) return [];
+    return [{ before, after }];
+  });
+}
+
+/** The words for a count that falls. @example "The count falls from 20 a minute at setting 3 to 15 at setting 4." */
+export function fallWords({ before, after }: { before: Count; after: Count }): string {
+  const shown = (count: Count) => String(Number(revolutionsPerMinute(count).toFixed(2)));
+  const from = `from ${shown(before)} a minute at setting ${before.setting}`;
+  return `The count falls ${from} to ${shown(after)} at setting ${after.setting}. Count both again.`;
 }

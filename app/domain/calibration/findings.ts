@@ -1,11 +1,9 @@
 import type { Finding } from "#app/domain/finding.ts";
 import { type Catch, catchVariationPercent } from "./catch-weight.ts";
-import { type Count, revolutionsPerMinute } from "./count-rate.ts";
+import { type Count, fallsInCount, fallWords } from "./count-rate.ts";
 
 /** Above this the catches are too far apart to be averaged. A limit of our own; no published one is known. */
-const mostVariationPercent = 10;
-/** Counts closer than this are the same count: whole revolutions are counted, give or take a half. */
-const countErrorRevPerMin = 0.5;
+export const mostVariationPercent = 10;
 
 /** No watch, scale or rule in a yard reads less or more; beyond, a division could run out of the range of numbers. */
 const leastReading = 0.001;
@@ -89,24 +87,12 @@ function countFindings(counts: readonly Count[], workingSetting: number | null):
   }
   if (wrong.length > 0) return wrong;
 
-  const rising = [...counts].sort((a, b) => a.setting - b.setting);
-  const findings = rising.slice(1).flatMap((count, place) => {
-    const before = rising[place];
-    if (!before) return [];
-    const [now, then] = [revolutionsPerMinute(count), revolutionsPerMinute(before)];
-    if (now >= then - countErrorRevPerMin) return [];
-    const fall = `from ${shown(then)} a minute at setting ${before.setting} to ${shown(now)} at setting ${count.setting}`;
-    return [error("count-falls", "counts", `The count falls ${fall}. Count both again.`)];
-  });
+  const findings = fallsInCount(counts).map((fall) => error("count-falls", "counts", fallWords(fall)));
   if (workingSetting !== null && !settings.includes(workingSetting)) {
     const message = `The truck's working setting ${workingSetting} is not counted, so its rate is not known.`;
     findings.push(check("working-setting-not-counted", "counts", message));
   }
   return findings;
-}
-
-function shown(revPerMin: number) {
-  return String(Number(revPerMin.toFixed(2)));
 }
 
 function gateFindings(gateOpeningIn: number, gateMaxIn: number | null): Finding[] {

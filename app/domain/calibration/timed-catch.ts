@@ -3,6 +3,9 @@ import { type LbPerMin, lbPerMin } from "#app/domain/units.ts";
 /** Material caught over a stretch of time, without counting revolutions. */
 export type TimedCatch = { grossLb: number; tareLb: number; seconds: number };
 
+/** A timed catch with the feed setting at which it was taken. */
+export type SettingTimedCatch = TimedCatch & { setting: number };
+
 const secondsPerMinute = 60;
 
 /**

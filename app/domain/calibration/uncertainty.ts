@@ -20,12 +20,12 @@ function studentT(degreesOfFreedom: number) {
 }
 
 /** Coverage factor for about 95 %. Source: NIST Technical Note 1297 (1994), section 6. */
-const coverageFactor = 2;
+export const coverageFactor = 2;
 /** Whole revolutions are counted: the true number lies within half a one, evenly likely. */
 const countHalfWidthRev = 0.5;
 
 /** Standard uncertainty of an error that is evenly likely within ± the half-width. Source: NIST TN 1297, section 4.6. */
-function rectangular(halfWidth: number) {
+export function rectangular(halfWidth: number) {
   return halfWidth / Math.sqrt(3);
 }
 

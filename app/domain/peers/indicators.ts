@@ -8,8 +8,10 @@ export type IndicatorKey = (typeof indicatorKeys)[number];
 export type Indicator = {
   key: IndicatorKey;
   name: string;
-  /** The figure's name inside a sentence. */
+  /** The figure's name inside a wall's sentence. */
   sentenceName: string;
+  /** What stands under the sentence on a wall. */
+  wallName: string;
   unit: "lb per lane mile and event" | "lb per lane mile";
   /** How it is worked out, in words. */
   formula: string;
@@ -28,6 +30,7 @@ export const indicators: Record<IndicatorKey, Indicator> = {
     key: "salt-per-event",
     name: "Salt per lane mile and event",
     sentenceName: "salt on a lane mile in each event",
+    wallName: "Pounds in each event",
     unit: "lb per lane mile and event",
     formula:
       "Salt used in the season, with the salt inside the mix, in pounds, divided by the town's lane miles and by its number of events.",
@@ -39,7 +42,8 @@ export const indicators: Record<IndicatorKey, Indicator> = {
   "rate-at-working-setting": {
     key: "rate-at-working-setting",
     name: "Application rate at the working setting",
-    sentenceName: "salt on a lane mile at the working setting",
+    sentenceName: "salt on a lane mile",
+    wallName: "Pounds at the working setting",
     unit: "lb per lane mile",
     formula:
       "For each truck's salt calibration in force: pounds per revolution times revolutions a minute at the working setting times 60, divided by the working speed in mph and the lanes covered in one pass. The town's figure is the median of its trucks.",

@@ -92,7 +92,6 @@ export function placeSentence({
   const ending = cell.state === "withheld" ? `. ${peersAlone(cell, "")}` : ".";
   if (!band)
     return { parts: [{ words: [`${own}${peers.length > 0 ? ": " : ""}`, peers.join(", "), ending].join("") }] };
-  if (!band) return { parts: [{ words: `${[own, peers.join(", ")].filter(Boolean).join(": ")}${ending}` }] };
   const rest = peers.map((one) => `, ${one}`).join("");
   return { parts: [{ words: `${own}: ` }, bandPart(ownValue, band), { words: `${rest}${ending}` }] };
 }
@@ -110,7 +109,7 @@ function bandSentence(median: number, band: Band | null) {
  * @param input - the wall's protected cell and the band, or null
  * @returns one sentence on the middle half (or the median where there is none) and one on the band
  * @example wallSentence({ indicator: "rate-at-working-setting", cell, band })
- *   // "Half of us lay between 270 and 380 lb of salt on a lane mile at the working setting. The band ends at 300."
+ *   // "Half of us lay between 270 and 380 lb of salt on a lane mile. The band ends at 300."
  */
 export function wallSentence({
   indicator,
@@ -123,6 +122,7 @@ export function wallSentence({
 }): Sentence {
   if (cell.state === "withheld") return { parts: [{ words: `Nothing to show here: ${reasonWords(cell.reason)}.` }] };
   const { middleHalf, median } = cell;
+  // Short enough for two lines on a wall: what setting it is stands in the line below.
   const what = `lb of ${indicators[indicator].sentenceName}`;
   const lay = indicator === "salt-per-event" ? "laid" : "lay";
   const middle =

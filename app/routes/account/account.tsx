@@ -4,6 +4,7 @@ import { Page } from "#app/components/layout/page.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { personActor } from "#app/context.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
 import { endOwnSession, listOwnSessions } from "#app/services/sessions.server.ts";
@@ -20,7 +21,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const sessionId = form.get("sessionId");
   await endOwnSession(personActor(context), idParam(typeof sessionId === "string" ? sessionId : "", "session"));
   return redirect("/account");

@@ -74,8 +74,8 @@ export default function Dataset({ loaderData: { editions, hasTerms, isAnalyst } 
           columns={[
             { key: "edition", label: "edition" },
             { key: "day", label: "published" },
-            { key: "files", label: "files" },
-            { key: "hash", label: "checksum, first letters" },
+            { key: "files", label: "files", isProse: true },
+            { key: "hash", label: "checksum, first letters", isWideOnly: true },
           ]}
           rows={editions.map((edition) => ({
             key: String(edition.id),
@@ -103,12 +103,12 @@ export default function Dataset({ loaderData: { editions, hasTerms, isAnalyst } 
           { key: "key", label: "indicator" },
           { key: "name", label: "name" },
           { key: "unit", label: "unit" },
-          { key: "formula", label: "how it is worked out" },
+          { key: "formula", label: "how it is worked out", isProse: true },
         ]}
         rows={indicatorKeys.map((key) => ({
           key,
           cells: {
-            key: <code className="text-note">{key}</code>,
+            key: <code className="text-note whitespace-nowrap">{key}</code>,
             name: indicators[key].name,
             unit: indicators[key].unit,
             formula: indicators[key].formula,

@@ -9,6 +9,7 @@ import { Notice } from "#app/components/ui/notice.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { analystActor } from "#app/context.ts";
 import { env } from "#app/lib/env.server.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatShortDay } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
@@ -25,7 +26,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 
 export async function action({ context, request }: Route.ActionArgs) {
   const actor = analystActor(context);
-  const form = await request.formData();
+  const form = await readForm(request);
   if (form.get("intent") === "revoke") {
     const tokenId = form.get("tokenId");
     await revokeToken(actor, idParam(typeof tokenId === "string" ? tokenId : "", "token"));

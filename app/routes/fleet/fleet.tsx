@@ -10,6 +10,7 @@ import { Timetable } from "#app/components/ui/timetable.tsx";
 import { townActor } from "#app/context.ts";
 import { dueState } from "#app/domain/calibration/due.ts";
 import { now } from "#app/lib/clock.server.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatInches, formatShortDay } from "#app/lib/format.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { approveCalibrations, listFleet, type TruckView } from "#app/services/fleet.server.ts";
@@ -25,7 +26,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const ids = form
     .getAll("calibrationId")
     .flatMap((id) => (typeof id === "string" && /^[1-9]\d{0,9}$/.test(id) ? [Number(id)] : []));
@@ -86,9 +87,11 @@ export default function Fleet({ loaderData: { isDirector, today, trucks } }: Rou
         ) : over > 0 ? (
           <>
             <Over>
-              {sentenceStart(countWords(over, "truck", "trucks"))} of {salt.length}
+              {over === salt.length && over > 1
+                ? `All ${countWords(over, "salt truck", "salt trucks")}`
+                : `${sentenceStart(countWords(over, "", "").trim())} of ${countWords(salt.length, "salt truck", "salt trucks")}`}
             </Over>{" "}
-            {over === 1 ? "lays" : "lay"} more salt than the band at the working setting.
+            {over === 1 ? "lays" : "lay"} more than the band at the working setting.
           </>
         ) : (
           "No salt truck lays more than the band at its working setting."
@@ -111,13 +114,13 @@ export default function Fleet({ loaderData: { isDirector, today, trucks } }: Rou
         isCaptionHidden
         hasStickyHead
         columns={[
-          { key: "truck", label: "truck" },
-          { key: "spreader", label: "spreader" },
+          { key: "truck", label: "truck", foldPrefix: "Truck" },
+          { key: "spreader", label: "spreader", isWideOnly: true },
           { key: "material", label: "material" },
-          { key: "at", label: "working setting and speed" },
-          { key: "gate", label: "gate", unit: "in", isNumeric: true },
+          { key: "at", label: "working setting and speed", isWideOnly: true },
+          { key: "gate", label: "gate", unit: "in", isNumeric: true, isWideOnly: true },
           { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
-          { key: "weighed", label: "weighed", isNumeric: true },
+          { key: "weighed", label: "weighed" },
           { key: "due", label: "calibration" },
         ]}
         rows={lines.map(({ truck, materialName, inForce, due: state }) => ({
@@ -151,11 +154,11 @@ function ReadyCalibrations({ isDirector, ready }: { isDirector: boolean; ready: 
         caption="Calibrations that are weighed and not yet in force"
         isCaptionHidden
         columns={[
-          { key: "truck", label: "truck" },
+          { key: "truck", label: "truck", foldPrefix: "Truck" },
           { key: "material", label: "material" },
           { key: "gate", label: "gate", unit: "in", isNumeric: true },
           { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
-          { key: "weighed", label: "weighed", isNumeric: true },
+          { key: "weighed", label: "weighed" },
         ]}
         rows={ready.map(({ truck, calibration }) => ({
           key: String(calibration.id),

@@ -58,7 +58,7 @@ function RateTable({ truck, calibration }: { truck: TruckView; calibration: Cali
   return (
     <Timetable
       caption={`Pounds of ${calibration.materialName.toLowerCase()} per lane mile, by feed setting and speed`}
-      isFolding={false}
+      onPhone="keep"
       columns={[
         { key: "setting", label: "setting" },
         ...speedsMph.map((mph) => ({ key: String(mph), label: `${mph} mph`, isNumeric: true })),
@@ -67,7 +67,16 @@ function RateTable({ truck, calibration }: { truck: TruckView; calibration: Cali
         key: String(setting),
         isOurs: setting === truck.workingSetting,
         cells: {
-          setting: isAtHydraulicLimit ? `${setting}, hydraulics at their limit` : String(setting),
+          setting: isAtHydraulicLimit ? (
+            <>
+              {setting}
+              <span className="block text-s font-normal sm:inline">
+                <span className="max-sm:hidden">, </span>hydraulics at their limit
+              </span>
+            </>
+          ) : (
+            String(setting)
+          ),
           ...Object.fromEntries(
             speedsMph.map((mph) => {
               const rate = rateAtSetting(rates, setting, mph, truck.lanesPerPass);
@@ -106,7 +115,7 @@ export default function Truck({ loaderData: { truck } }: Route.ComponentProps) {
         {truck.lanesPerPass === 1 ? "lane" : `pass over ${truck.lanesPerPass} lanes`}. Rates are yardsticks: policy,
         road, weather and the person responsible decide how much is applied.
       </Method>
-      <div className="mt-6 overflow-x-auto">
+      <div className="mt-6">
         <RateTable truck={truck} calibration={newest} />
       </div>
       <p className="mt-2 text-note text-gravel">
@@ -119,7 +128,7 @@ export default function Truck({ loaderData: { truck } }: Route.ComponentProps) {
         columns={[
           { key: "day", label: "weighed" },
           { key: "material", label: "material" },
-          { key: "gate", label: "gate", unit: "in", isNumeric: true },
+          { key: "gate", label: "gate", unit: "in", isNumeric: true, isWideOnly: true },
           { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
           { key: "state", label: "state" },
         ]}

@@ -1,3 +1,4 @@
+import { deedWords } from "#app/components/network/trail-words.ts";
 import { NetworkPages } from "#app/components/network/network-pages.tsx";
 import { Answer, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
@@ -5,7 +6,7 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
-import { countWords } from "#app/lib/words.ts";
+import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { listTrail } from "#app/services/audit.server.ts";
 import type { Route } from "./+types/audit";
 
@@ -20,6 +21,17 @@ export async function loader({ url }: Route.LoaderArgs) {
 
 export const meta: Route.MetaFunction = () => [{ title: "Trail · Commonweigh" }];
 
+type Entry = Route.ComponentProps["loaderData"]["entries"][number];
+
+/** Jobs that nobody stands beside are done by the network itself. */
+function actorWords({ actorName }: Entry) {
+  return actorName ?? "the network itself";
+}
+
+function ofTown({ townName }: Entry) {
+  return townName === null ? "" : ` (${townName})`;
+}
+
 export default function Audit({ loaderData: { entries } }: Route.ComponentProps) {
   const [newest] = entries;
   const last = entries.at(-1);
@@ -27,10 +39,10 @@ export default function Audit({ loaderData: { entries } }: Route.ComponentProps)
     <Page>
       <Answer>
         {newest
-          ? `The last thing done was “${newest.action}”, ${formatInstant(newest.at)}.`
+          ? `${sentenceStart(actorWords(newest))} ${deedWords(newest.action)}${ofTown(newest)}, ${formatInstant(newest.at)}.`
           : "Nothing has been done yet."}
       </Answer>
-      <Method>Who did what, newest first. Entries are added and never changed.</Method>
+      <Method>The last thing done, and all before it. Entries are added and never changed.</Method>
       <div className="mt-5">
         <NetworkPages />
       </div>
@@ -39,19 +51,19 @@ export default function Audit({ loaderData: { entries } }: Route.ComponentProps)
           caption={`${countWords(entries.length, "entry", "entries")}, newest first`}
           columns={[
             { key: "when", label: "when" },
-            { key: "who", label: "who" },
-            { key: "town", label: "town" },
-            { key: "did", label: "did" },
-            { key: "what", label: "to" },
+            { key: "who", label: "who", isProse: true },
+            { key: "did", label: "did", isProse: true },
+            { key: "town", label: "town", isProse: true },
+            { key: "what", label: "record", isWideOnly: true },
           ]}
           rows={entries.map((entry) => ({
             key: String(entry.id),
             cells: {
               when: formatInstant(entry.at),
-              who: entry.actorName === null ? entry.actorRole : `${entry.actorName}, ${entry.actorRole}`,
+              who: entry.actorName === null ? actorWords(entry) : `${entry.actorName}, ${entry.actorRole}`,
               town: entry.townName ?? "–",
-              did: entry.action,
-              what: entry.entityId === null ? entry.entity : `${entry.entity} ${entry.entityId}`,
+              did: deedWords(entry.action),
+              what: entry.entityId === null ? "–" : `no. ${entry.entityId}`,
             },
           }))}
         />

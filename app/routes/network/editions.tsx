@@ -12,6 +12,7 @@ import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { reasonWords } from "#app/domain/peers/cell.ts";
 import { indicators } from "#app/domain/peers/indicators.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam, seasonParam } from "#app/lib/params.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
@@ -28,22 +29,23 @@ export async function loader({ context }: Route.LoaderArgs) {
   const actor = networkActor(context);
   const startYear = await workingSeason();
   const [editions, jobs] = await Promise.all([listEditions(), listJobs("publish-edition")]);
-  const plan =
-    startYear === null
-      ? null
-      : { preview: await previewEdition(actor, startYear), queue: await getReviewQueue(actor, startYear) };
+  const isComputing = jobs.some(({ state }) => state === "ready" || state === "running");
+  // While one is computed the page asks again each second, and shows no preview.
+  const preview = startYear === null || isComputing ? null : await previewEdition(actor, startYear);
+  const queue = startYear === null ? null : await getReviewQueue(actor, startYear);
+  const [latestJob] = jobs;
   return {
     editions,
-    preview: plan?.preview ?? null,
-    waiting: plan ? plan.queue.doubtful.length + plan.queue.clean.length : 0,
-    missing: plan?.queue.missingTowns.length ?? 0,
-    isComputing: jobs.some(({ state }) => state === "ready" || state === "running"),
-    failure: jobs.find(({ state }) => state === "failed")?.lastError ?? null,
+    preview,
+    waiting: queue ? queue.doubtful.length + queue.clean.length : 0,
+    missing: queue?.missingTowns.length ?? 0,
+    isComputing,
+    failure: latestJob?.state === "failed" ? latestJob.lastError : null,
   };
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const [season, number] = ["season", "number"].map((name) => form.get(name));
   const outcome = await requestEdition(
     networkActor(context),
@@ -68,19 +70,23 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
     return () => clearInterval(timer);
   }, [isComputing, revalidate]);
   const label = preview && `${seasonLabel(preview.seasonStartYear)}, edition ${preview.nextNumber}`;
+  const out = editions.find(({ seasonStartYear }) => seasonStartYear === preview?.seasonStartYear) ?? null;
   return (
     <Page>
       <Answer>
         {isComputing
           ? "An edition is being computed."
-          : preview && preview.townCount > 0
-            ? `${label ?? ""} would show ${preview.shownCount} of ${preview.shownCount + preview.withheld.length} groups, from ${preview.townCount} contributors.`
-            : "There is nothing to publish yet."}
+          : out
+            ? `${seasonLabel(out.seasonStartYear)}, edition ${out.number} is out, from ${out.townCount} contributors.`
+            : preview && preview.townCount > 0
+              ? `${label ?? ""} would show ${preview.shownCount} of ${preview.shownCount + preview.withheld.length} groups, from ${preview.townCount} contributors.`
+              : "There is nothing to publish yet."}
       </Answer>
       <Method>
         An edition is computed once, frozen, and never changed.{" "}
-        {sentenceStart(countWords(waiting, "season waits", "seasons wait"))} for review and{" "}
-        {countWords(missing, "town has", "towns have")} not sent; they would not be in it.
+        {sentenceStart(countWords(waiting, "season waits", "seasons wait"))} for review
+        {waiting > 0 && " and would not be in the next one"};{" "}
+        {missing === 0 ? "no town is missing" : `${countWords(missing, "town has", "towns have")} not sent`}.
       </Method>
       <div className="mt-5">
         <NetworkPages />
@@ -88,7 +94,8 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
       {actionData && <Notice tone="problem" title={actionData.refusal} />}
       {failure !== null && !isComputing && (
         <Notice tone="problem" title="The last edition could not be computed.">
-          {failure} Nothing of it was published.
+          Nothing of it was published. Publish it again; if that fails too, tell whoever runs this service what it says:
+          “{failure}”
         </Notice>
       )}
       {isComputing && (
@@ -98,6 +105,12 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
       )}
       {preview && preview.townCount > 0 && !isComputing && (
         <section>
+          <Heading>{out ? "The next edition" : "What it would hold"}</Heading>
+          {out && (
+            <p className="mb-3 max-w-method">
+              It would take the place of edition {out.number}; publish it once figures were accepted or corrected since.
+            </p>
+          )}
           <Facts
             facts={[
               { name: "contributors", value: preview.townCount },
@@ -115,7 +128,7 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
           <Form method="post" className="mt-4">
             <input type="hidden" name="season" value={preview.seasonStartYear} />
             <input type="hidden" name="number" value={preview.nextNumber} />
-            <Button>Publish {label}</Button>
+            <Button variant={out ? "quiet" : "primary"}>Publish {label}</Button>
           </Form>
           {preview.withheld.length > 0 && (
             <>
@@ -148,7 +161,7 @@ export default function Editions({ loaderData, actionData }: Route.ComponentProp
             { key: "edition", label: "edition" },
             { key: "when", label: "published" },
             { key: "towns", label: "contributors", isNumeric: true },
-            { key: "hash", label: "checksum, first letters" },
+            { key: "hash", label: "checksum, first letters", isWideOnly: true },
           ]}
           rows={editions.map((edition) => ({
             key: String(edition.id),

@@ -50,7 +50,7 @@ export default function Mail({ loaderData: { mails } }: Route.ComponentProps) {
           caption="Mails, newest first, at most 200"
           columns={[
             { key: "to", label: "to" },
-            { key: "subject", label: "subject" },
+            { key: "subject", label: "subject", isProse: true },
             { key: "state", label: "state" },
             { key: "when", label: "when" },
           ]}

@@ -1,5 +1,5 @@
 import { NetworkPages } from "#app/components/network/network-pages.tsx";
-import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
+import { Answer, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { ButtonLink } from "#app/components/ui/button.tsx";
 import { EmptyState } from "#app/components/ui/empty-state.tsx";
@@ -76,8 +76,7 @@ export default function Network({ loaderData: { queue } }: Route.ComponentProps)
           ]}
         />
       </div>
-      <Heading>Next</Heading>
-      <p>
+      <p className="mt-6">
         <ButtonLink to={waiting > 0 ? "/network/review" : "/network/editions"}>
           {waiting > 0 ? "Open the review" : "Prepare the edition"}
         </ButtonLink>

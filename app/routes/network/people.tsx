@@ -11,11 +11,13 @@ import { NetworkPages } from "#app/components/network/network-pages.tsx";
 import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { Button } from "#app/components/ui/button.tsx";
+import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { networkActor, roles } from "#app/context.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatShortDay } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
-import { countWords } from "#app/lib/words.ts";
+import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { invitePerson, listPeople, setPersonActive } from "#app/services/accounts.server.ts";
 import type { Route } from "./+types/people";
 
@@ -43,14 +45,15 @@ const InvitationForm = z
     error: "A recorder or director acts for a town. Choose it.",
   });
 
-export async function loader({ context }: Route.LoaderArgs) {
+export async function loader({ context, url }: Route.LoaderArgs) {
   const actor = networkActor(context);
-  return { ...(await listPeople()), userId: actor.userId, clientRef: randomUUID() };
+  const find = (url.searchParams.get("find") ?? "").trim().slice(0, 80);
+  return { ...(await listPeople()), find, userId: actor.userId, clientRef: randomUUID() };
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
   const actor = networkActor(context);
-  const form = await request.formData();
+  const form = await readForm(request);
   const intent = form.get("intent");
   if (intent === "shut-out" || intent === "readmit") {
     const userId = form.get("userId");
@@ -67,7 +70,8 @@ export async function action({ context, request }: Route.ActionArgs) {
 export const meta: Route.MetaFunction = () => [{ title: "People · Commonweigh" }];
 
 export default function People({ loaderData, actionData }: Route.ComponentProps) {
-  const { people, invitations, userId } = loaderData;
+  const { people, invitations, find, userId } = loaderData;
+  const found = people.filter((person) => isFound(person, find));
   const open = invitations.length;
   return (
     <Page>
@@ -108,23 +112,33 @@ export default function People({ loaderData, actionData }: Route.ComponentProps)
         </>
       )}
       <Heading>People</Heading>
+      <Form method="get" role="search" className="mb-4 flex items-end gap-3">
+        <div className="w-full max-w-field">
+          <TextField name="find" label="Find a person or town" defaultValue={find} key={find} />
+        </div>
+        <Button variant="quiet">Find</Button>
+      </Form>
+      {find !== "" && (
+        <p className="mb-3">
+          {sentenceStart(countWords(found.length, "person", "people"))} found.{" "}
+          <TextLink to="/network/people">Show everybody</TextLink>
+        </p>
+      )}
       <Timetable
-        caption="Everybody in the network"
+        caption={find === "" ? "Everybody in the network" : `People found by “${find}”`}
         isCaptionHidden
         hasStickyHead
         columns={[
           { key: "name", label: "name" },
-          { key: "role", label: "role" },
-          { key: "town", label: "town" },
-          { key: "email", label: "mail" },
-          { key: "state", label: "" },
+          { key: "role", label: "may act as", isProse: true },
+          { key: "email", label: "mail", isProse: true },
+          { key: "state", label: "", isNumeric: true },
         ]}
-        rows={people.map((person) => ({
+        rows={found.map((person) => ({
           key: String(person.id),
           cells: {
             name: person.name,
-            role: person.role,
-            town: person.townName ?? "–",
+            role: person.townName === null ? person.role : `${person.role} of ${person.townName}`,
             email: person.email,
             state:
               person.id === userId ? (
@@ -146,12 +160,19 @@ export default function People({ loaderData, actionData }: Route.ComponentProps)
   );
 }
 
+type Person = Route.ComponentProps["loaderData"]["people"][number];
+
+function isFound({ name, townName, email, role }: Person, find: string) {
+  const text = [name, townName, email, role].join("\n").toLowerCase();
+  return text.includes(find.toLowerCase());
+}
+
 function Invite({ loaderData, actionData }: Pick<Route.ComponentProps, "loaderData" | "actionData">) {
   const [form, fields] = useForm({
     lastResult: actionData,
     constraint: getZodConstraint(InvitationForm),
     onValidate: ({ formData }) => parseWithZod(formData, { schema: InvitationForm }),
-    shouldRevalidate: "onBlur",
+    shouldRevalidate: "onInput",
   });
   return (
     <KeptForm

@@ -1,5 +1,6 @@
 import { data, Form, redirect } from "react-router";
 import { FindingsList } from "#app/components/season/findings-list.tsx";
+import { OwnSeasons } from "#app/components/season/own-seasons.tsx";
 import { SeasonTable } from "#app/components/season/season-table.tsx";
 import { ErrorSummary } from "#app/components/forms/error-summary.tsx";
 import { KeptForm } from "#app/components/forms/kept-form.tsx";
@@ -11,8 +12,10 @@ import { Button } from "#app/components/ui/button.tsx";
 import { Notice } from "#app/components/ui/notice.tsx";
 import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
+import { countWords } from "#app/lib/words.ts";
 import { acceptFigure, getFigureReview, returnFigure } from "#app/services/review.server.ts";
 import type { Route } from "./+types/review-figure";
 
@@ -26,7 +29,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 export async function action({ context, params, request }: Route.ActionArgs) {
   const actor = networkActor(context);
   const figureId = idParam(params.figureId, "sent season");
-  const form = await request.formData();
+  const form = await readForm(request);
   const versionText = form.get("version");
   const version = idParam(typeof versionText === "string" ? versionText : "", "version of these figures");
   const noteText = form.get("note");
@@ -52,6 +55,11 @@ export const meta: Route.MetaFunction = ({ loaderData }) => [
   { title: `Review ${loaderData?.townName ?? ""} · Commonweigh` },
 ];
 
+function checkWords(findingCount: number) {
+  if (findingCount === 0) return "; it passed every check.";
+  return `: ${countWords(findingCount, "thing", "things")} to look at.`;
+}
+
 const stateWords = {
   draft: "",
   sent: "waits for your review",
@@ -65,6 +73,7 @@ export default function ReviewFigure({
 }: Route.ComponentProps) {
   const label = seasonLabel(figure.seasonStartYear);
   const [first] = figure.findings;
+  const seasons = [figure, ...[...earlier].reverse().slice(0, 3)];
   const question =
     first === undefined
       ? ""
@@ -72,8 +81,7 @@ export default function ReviewFigure({
   return (
     <Page>
       <Answer>
-        {label} of {townName} {stateWords[figure.state]}
-        {figure.state === "sent" && (first ? `: ${first.message}` : ", and it passed every check.")}
+        {`${townName}’s ${label} ${stateWords[figure.state]}${figure.state === "sent" ? checkWords(figure.findings.length) : "."}`}
       </Answer>
       <Method>
         Sent {figure.sentAt === null ? "" : formatInstant(figure.sentAt)}. Beside it, the town’s own earlier seasons.
@@ -85,38 +93,43 @@ export default function ReviewFigure({
       {actionData?.error && (
         <ErrorSummary key={actionData.error} errors={[{ fieldId: "note", message: actionData.error }]} />
       )}
-      {figure.findings.length > 1 && <FindingsList findings={figure.findings} />}
-      <SeasonTable
-        seasons={[figure, ...[...earlier].reverse().slice(0, 3)]}
-        caption={`${townName}, as reported and worked out from it`}
-      />
+      {figure.findings.length > 0 && <FindingsList findings={figure.findings} />}
       {figure.reviewNote !== null && <Notice title="You asked">{figure.reviewNote}</Notice>}
       {figure.state === "sent" && (
         <section>
           <Heading>Your decision</Heading>
-          <div className="grid gap-x-10 gap-y-6 md:grid-cols-2">
-            <Form method="post" className="order-1 self-end md:order-2">
-              <input type="hidden" name="version" value={figure.version} />
-              <input type="hidden" name="verdict" value="accept" />
-              <Button variant={first === undefined ? "primary" : "quiet"}>Accept it as it is</Button>
-            </Form>
-            <KeptForm formKey="return" ownerId={userId} method="post" className="order-2 grid gap-4 md:order-1">
-              <input type="hidden" name="version" value={figure.version} />
-              <input type="hidden" name="verdict" value="return" />
-              <TextArea
-                name="note"
-                label="Question that goes back with it"
-                defaultValue={question}
-                error={actionData?.error}
-                maxLength={2000}
-              />
-              <div>
-                <Button variant={first === undefined ? "quiet" : "primary"}>Send it back</Button>
-              </div>
-            </KeptForm>
+          <div className="grid gap-x-14 gap-y-6 md:grid-cols-2">
+            <OwnSeasons
+              title="Its own seasons, tons of salt per lane mile"
+              seasons={seasons}
+              isDoubtful={first !== undefined}
+            />
+            <div className="grid gap-4">
+              <KeptForm formKey="return" ownerId={userId} method="post" className="grid gap-4">
+                <input type="hidden" name="version" value={figure.version} />
+                <input type="hidden" name="verdict" value="return" />
+                <TextArea
+                  name="note"
+                  label="Question that goes back with it"
+                  defaultValue={question}
+                  error={actionData?.error}
+                  maxLength={2000}
+                />
+                <div>
+                  <Button variant={first === undefined ? "quiet" : "primary"}>Send it back</Button>
+                </div>
+              </KeptForm>
+              <Form method="post">
+                <input type="hidden" name="version" value={figure.version} />
+                <input type="hidden" name="verdict" value="accept" />
+                <Button variant={first === undefined ? "primary" : "quiet"}>Accept it as it is</Button>
+              </Form>
+            </div>
           </div>
         </section>
       )}
+      <Heading>The figures, beside its earlier seasons</Heading>
+      <SeasonTable seasons={seasons} caption="As reported, and worked out from it" />
     </Page>
   );
 }

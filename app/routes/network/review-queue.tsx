@@ -9,9 +9,10 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { notFound } from "#app/lib/errors.ts";
-import { formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
+import { readForm } from "#app/lib/form.ts";
+import { formatShortDay, formatWhole } from "#app/lib/format.ts";
 import { seasonParam } from "#app/lib/params.ts";
-import { countWords, sentenceStart } from "#app/lib/words.ts";
+import { countWords, missingWords, sentenceStart } from "#app/lib/words.ts";
 import { acceptCleanFigures, getReviewQueue, type ReviewItem } from "#app/services/review.server.ts";
 import { workingSeason } from "#app/services/season-figures.server.ts";
 import type { Route } from "./+types/review-queue";
@@ -26,7 +27,7 @@ export async function loader({ context, url }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const season = form.get("season");
   const startYear = seasonParam(typeof season === "string" ? season : "");
   await acceptCleanFigures(networkActor(context), startYear);
@@ -39,7 +40,7 @@ function queueItem({ figure, townName }: ReviewItem) {
   return {
     key: String(figure.id),
     name: townName,
-    detail: `sent ${figure.sentAt === null ? "" : formatShortDay(figure.sentAt.slice(0, 10))}, ${formatOneDecimal(figure.amounts.laneMiles)} lane miles`,
+    detail: `sent ${figure.sentAt === null ? "" : formatShortDay(figure.sentAt.slice(0, 10))}, ${formatWhole(figure.amounts.laneMiles)} lane miles`,
     why: figure.findings.map(({ message }) => message).join(" ") || "Passed every check.",
     to: `/network/review/${figure.id}`,
   };
@@ -56,11 +57,13 @@ export default function ReviewQueuePage({ loaderData: { queue } }: Route.Compone
           ? `Nothing of ${label} waits for review.`
           : doubtful.length === 0
             ? `${sentenceStart(countWords(clean.length, "season", "seasons"))} of ${label} passed every check.`
-            : `${sentenceStart(countWords(doubtful.length, "season", "seasons"))} of ${label} ${doubtful.length === 1 ? "needs" : "need"} a look. ${doubtful[0]?.townName ?? ""} is the most doubtful.`}
+            : doubtful.length === 1
+              ? `One season of ${label} needs a look: ${doubtful[0]?.townName ?? ""}.`
+              : `${sentenceStart(countWords(doubtful.length, "season", "seasons"))} of ${label} need a look. ${doubtful[0]?.townName ?? ""} is the most doubtful.`}
       </Answer>
       <Method>
-        {sentenceStart(countWords(acceptedCount, "town is", "towns are"))} accepted,{" "}
-        {countWords(missingTowns.length, "has", "have")} not sent. Most doubtful first.
+        {sentenceStart(countWords(acceptedCount, "town is", "towns are"))} accepted, {missingWords(missingTowns.length)}
+        .{doubtful.length > 1 && " Most doubtful first."}
       </Method>
       <div className="mt-5">
         <NetworkPages />

@@ -1,6 +1,6 @@
 import { LaneStrip } from "#app/components/charts/lane-strip.tsx";
 import { laneStripSvgs } from "#app/components/charts/lane-strip-svg.server.ts";
-import { stripParts } from "#app/components/charts/lane-strip-spec.ts";
+import { markedAlike, stripParts } from "#app/components/charts/lane-strip-spec.ts";
 import { StripKey } from "#app/components/charts/strip-key.tsx";
 import { Answer, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
@@ -28,7 +28,7 @@ function stripOf({ indicator, cell, ownValue, percentile }: StandingRow, townNam
   const spec = memberStripSpec({ indicator, cell, own });
   const sentence = placeSentence({ indicator, ownValue, cell, percentile, band: indicators[indicator].band });
   const tenths = cell.state === "shown" ? cell.tenths : null;
-  return { indicator, spec, svg: laneStripSvgs(spec), sentence, tenths };
+  return { indicator, spec, sentence, tenths };
 }
 
 export async function loader({ context, url }: Route.LoaderArgs) {
@@ -41,9 +41,14 @@ export async function loader({ context, url }: Route.LoaderArgs) {
   );
   if (!standing) return { standing: null };
   const { rows, ...rest } = standing;
-  const strips = order
+  const drawn = order
     .flatMap((key) => rows.filter(({ indicator }) => indicator === key))
     .map((row) => stripOf(row, actor.townName));
+  const specs = markedAlike(drawn.map(({ spec }) => spec));
+  const strips = drawn.map((strip, position) => {
+    const spec = specs[position] ?? strip.spec;
+    return { ...strip, spec, svg: laneStripSvgs(spec) };
+  });
   return { standing: { ...rest, strips } };
 }
 
@@ -85,6 +90,7 @@ export default function Peers({ loaderData: { standing } }: Route.ComponentProps
         choices={groups.map(({ key, label, towns, reason }) => ({
           key,
           label,
+          part: partWords(key),
           to: here({ group: key }),
           isCurrent: key === groupKey,
           ...(towns === null ? {} : { townCountWords: String(towns) }),
@@ -126,6 +132,11 @@ export default function Peers({ loaderData: { standing } }: Route.ComponentProps
       )}
     </Page>
   );
+}
+
+function partWords(groupKey: string) {
+  if (groupKey.startsWith("size-")) return "by size";
+  return groupKey.startsWith("district-") ? "by district" : "all";
 }
 
 type Strips = NonNullable<Route.ComponentProps["loaderData"]["standing"]>["strips"];

@@ -9,6 +9,8 @@ import { Notice } from "#app/components/ui/notice.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { townActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
+import { now } from "#app/lib/clock.server.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatDay, formatInstant, formatOneDecimal, formatWhole } from "#app/lib/format.ts";
 import { idParam, seasonParam } from "#app/lib/params.ts";
 import { getSeason, sendSeason } from "#app/services/season-figures.server.ts";
@@ -17,7 +19,8 @@ import type { Route } from "./+types/season";
 export async function loader({ context, params }: Route.LoaderArgs) {
   const actor = townActor(context);
   const season = await getSeason(actor, seasonParam(params.seasonStartYear));
-  return { season, townName: actor.townName, isDirector: actor.role === "director" };
+  const isLate = season.figuresDueOn < now().toISOString().slice(0, 10);
+  return { season, isLate, isDirector: actor.role === "director" };
 }
 
 const refusals = {
@@ -27,7 +30,7 @@ const refusals = {
 } as const;
 
 export async function action({ context, params, request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const version = form.get("version");
   const outcome = await sendSeason(
     townActor(context),
@@ -56,9 +59,9 @@ function sentence(season: Season) {
   return `In ${label} you used ${formatOneDecimal(saltTonsPerLaneMile)} tons of salt on each lane mile${perEvent}.`;
 }
 
-function stateWords(season: Season) {
+function stateWords(season: Season, isLate: boolean) {
   const { figure } = season;
-  const due = `Figures are due ${formatDay(season.figuresDueOn)}.`;
+  const due = `Figures ${isLate ? "were" : "are"} due ${formatDay(season.figuresDueOn)}.`;
   if (!figure) return due;
   switch (figure.state) {
     case "draft":
@@ -72,7 +75,7 @@ function stateWords(season: Season) {
   }
 }
 
-export default function SeasonPage({ loaderData: { season, isDirector }, actionData }: Route.ComponentProps) {
+export default function SeasonPage({ loaderData: { season, isLate, isDirector }, actionData }: Route.ComponentProps) {
   const { figure, otherSeasons, seasonStartYear } = season;
   const label = seasonLabel(seasonStartYear);
   const isOpen = figure === null || figure.state === "draft" || figure.state === "returned";
@@ -80,7 +83,7 @@ export default function SeasonPage({ loaderData: { season, isDirector }, actionD
   return (
     <Page>
       <Answer>{sentence(season)}</Answer>
-      <Method>{stateWords(season)}</Method>
+      <Method>{stateWords(season, isLate)}</Method>
       {actionData && (
         <Notice tone="problem" title={actionData.refusal}>
           Nothing was changed by this click.
@@ -106,7 +109,7 @@ export default function SeasonPage({ loaderData: { season, isDirector }, actionD
                   <Button>Send {label} in</Button>
                 </Form>
               ) : (
-                <p className="font-semibold">The director looks these over and sends them in.</p>
+                <p>The director looks these over and sends them in.</p>
               )}
               <TextLink to="/uploads?kind=season-figures" weight="bold">
                 Replace them by another file
@@ -132,7 +135,9 @@ export default function SeasonPage({ loaderData: { season, isDirector }, actionD
           {others.map((year, position) => (
             <span key={year}>
               {position > 0 && ", "}
-              <TextLink to={`/season/${year}`}>{seasonLabel(year)}</TextLink>
+              <TextLink to={`/season/${year}`} className="whitespace-nowrap">
+                {seasonLabel(year)}
+              </TextLink>
             </span>
           ))}
         </p>

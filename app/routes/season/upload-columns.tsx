@@ -12,6 +12,7 @@ import { townActor } from "#app/context.ts";
 import { densitySource } from "#app/domain/season/bulk-density.ts";
 import { measureUnits } from "#app/domain/upload/measure.ts";
 import { badRequest } from "#app/lib/errors.ts";
+import { readForm } from "#app/lib/form.ts";
 import { idParam } from "#app/lib/params.ts";
 import { countWords, listWords, sentenceStart } from "#app/lib/words.ts";
 import { getColumns } from "#app/services/uploads/columns.server.ts";
@@ -43,7 +44,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 export async function action({ context, params, request }: Route.ActionArgs) {
   const actor = townActor(context);
   const uploadId = idParam(params.uploadId, "upload");
-  const form = await request.formData();
+  const form = await readForm(request);
   if (form.get("intent") === "elsewhere") {
     const place = PlaceForm.safeParse({ sheetName: form.get("sheetName"), headRow: form.get("headRow") });
     if (!place.success) throw badRequest("This choice could not be read. Go back and choose again.");

@@ -4,6 +4,7 @@ import { UploadOutcome } from "#app/components/season/upload-outcome.tsx";
 import { UploadProgress } from "#app/components/season/upload-progress.tsx";
 import { townActor } from "#app/context.ts";
 import { badRequest } from "#app/lib/errors.ts";
+import { readForm } from "#app/lib/form.ts";
 import { idParam } from "#app/lib/params.ts";
 import { answerUpload } from "#app/services/uploads/answers.server.ts";
 import { acceptUpload, cancelUpload, startAgain } from "#app/services/uploads/decide.server.ts";
@@ -28,7 +29,7 @@ const refusals = {
 export async function action({ context, params, request }: Route.ActionArgs) {
   const actor = townActor(context);
   const uploadId = idParam(params.uploadId, "upload");
-  const form = await request.formData();
+  const form = await readForm(request);
   const intent = form.get("intent");
   const here = `/uploads/${uploadId}`;
   switch (intent) {

@@ -9,10 +9,19 @@ import { indicators } from "#app/domain/peers/indicators.ts";
 import { sentenceText, wallSentence } from "#app/domain/peers/sentence.ts";
 import { notFound } from "#app/lib/errors.ts";
 import { idParam } from "#app/lib/params.ts";
+import type { WallCell } from "#app/services/editions.server.ts";
 import { getWorkshop } from "#app/services/workshops.server.ts";
 import type { Route } from "./+types/board";
 
 export const handle = { isWall: true };
+
+/** Whose figures they are, and how many towns as a band. */
+function basisWords({ groupLabel, ...cell }: WallCell) {
+  if (cell.state === "withheld") return groupLabel;
+  const isOpen = cell.townBand.endsWith(" and more");
+  const towns = isOpen ? cell.townBand.replace(" and", " towns and") : `${cell.townBand} towns`;
+  return `${groupLabel}, ${towns}; each bar about three`;
+}
 
 export async function loader({ context, params }: Route.LoaderArgs) {
   const workshop = await getWorkshop(networkActor(context), idParam(params.workshopId, "workshop"));
@@ -29,8 +38,8 @@ export async function loader({ context, params }: Route.LoaderArgs) {
     boardCount: workshop.boards.length,
     question,
     sentence: sentenceText(wallSentence({ indicator, cell, band: indicators[indicator].band })),
-    unit: `${indicators[indicator].name}, lb. ${cell.groupLabel}${cell.state === "shown" ? `, ${cell.townBand} towns; each bar about three` : ""}`,
-    svg: laneStripSvg(spec, "wall"),
+    basis: `${indicators[indicator].wallName}. ${basisWords(cell)}`,
+    svg: { wall: laneStripSvg(spec, "wall"), phone: laneStripSvg(spec, "phone") },
   };
 }
 
@@ -39,7 +48,7 @@ export const meta: Route.MetaFunction = ({ loaderData }) => [
 ];
 
 export default function BoardPage({ loaderData }: Route.ComponentProps) {
-  const { workshopId, position, boardCount, edition, question, sentence, unit, svg } = loaderData;
+  const { workshopId, position, boardCount, edition, question, sentence, basis, svg } = loaderData;
   const navigate = useNavigate();
   const to = (next: number) => `/workshops/${workshopId}/boards/${next}`;
 
@@ -59,17 +68,17 @@ export default function BoardPage({ loaderData }: Route.ComponentProps) {
 
   return (
     <main id="main" className="flex min-h-dvh flex-col px-4 pt-6 text-wall leading-tight sm:px-11 sm:pt-7">
-      <h1 className="max-w-[24em] text-[clamp(1.75rem,3.6vw,4.2rem)] leading-[1.12] font-bold tracking-[-0.02em] text-balance">
+      <h1 className="max-w-[25em] text-[clamp(1.75rem,3.5vw,4.2rem)] leading-[1.12] font-bold tracking-[-0.02em] text-balance">
         {sentence}
       </h1>
-      <p className="mt-2 text-gravel">{unit}</p>
-      <figure className="mt-4">
-        <WallStrip svg={svg} />
-      </figure>
-      <p className="mt-6 max-w-[28em] text-[clamp(1.75rem,3.1vw,3.6rem)] leading-[1.15] font-semibold tracking-[-0.012em] text-balance">
+      <p className="mt-2 text-gravel max-sm:text-l">{basis}</p>
+      <div className="mt-4">
+        <WallStrip svg={svg.wall} phoneSvg={svg.phone} />
+      </div>
+      <p className="mt-5 mb-6 max-w-[28em] text-[clamp(1.75rem,3.1vw,3.6rem)] leading-[1.15] font-semibold tracking-[-0.012em] text-balance">
         {question}
       </p>
-      <footer className="-mx-4 mt-auto flex flex-wrap items-baseline gap-x-10 gap-y-1 border-t-[5px] border-line px-4 py-3.5 sm:-mx-11 sm:px-11">
+      <footer className="-mx-4 mt-auto flex max-sm:text-l flex-wrap items-baseline gap-x-10 gap-y-1 border-t-[5px] border-line px-4 py-3.5 sm:-mx-11 sm:px-11">
         <nav aria-label="Boards" className="flex gap-8">
           {position > 1 && (
             <Link className="text-spruce underline underline-offset-4" to={to(position - 1)}>

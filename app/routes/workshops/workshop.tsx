@@ -15,9 +15,10 @@ import { Timetable } from "#app/components/ui/timetable.tsx";
 import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { indicators } from "#app/domain/peers/indicators.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatDay } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
-import { countWords, sentenceStart } from "#app/lib/words.ts";
+import { countWords } from "#app/lib/words.ts";
 import { addBoard, getWorkshop } from "#app/services/workshops.server.ts";
 import type { Route } from "./+types/workshop";
 
@@ -41,7 +42,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 
 export async function action({ context, params, request }: Route.ActionArgs) {
   const workshopId = idParam(params.workshopId, "workshop");
-  const submission = parseWithZod(await request.formData(), { schema: BoardForm });
+  const submission = parseWithZod(await readForm(request), { schema: BoardForm });
   if (submission.status !== "success") return data(submission.reply(), { status: 400 });
   const { shows, clientRef, question } = submission.value;
   const [indicator = "", groupKey = ""] = shows.split("|");
@@ -59,7 +60,7 @@ export default function WorkshopPage({ loaderData, actionData }: Route.Component
     lastResult: actionData,
     constraint: getZodConstraint(BoardForm),
     onValidate: ({ formData }) => parseWithZod(formData, { schema: BoardForm }),
-    shouldRevalidate: "onBlur",
+    shouldRevalidate: "onInput",
   });
   const groupLabel = (key: string) => workshop.choices.find(({ groupKey }) => groupKey === key)?.groupLabel ?? key;
   return (
@@ -83,10 +84,10 @@ export default function WorkshopPage({ loaderData, actionData }: Route.Component
             caption="Boards in the order they are shown"
             isCaptionHidden
             columns={[
-              { key: "position", label: "board" },
+              { key: "position", label: "board", foldPrefix: "Board" },
               { key: "shows", label: "shows" },
               { key: "group", label: "peer group" },
-              { key: "question", label: "question" },
+              { key: "question", label: "question", isProse: true },
             ]}
             rows={workshop.boards.map((board) => ({
               key: String(board.position),
@@ -115,17 +116,19 @@ export default function WorkshopPage({ loaderData, actionData }: Route.Component
         <SelectField
           {...fieldWords(fields.shows)}
           label="What it shows"
+          isWide
           hint="Groups that must stay hidden on a wall are left out."
           choices={workshop.choices
             .filter(({ isShown }) => isShown)
             .map((choice) => ({
               value: `${choice.indicator}|${choice.groupKey}`,
-              label: `${indicators[choice.indicator].name}: ${sentenceStart(choice.groupLabel)}`,
+              label: `${indicators[choice.indicator].name}: ${choice.groupLabel}`,
             }))}
         />
         <TextField
           {...fieldWords(fields.question)}
           label="Question to discuss"
+          isWide
           maxLength={200}
           hint="Stands under the strip, large. One question a board."
         />

@@ -15,6 +15,7 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { networkActor, personActor } from "#app/context.ts";
 import { isLocalDate, seasonLabel } from "#app/domain/dates.ts";
+import { readForm } from "#app/lib/form.ts";
 import { formatDay } from "#app/lib/format.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
 import { listEditions } from "#app/services/editions.server.ts";
@@ -46,7 +47,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 }
 
 export async function action({ context, request }: Route.ActionArgs) {
-  const submission = parseWithZod(await request.formData(), { schema: WorkshopForm });
+  const submission = parseWithZod(await readForm(request), { schema: WorkshopForm });
   if (submission.status !== "success") return data(submission.reply(), { status: 400 });
   const { editionId, ...input } = submission.value;
   const workshopId = await createWorkshop(networkActor(context), { ...input, editionId: Number(editionId) });
@@ -62,7 +63,7 @@ export default function Workshops({ loaderData, actionData }: Route.ComponentPro
     <Page>
       <Answer>
         {next
-          ? `${sentenceStart(countWords(workshops.length, "workshop is", "workshops are"))} on the calendar; the latest, “${next.title}”, on ${formatDay(next.heldOn)}.`
+          ? `${sentenceStart(countWords(workshops.length, "workshop is", "workshops are"))} on the calendar: ${workshops.length > 1 ? "the latest, " : ""}“${next.title}”, on ${formatDay(next.heldOn)}.`
           : "No workshop is on the calendar yet."}
       </Answer>
       <Method>
@@ -111,7 +112,7 @@ function NewWorkshop({ loaderData, actionData }: Pick<Route.ComponentProps, "loa
     lastResult: actionData,
     constraint: getZodConstraint(WorkshopForm),
     onValidate: ({ formData }) => parseWithZod(formData, { schema: WorkshopForm }),
-    shouldRevalidate: "onBlur",
+    shouldRevalidate: "onInput",
   });
   return (
     <section>
@@ -124,7 +125,7 @@ function NewWorkshop({ loaderData, actionData }: Pick<Route.ComponentProps, "loa
         className="grid gap-5"
       >
         <input type="hidden" name="clientRef" value={loaderData.clientRef} />
-        <TextField {...fieldWords(fields.title)} label="Title" maxLength={120} />
+        <TextField {...fieldWords(fields.title)} label="Title" isWide maxLength={120} />
         <TextField {...fieldWords(fields.heldOn)} type="date" label="Day" />
         <SelectField
           {...fieldWords(fields.editionId)}

@@ -22,7 +22,7 @@ const AnswerForm = z.discriminatedUnion("intent", [
   }),
   z.object({
     intent: z.literal("cells"),
-    field: Field.refine((field) => field !== ""),
+    cellField: z.array(Field.refine((field) => field !== "")).max(mostFields),
     row: z.array(Row).max(mostFields),
     was: z.array(z.string().max(300)).max(mostFields),
     text: z.array(z.string().max(300)).max(mostFields),
@@ -46,6 +46,7 @@ export function readAnswer(form: FormData): Answer | null {
     field: single("field"),
     name: form.getAll("name"),
     meaning: form.getAll("meaning"),
+    cellField: form.getAll("cellField"),
     row: form.getAll("row"),
     was: form.getAll("was"),
     text: form.getAll("text"),
@@ -61,7 +62,7 @@ export function readAnswer(form: FormData): Answer | null {
     case "cells": {
       const cells = answer.row.map((sheetRow, place) => ({
         sheetRow,
-        field: answer.field,
+        field: answer.cellField[place] ?? "",
         text: (answer.text[place] ?? "").trim(),
         was: answer.was[place] ?? "",
       }));

@@ -43,6 +43,17 @@ export async function rejectedRowsCsv(actor: TownActor, uploadId: number): Promi
   const matching = matchingOf(upload);
   const heads = matching?.columns.map(({ head }) => head) ?? [];
   const headByField = new Map(matching?.columns.map(({ field, head }) => [field ?? "", head]));
+  async function* lines() {
+    const problems = await db.query<{ sheetRow: number; field: string; value: string | null; message: string }>(
+      `SELECT sheet_row AS sheetRow, field, value, message FROM upload_problem
+        WHERE upload_id = ? ORDER BY sheet_row, position`,
+      { type: QueryTypes.SELECT, replacements: [upload.id] },
+    );
+    yield writeCsv(
+      ["row_in_file", "column", "your_file_says", "reason"],
+      problems.map(({ sheetRow, field, value, message }) => [sheetRow === 0 ? null : sheetRow, field, value, message]),
+    );
+  }
   async function* pieces() {
     yield writeCsv(["row_in_file", "state", "reason", ...heads], []);
     let after = 0;
@@ -63,7 +74,8 @@ export async function rejectedRowsCsv(actor: TownActor, uploadId: number): Promi
       yield writeCsv(first.map(String), others);
     }
   }
-  return pieces();
+  // Without columns to match a row is not a thing of its own: the problems alone are told.
+  return matching === null ? lines() : pieces();
 }
 
 /** The empty file of a kind, with example rows to write over. */

@@ -177,7 +177,7 @@ export const uploadKinds: Record<UploadKind, Kind> = {
       ],
     }),
     reading: { by: "station" },
-    canLeaveOut: false,
+    canLeaveOut: true,
     isReplacing: false,
   },
 };

@@ -12,6 +12,9 @@ export type ProblemRow = {
   message: string;
   /** Cells that tell which row it is. */
   context: string[];
+  /** The cell that is to be put right, "" when it is none in particular. */
+  field: string;
+  columnName: string | null;
 };
 
 /** Problems of one sort, so that one look, or one answer, settles many rows. */
@@ -65,6 +68,10 @@ async function namesIn(uploadId: number, { code, field }: Found) {
   );
 }
 
+function nameOf(field: string, matching: Matching | null) {
+  return field === "" ? null : (matching?.columns.find((column) => column.field === field)?.head ?? field);
+}
+
 async function rowsIn(uploadId: number, { code, field }: Found, matching: Matching | null, limit: number) {
   const rows = await db.query<{ sheetRow: number; value: string | null; message: string; cells: string | null }>(
     `SELECT p.sheet_row AS sheetRow, p.value, p.message, r.cells FROM upload_problem p
@@ -80,7 +87,14 @@ async function rowsIn(uploadId: number, { code, field }: Found, matching: Matchi
     contextHeads: context.map(({ head }) => head),
     rows: rows.map(({ sheetRow, value, message, cells }) => {
       const texts = Cells.parse(JSON.parse(cells ?? "[]"));
-      return { sheetRow, value, message, context: context.map(({ index }) => String(texts[index] ?? "").slice(0, 40)) };
+      return {
+        sheetRow,
+        value,
+        message,
+        context: context.map(({ index }) => String(texts[index] ?? "").slice(0, 40)),
+        field,
+        columnName: nameOf(field, matching),
+      };
     }),
   };
 }
@@ -113,7 +127,7 @@ export async function problemGroups(
         key,
         code,
         field,
-        columnName: field === "" ? null : (matching?.columns.find((column) => column.field === field)?.head ?? field),
+        columnName: nameOf(field, matching),
         severity,
         rowCount,
         message: messages === 1 ? message : null,

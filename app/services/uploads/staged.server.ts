@@ -3,6 +3,7 @@ import type { StagedCalibration } from "#app/domain/calibration/calibration-file
 import type { StagedSeason } from "#app/domain/season/season-file.ts";
 import { type StagedStock, stockKinds } from "#app/domain/season/stock-file.ts";
 import type { StagedStorm } from "#app/domain/season/storm-file.ts";
+import type { WeatherDay } from "#app/domain/severity/weather-day.ts";
 import { stormKinds } from "#app/domain/season/storm-kind.ts";
 
 const Positive = z.number().positive();
@@ -63,6 +64,18 @@ export const StockShape = z.object({
   priceCents: Amount.nullable(),
   supplier: z.string(),
 }) satisfies z.ZodType<StagedStock>;
+
+export const WeatherShape = z.object({
+  day: z.string(),
+  tmaxF: z.number().nullable(),
+  tminF: z.number().nullable(),
+  snowfallIn: Amount.nullable(),
+  isSnowfallTrace: z.boolean(),
+  snowDepthIn: Amount.nullable(),
+  isSnowDepthTrace: z.boolean(),
+  precipIn: Amount.nullable(),
+  isPrecipTrace: z.boolean(),
+}) satisfies z.ZodType<WeatherDay>;
 
 /** A row that waits, or nothing for rows that only belong to another. */
 export type StagedRow = { sheetRow: number; staged: unknown };

@@ -1,9 +1,10 @@
 import { setTimeout as sleep } from "node:timers/promises";
-import { Op, type Transaction } from "sequelize";
+import { Op, QueryTypes, type Transaction } from "sequelize";
 import { z } from "zod";
 import type { TownActor } from "#app/context.ts";
 import { now } from "#app/lib/clock.server.ts";
-import { inTransaction } from "#app/lib/db.server.ts";
+import { db, inTransaction } from "#app/lib/db.server.ts";
+import { placesOf, reasonOf } from "#app/lib/error-reason.ts";
 import { FileError } from "#app/lib/file-error.ts";
 import { log } from "#app/lib/log.server.ts";
 import { Upload, type UploadState } from "#app/models/upload.server.ts";
@@ -55,7 +56,10 @@ export async function queueStep(
 /** Begin a queued step at once, and wait a moment for it. */
 export async function startNow(dedupeKey: string, handlers: JobHandlers, requestId: string): Promise<void> {
   const work = runJobNow(dedupeKey, handlers, requestId).catch((error: unknown) => {
-    log.error({ requestId, dedupeKey, reason: String(error) }, "a step of an upload broke off; the worker takes it up");
+    log.error(
+      { requestId, dedupeKey, reason: reasonOf(error) },
+      "a step of an upload broke off; the worker takes it up",
+    );
   });
   await Promise.race([work, sleep(patienceMs, undefined, { ref: false })]);
 }
@@ -138,7 +142,10 @@ export function stepHandler(step: StepName, afterFault: UploadState, work: (step
         if (error instanceof StepOver) return;
         const isFileFault = error instanceof FileError;
         if (!isFileFault)
-          log.error({ requestId, uploadId: begun.upload.id, step, err: error }, "a step of an upload failed");
+          log.error(
+            { requestId, uploadId: begun.upload.id, step, reason: reasonOf(error), places: placesOf(error) },
+            "a step failed",
+          );
         const failure = isFileFault
           ? error.message.slice(0, 400)
           : "Something went wrong on our side, and nothing was taken in. Start this step again.";
@@ -156,4 +163,19 @@ export function stepHandler(step: StepName, afterFault: UploadState, work: (step
 /** Now, for columns that say when. */
 export function settledNow(actor: TownActor) {
   return { settledAt: now(), settledById: actor.userId };
+}
+
+/**
+ * Uploads whose step nobody does any more, because the program died at it each time, go back to where somebody can
+ * start it again.
+ */
+export async function releaseStalledUploads(): Promise<void> {
+  const failure = "This step was begun three times and broken off each time. Nothing was taken in. Start it again.";
+  await db.query(
+    `UPDATE upload u SET u.state = IF(u.state = 'accepting', 'checked', 'failed'), u.failure = ?
+      WHERE u.state IN ('received', 'checking', 'accepting') AND NOT EXISTS (
+        SELECT 1 FROM job j WHERE j.state IN ('ready', 'running') AND j.kind IN ('upload-read', 'upload-check', 'upload-accept')
+          AND JSON_VALUE(j.payload, '$.uploadId') = u.id)`,
+    { type: QueryTypes.UPDATE, replacements: [failure] },
+  );
 }

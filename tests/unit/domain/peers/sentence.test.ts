@@ -88,7 +88,7 @@ test("a town without a figure is told so, and what its peers lay", () => {
 
 test("the wall says where half lie and what the band does there", () => {
   expect(sentenceText(wallSentence({ indicator, cell: wall, band }))).toBe(
-    "Half of us lay between 270 and 380 lb of salt on a lane mile at the working setting. The band ends at 300.",
+    "Half of us lay between 270 and 380 lb of salt on a lane mile. The band ends at 300.",
   );
   expect(sentenceText(wallSentence({ indicator, cell: { ...wall, median: 230 }, band }))).toContain(
     "The band begins at 250.",

@@ -75,6 +75,9 @@ export async function receiveForm(request: Request, path: string, mostBytes: num
   let file: ReceivedFile | null = null;
   let writing = Promise.resolve();
   let isTooLarge = false;
+  for (const limit of ["filesLimit", "fieldsLimit", "partsLimit"] as const) {
+    parser.on(limit, () => parser.destroy(new Error(limit)));
+  }
   parser.on("field", (name, value) => fields.set(name, value));
   parser.on("file", (_name, stream, { filename }) => {
     // Browsers send an empty part without a name when no file is chosen.

@@ -47,7 +47,7 @@ Upload.init(
     encoding: { type: DataTypes.STRING(12), allowNull: false },
     state: { type: DataTypes.STRING(12), allowNull: false },
     matching: DataTypes.JSON,
-    run: DataTypes.INTEGER.UNSIGNED,
+    run: { type: DataTypes.INTEGER.UNSIGNED, defaultValue: 0 },
     rowsTotal: DataTypes.INTEGER.UNSIGNED,
     rowsRead: DataTypes.INTEGER.UNSIGNED,
     rowsOk: DataTypes.INTEGER.UNSIGNED,

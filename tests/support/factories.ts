@@ -181,26 +181,37 @@ export async function aSeasonFigure(
   });
 }
 
+/** A problem of an upload's first row. */
+export type AProblem = { field?: string; value?: string | null; code: string; severity?: string; message: string };
+
 /** A file of season figures that is checked and waits, with nothing wrong in it unless problems are given. */
 export async function anUpload(
   app: App,
-  given: { town: Town; person: Person; fileName?: string; problems?: unknown[]; state?: string },
+  given: { town: Town; person: Person; fileName?: string; problems?: AProblem[]; state?: string },
 ): Promise<number> {
   const content = Buffer.from(`file ${next()}`);
-  return insert(app, "upload", {
+  const problems = given.problems ?? [];
+  const hasError = problems.some(({ severity = "error" }) => severity === "error");
+  const id = await insert(app, "upload", {
     town_id: given.town.id,
     kind: "season-figures",
     file_name: given.fileName ?? "figures.csv",
     byte_count: content.length,
     sha256: digest(content),
-    content,
-    row_count: 1,
-    staged: "[]",
-    problems: JSON.stringify(given.problems ?? []),
+    rows_read: 1,
+    rows_ok: problems.length === 0 ? 1 : 0,
+    rows_error: hasError ? 1 : 0,
+    rows_check: problems.length > 0 && !hasError ? 1 : 0,
     state: given.state ?? "checked",
     created_by_id: given.person.id,
     created_at: minutesFromNow(0),
   });
+  await insert(app, "upload_chunk", { upload_id: id, position: 0, content });
+  await insert(app, "upload_row", { upload_id: id, sheet_row: 2, state: hasError ? "error" : "ok", cells: "[]" });
+  for (const [position, { field = "", value = null, severity = "error", ...problem }] of problems.entries()) {
+    await insert(app, "upload_problem", { upload_id: id, sheet_row: 2, position, field, value, severity, ...problem });
+  }
+  return id;
 }
 
 /** Towns with accepted figures and one weighed salt truck each, different enough for an edition to show groups. */

@@ -72,8 +72,7 @@ async function otherTown(app: TestApp): Promise<Ids> {
   await aSeasonFigure(app, town, { startYear: 2023, state: "accepted", saltLb, laneMiles });
   const figureId = await aSeasonFigure(app, town, { state: "accepted", saltLb, laneMiles, reviewNote: canaries.note });
   const problem = {
-    row: 2,
-    column: "events",
+    field: "events",
     value: canaries.cell,
     code: "x",
     severity: "error",

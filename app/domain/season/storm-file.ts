@@ -81,7 +81,7 @@ function readUse(
   const isLiquid = material.kind === "brine";
   const text = cellText(fileRow, column);
   if (text === "" || text === "-") return "blank";
-  const what = `${material.name} used`;
+  const what = `amount of ${material.name}`;
   const base = { what, min: 0, lbPerCubicYard: lbPerCubicYardOf[material.kind] };
   if (isLiquid) {
     const usedGal = cellNumber(fileRow, column, { ...base, max: 5_000_000, unit: "gal" }, problems);

@@ -44,7 +44,9 @@ export async function action({ context, params, request }: Route.ActionArgs) {
     case "accept-without": {
       const choice = { leaveOut: intent === "accept-without", isReplacing: form.get("isReplacing") !== "0" };
       const outcome = await acceptUpload(actor, uploadId, choice);
-      return outcome.ok ? redirect(here) : data({ refusal: refusals[outcome.reason] }, { status: 409 });
+      if (outcome.ok) return redirect(here);
+      const refusal = outcome.reason === "not-now" ? outcome.message : refusals[outcome.reason];
+      return data({ refusal }, { status: 409 });
     }
     default: {
       const answer = readAnswer(form);

@@ -23,7 +23,10 @@ async function lockUpload(actor: TownActor, uploadId: number, transaction: Trans
 }
 
 export type AcceptOutcome =
-  { ok: true } | { ok: false; reason: "accepted-before" | "errors-stand" | "nothing-ready" | "not-checked" };
+  | { ok: true }
+  | { ok: false; reason: "accepted-before" | "errors-stand" | "nothing-ready" | "not-checked" }
+  /** Something changed meanwhile; `message` says what. */
+  | { ok: false; reason: "not-now"; message: string };
 
 /**
  * Ask for a checked file's good rows to be taken in: all in one transaction, or none.
@@ -49,7 +52,10 @@ export async function acceptUpload(
   });
   if (!outcome.ok) return outcome;
   await startNow(outcome.dedupeKey, uploadHandlers, actor.requestId);
-  return { ok: true };
+  const after = await Upload.findByPk(uploadId, { attributes: ["state", "failure"] });
+  return after?.state === "checked" && after.failure !== null
+    ? { ok: false, reason: "not-now", message: after.failure }
+    : { ok: true };
 }
 
 /**

@@ -115,11 +115,11 @@ async function beginStep(step: StepName, payload: unknown, requestId: string): P
   const { run } = upload;
   const write: Step["write"] = (progress, work) =>
     inTransaction(async (transaction) => {
-      const states = [state, "checking"];
-      const where = { id: uploadId, run, state: { [Op.in]: states } };
-      // First of all, so that the row is locked until the rest is written.
-      const [own] = await Upload.update({ run, ...progress }, { where, transaction });
-      if (own === 0) throw new StepOver();
+      const where = { id: uploadId, run, state: { [Op.in]: [state, "checking"] } };
+      // Locked until the rest is written, so that nobody takes the step over in between.
+      const own = await Upload.findOne({ attributes: ["id"], where, lock: transaction.LOCK.UPDATE, transaction });
+      if (!own) throw new StepOver();
+      if (Object.keys(progress).length > 0) await Upload.update(progress, { where: { id: uploadId }, transaction });
       await work(transaction);
     });
   return { upload, actor: { kind: "town", ...actor, requestId, sessionId: null }, write };

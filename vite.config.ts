@@ -1,11 +1,13 @@
 import { reactRouter } from "@react-router/dev/vite";
 import tailwindcss from "@tailwindcss/vite";
 import { defineConfig } from "vitest/config";
+import { compressedAssets } from "./scripts/compressed-assets.js";
+import { workerBuild } from "./scripts/worker-build.js";
 
 const isTest = process.env.VITEST === "true";
 
 export default defineConfig({
-  plugins: isTest ? [] : [tailwindcss(), reactRouter()],
+  plugins: isTest ? [] : [tailwindcss(), reactRouter(), workerBuild(), compressedAssets()],
   build: { sourcemap: false },
   test: {
     projects: [

@@ -4,6 +4,8 @@ import { isbot } from "isbot";
 import { renderToPipeableStream } from "react-dom/server";
 import { type EntryContext, isRouteErrorResponse, type RouterContextProvider, ServerRouter } from "react-router";
 import { nonceContext, requestIdContext } from "#app/context.ts";
+import { laneStripSvg } from "#app/components/charts/lane-strip-svg.server.ts";
+import { DrawStripContext } from "#app/components/charts/static-strip.tsx";
 import { NonceContext } from "#app/components/layout/nonce.ts";
 import { env } from "#app/lib/env.server.ts";
 import { placesOf, reasonOf } from "#app/lib/error-reason.ts";
@@ -55,7 +57,9 @@ export default function handleRequest(
     const ready = isbot(request.headers.get("user-agent") ?? "") ? "onAllReady" : "onShellReady";
     const { pipe, abort } = renderToPipeableStream(
       <NonceContext value={nonce}>
-        <ServerRouter context={routerContext} url={request.url} nonce={nonce} />
+        <DrawStripContext value={laneStripSvg}>
+          <ServerRouter context={routerContext} url={request.url} nonce={nonce} />
+        </DrawStripContext>
       </NonceContext>,
       {
         nonce,

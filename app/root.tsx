@@ -1,4 +1,4 @@
-import { use } from "react";
+import { use, useEffect } from "react";
 import {
   type ErrorResponse,
   isRouteErrorResponse,
@@ -120,8 +120,19 @@ function Bar({ notForSharing, isSignIn = false }: { notForSharing: boolean; isSi
   );
 }
 
+/** After signing out, the phone shows nobody's worksheets; they stay for their owner. */
+function useForgetting(isSignedOut: boolean) {
+  useEffect(() => {
+    if (isSignedOut)
+      void import("#app/offline/store.client.ts").then(({ forgetOwner }) => forgetOwner()).catch(() => undefined);
+  }, [isSignedOut]);
+}
+
 export default function App() {
   const frame = useFrame();
+  const data = useRouteLoaderData<typeof loader>("root");
+  // Pages without a frame are kept by the phone as a signed-out visitor sees them, whoever is signed in.
+  useForgetting(frame.isWall !== true && data?.visitor === null);
   if (frame.isWall === true) return <Outlet />;
   return (
     <>

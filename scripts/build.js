@@ -9,6 +9,8 @@ const sources = [
   "app",
   "public",
   "react-router.config.ts",
+  "scripts/compressed-assets.js",
+  "scripts/worker-build.js",
   "vite.config.ts",
   "tsconfig.json",
   "package.json",

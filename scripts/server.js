@@ -3,6 +3,7 @@ import { join } from "node:path";
 import { fileURLToPath, pathToFileURL } from "node:url";
 import { createRequestHandler } from "@react-router/express";
 import express from "express";
+import { preferCompressed } from "./compressed-assets.js";
 import { isUploadOfFile, refusalOf } from "./refusal.js";
 import { defaultHeaders, fillInHeaders, headersFor, unreadableRequestAnswer } from "./response-headers.js";
 import { projectFolder } from "./settings.js";
@@ -36,13 +37,14 @@ export function createServer({ build, origin }) {
     next();
   });
   const files = { index: false, redirect: false };
+  app.use("/assets", preferCompressed(join(client, "assets")));
   app.use("/assets", express.static(join(client, "assets"), { ...files, immutable: true, maxAge: "1y" }));
   app.use(express.static(client, { ...files, maxAge: 0 }));
   app.use(createRequestHandler({ build, mode: "production" }));
   app.use((error, _request, response, next) => {
     console.error(error);
     if (response.headersSent) return next(error);
-    sendPlain(response, 500, "Something went wrong on our side. Nothing was stored. Try again in a minute.");
+    sendPlain(response, 500, "Something went wrong on our side. Try again in a minute.");
   });
 
   const limits = { requestTimeout: 600_000, headersTimeout: 10_000, keepAliveTimeout: 65_000 };

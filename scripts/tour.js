@@ -45,11 +45,12 @@ async function takePictures(name, page) {
       pictureCount += 1;
     }
   }
-  await page.setViewportSize({ width: 1280, height: 900 });
-  // A dark screen must still print black on white.
+  // A dark screen must still print black on white. The width is a Letter sheet's between its margins.
   await page.emulateMedia({ colorScheme: "dark", media: "print" });
+  await page.setViewportSize({ width: 701, height: 900 });
   await settle(page);
   await page.screenshot({ path: join(folder, `${name}-print.png`), fullPage: true });
+  await page.setViewportSize({ width: 1280, height: 900 });
   await page.emulateMedia({ colorScheme: "light", media: "print" });
   await settle(page);
   writeFileSync(join(folder, `${name}.pdf`), await page.pdf({ format: "Letter", preferCSSPageSize: true }));

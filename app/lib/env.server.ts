@@ -41,6 +41,9 @@ function readSettings() {
   if (!isSecure && !isLoopback(settings.PUBLIC_ORIGIN)) {
     throw new Error("PUBLIC_ORIGIN must be https unless it is this machine itself.");
   }
+  if (!settings.OIDC_ISSUER.startsWith("https://") && !isLoopback(settings.OIDC_ISSUER)) {
+    throw new Error("OIDC_ISSUER must be https unless it is this machine itself: its keys decide who is let in.");
+  }
   return Object.freeze({
     publicOrigin: settings.PUBLIC_ORIGIN,
     isSecure,

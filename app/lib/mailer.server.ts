@@ -1,9 +1,10 @@
+import { PassThrough } from "node:stream";
 import { createTransport } from "nodemailer";
 import { env } from "./env.server.ts";
 
 const isLoopback = ["127.0.0.1", "localhost", "::1"].includes(env.smtp.host);
 
-const transport = createTransport({
+const options = {
   host: env.smtp.host,
   port: env.smtp.port,
   // Away from this machine, mail goes encrypted or not at all.
@@ -14,7 +15,7 @@ const transport = createTransport({
   socketTimeout: 10_000,
   disableFileAccess: true,
   disableUrlAccess: true,
-});
+};
 
 export type Mail = {
   messageId: string;
@@ -25,18 +26,37 @@ export type Mail = {
   html: string;
 };
 
+/** The connection broke after the whole letter was handed over and before the server's answer: it may be on its way. */
+export class UncertainDelivery extends Error {}
+
+function isAnswer(error: unknown) {
+  return error instanceof Error && "responseCode" in error && Boolean(error.responseCode);
+}
+
 /**
  * Hand one mail to the mail server.
  *
- * @throws Error when the server is away or refuses it
+ * @throws UncertainDelivery when it may have gone out all the same; another Error when it has not
  */
 export async function sendMail(mail: Mail): Promise<void> {
-  await transport.sendMail({
-    from: env.smtp.from,
-    to: { name: mail.toName, address: mail.toAddress },
-    messageId: mail.messageId,
-    subject: mail.subject,
-    text: mail.text,
-    html: mail.html,
+  // One for each letter: its errors do not say how far the letter had come, so the last byte is watched.
+  const transport = createTransport(options);
+  let isHandedOver = false;
+  transport.use("stream", ({ message }, done) => {
+    message.transform(new PassThrough().once("end", () => (isHandedOver = true)));
+    done();
   });
+  try {
+    await transport.sendMail({
+      from: env.smtp.from,
+      to: { name: mail.toName, address: mail.toAddress },
+      messageId: mail.messageId,
+      subject: mail.subject,
+      text: mail.text,
+      html: mail.html,
+    });
+  } catch (error) {
+    if (!isHandedOver || isAnswer(error)) throw error;
+    throw new UncertainDelivery("The connection broke before the mail server had answered.", { cause: error });
+  }
 }

@@ -20,6 +20,12 @@ export class Calibration extends Model<InferAttributes<Calibration>, InferCreati
   declare materialId: number;
   declare testedOn: string; // local date, YYYY-MM-DD
   declare gateOpeningIn: number;
+  declare method: CreationOptional<"counts" | "timed-catch">;
+  declare gateScaleMark: CreationOptional<string | null>;
+  /** Whose counts were used again after a gate change. */
+  declare countsFromCalibrationId: CreationOptional<number | null>;
+  declare sameDayNumber: CreationOptional<number>;
+  declare note: CreationOptional<string>;
   declare state: CreationOptional<"ready" | "approved">;
   declare uploadId: CreationOptional<number | null>;
   declare createdById: CreationOptional<number | null>;
@@ -40,6 +46,11 @@ Calibration.init(
     materialId: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
     testedOn: { type: DataTypes.DATEONLY, allowNull: false },
     gateOpeningIn: { type: DataTypes.DOUBLE, allowNull: false },
+    method: DataTypes.STRING(16),
+    gateScaleMark: DataTypes.STRING(20),
+    countsFromCalibrationId: DataTypes.INTEGER.UNSIGNED,
+    sameDayNumber: DataTypes.INTEGER.UNSIGNED,
+    note: DataTypes.STRING(500),
     state: DataTypes.STRING(24),
     uploadId: DataTypes.INTEGER.UNSIGNED,
     createdById: DataTypes.INTEGER.UNSIGNED,

@@ -1,7 +1,6 @@
 import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
+import type { ControlKind, SpreaderKind } from "#app/domain/fleet/truck.ts";
 import { db } from "#app/lib/db.server.ts";
-
-export type SpreaderKind = "tailgate-auger" | "hopper-auger" | "conveyor" | "liquid-tanks";
 
 /** A truck with its spreader. */
 export class Truck extends Model<InferAttributes<Truck>, InferCreationAttributes<Truck>> {
@@ -10,7 +9,7 @@ export class Truck extends Model<InferAttributes<Truck>, InferCreationAttributes
   declare unitNumber: string;
   declare body: CreationOptional<string>;
   declare spreaderKind: SpreaderKind;
-  declare control: "manual" | "ground-speed";
+  declare control: ControlKind;
   declare lanesPerPass: CreationOptional<number>;
   declare workingSpeedMph: number;
   declare workingSetting: number;

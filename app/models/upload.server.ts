@@ -1,7 +1,7 @@
 import { type CreationOptional, DataTypes, type InferAttributes, type InferCreationAttributes, Model } from "sequelize";
 import { db } from "#app/lib/db.server.ts";
 
-export type UploadKind = "season-figures" | "calibrations" | "storms" | "stock" | "weather";
+export type UploadKind = "season-figures" | "calibrations" | "trucks" | "storms" | "stock" | "weather";
 export type UploadState =
   "received" | "matching" | "checking" | "checked" | "accepting" | "accepted" | "cancelled" | "failed";
 

@@ -1,4 +1,3 @@
-import { data } from "react-router";
 import { exampleStrip, FrontStrip } from "#app/components/charts/front-strip.tsx";
 import { laneStripSvg, laneStripSvgs } from "#app/components/charts/lane-strip-svg.server.ts";
 import { LaneStrip } from "#app/components/charts/lane-strip.tsx";
@@ -13,12 +12,13 @@ import { stripSamples, wallSample } from "#app/components/samples/strip-samples.
 import { Dock } from "#app/components/ui/dock.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import { env } from "#app/lib/env.server.ts";
+import { notFound } from "#app/lib/errors.ts";
 import type { Route } from "./+types/components";
 
 export function loader() {
-  if (!env.devPages) throw data("Not found", { status: 404 });
+  if (!env.devPages) throw notFound("page");
   return {
-    strips: stripSamples.map((sample) => ({ ...sample, svg: laneStripSvgs(sample.spec) })),
+    strips: stripSamples,
     front: laneStripSvgs(exampleStrip),
     wall: laneStripSvg(wallSample, "wall"),
   };

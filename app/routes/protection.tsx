@@ -22,8 +22,8 @@ export default function Protection({ loaderData: { limits, isSignedIn } }: Route
   return (
     <Page hasBottomBar={isSignedIn}>
       <Answer>
-        No figure of one town is ever shown to another: every peer figure stands for at least {kMin.member} of them
-        together.
+        No figure of one town is ever shown to another: a peer group is shown only when at least {kMin.member} towns
+        stand in it together.
       </Answer>
       <Method>
         What towns see of each other is an edition: computed once from accepted figures, protected by the rules below,
@@ -62,7 +62,7 @@ export default function Protection({ loaderData: { limits, isSignedIn } }: Route
       />
       <Heading>How</Heading>
       <ul className="max-w-method list-disc space-y-2 pl-5">
-        <li>Figures are rounded to {roundingBaseLb} lb, so that no town’s own figure can stand among them.</li>
+        <li>Figures are rounded to {roundingBaseLb} lb, so that none of them can be taken for a town’s own.</li>
         <li>
           Dots are counts in bins of at least {townsPerBin} towns; the outermost bins are open and say nothing of the
           extreme.
@@ -75,7 +75,7 @@ export default function Protection({ loaderData: { limits, isSignedIn } }: Route
         <li>On a wall and in a download the number of towns is given as a band.</li>
         <li>
           Single rows are given out only from networks of {rowFile.networkMin} towns and more, averaged over at least{" "}
-          {rowFile.k} alike, shuffled, and named anew in each edition.
+          {rowFile.k} alike, shuffled, named anew, and once a season.
         </li>
         <li>A hidden figure says why in one of three words, never how close it was.</li>
       </ul>

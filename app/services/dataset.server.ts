@@ -1,5 +1,6 @@
 import type { PersonActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
+import { townBand } from "#app/domain/disclosure/rounding.ts";
 import { indicatorKeys, indicators } from "#app/domain/peers/indicators.ts";
 import { writeCsv } from "#app/lib/csv.server.ts";
 import { now } from "#app/lib/clock.server.ts";
@@ -10,7 +11,7 @@ import { EditionRow } from "#app/models/edition-row.server.ts";
 import { TermsAcceptance } from "#app/models/terms-acceptance.server.ts";
 import { z } from "zod";
 import { recordAudit } from "./audit.server.ts";
-import { type EditionSummary, getEdition, listDownloadCells } from "./editions.server.ts";
+import { type EditionSummary, getEdition, listDownloadCells, listEditions } from "./editions.server.ts";
 
 /** The terms now in force. A new version asks everybody again. */
 const termsVersion = "2026-12";
@@ -37,6 +38,26 @@ export async function acceptTerms(actor: PersonActor): Promise<void> {
       transaction,
     );
   });
+}
+
+export type DatasetEdition = Omit<EditionSummary, "townCount"> & {
+  /** How many contributors, as a band: the dataset's readers are told no exact number. */
+  townBand: string;
+  files: string[];
+};
+
+/** Every edition as the dataset's readers see it, the newest first, with the files there are. */
+export async function listDatasetEditions(): Promise<DatasetEdition[]> {
+  const [editions, firstRows] = await Promise.all([
+    listEditions(),
+    EditionRow.findAll({ attributes: ["editionId"], where: { position: 1 } }),
+  ]);
+  const withRows = new Set(firstRows.map(({ editionId }) => editionId));
+  return editions.map(({ townCount, ...edition }) => ({
+    ...edition,
+    townBand: townBand(townCount),
+    files: ["cells.csv", ...(withRows.has(edition.id) ? ["rows.csv"] : []), "datapackage.json"],
+  }));
 }
 
 const cellFields = [
@@ -85,7 +106,8 @@ async function cellsCsv(edition: EditionSummary): Promise<string> {
 
 async function rowsCsv(edition: EditionSummary): Promise<string> {
   const rows = await EditionRow.findAll({ where: { editionId: edition.id }, order: [["position", "ASC"]] });
-  if (rows.length === 0) throw notFound("row file: it is published only when no town can be told from five");
+  if (rows.length === 0)
+    throw notFound("row file", "Rows are given out once a season, and only where none can be told from four others.");
   const heads = ["row", "lane_miles_band", ...indicatorKeys.map((key) => key.replaceAll("-", "_") + "_lb")];
   return writeCsv(
     heads,

@@ -3,6 +3,7 @@ import type { TownActor } from "#app/context.ts";
 import type { WithheldReason } from "#app/domain/peers/cell.ts";
 import { type IndicatorKey, indicatorKeys, isIndicatorKey } from "#app/domain/peers/indicators.ts";
 import { notFound } from "#app/lib/errors.ts";
+import { keepLast } from "#app/lib/kept.server.ts";
 import { type Audience, EditionCell } from "#app/models/edition-cell.server.ts";
 import { Edition } from "#app/models/edition.server.ts";
 import { EditionPlace } from "#app/models/edition-place.server.ts";
@@ -90,50 +91,33 @@ export type WallCell = z.infer<typeof WallCellShape>;
 export type DownloadCell = z.infer<typeof DownloadCellShape>;
 type Placed<Cell> = { indicator: IndicatorKey; groupKey: string; cell: Cell };
 
-/** Editions never change, so their cells are kept once read: the last fifty, by edition and audience. */
-const kept = new Map<string, Promise<Placed<unknown>[]>>();
-
-function readCells(editionId: number, audience: Audience): Promise<Placed<unknown>[]> {
-  const key = `${editionId}|${audience}`;
-  const known = kept.get(key);
-  if (known) return known;
-  const read = EditionCell.findAll({
-    attributes: ["indicator", "groupKey", "cell"],
-    where: { editionId, audience },
-    order: [["id", "ASC"]],
-  }).then((cells) => {
-    // An edition that is being written shows no cells yet: do not keep that.
-    if (cells.length === 0) kept.delete(key);
-    return cells.flatMap(({ indicator, groupKey, cell }) =>
-      isIndicatorKey(indicator) ? [{ indicator, groupKey, cell }] : [],
-    );
-  });
-  read.catch(() => kept.delete(key));
-  kept.set(key, read);
-  const oldest = kept.keys().next().value;
-  if (kept.size > 50 && oldest !== undefined) kept.delete(oldest);
-  return read;
-}
-
-async function cellsAs<Cell>(editionId: number, audience: Audience, shape: z.ZodType<Cell>): Promise<Placed<Cell>[]> {
-  const cells = await readCells(editionId, audience);
-  return cells.map(({ cell, ...place }) => ({ ...place, cell: shape.parse(cell) }));
+/** Editions never change, so their cells are read and checked once: the last fifty are kept for each audience. */
+function cellsFor<Cell>(audience: Audience, shape: z.ZodType<Cell>) {
+  const read = keepLast<`${number}`, Placed<Cell>[]>(
+    50,
+    async (editionId) => {
+      const cells = await EditionCell.findAll({
+        attributes: ["indicator", "groupKey", "cell"],
+        where: { editionId: Number(editionId), audience },
+        order: [["id", "ASC"]],
+      });
+      return cells.flatMap(({ indicator, groupKey, cell }) =>
+        isIndicatorKey(indicator) ? [{ indicator, groupKey, cell: shape.parse(cell) }] : [],
+      );
+    },
+    (cells) => cells.length > 0,
+  );
+  return (editionId: number) => read(`${editionId}`);
 }
 
 /** What members may see of an edition, in the order of its menu of groups. */
-async function listMemberCells(editionId: number): Promise<Placed<MemberCell>[]> {
-  return cellsAs(editionId, "member", MemberCellShape);
-}
+const listMemberCells = cellsFor("member", MemberCellShape);
 
 /** What may go on a wall. */
-export async function listWallCells(editionId: number): Promise<Placed<WallCell>[]> {
-  return cellsAs(editionId, "wall", WallCellShape);
-}
+export const listWallCells = cellsFor("wall", WallCellShape);
 
 /** What may leave in a file. */
-export async function listDownloadCells(editionId: number): Promise<Placed<DownloadCell>[]> {
-  return cellsAs(editionId, "download", DownloadCellShape);
-}
+export const listDownloadCells = cellsFor("download", DownloadCellShape);
 
 /** @throws 404 when there is no such edition */
 export async function getEdition(editionId: number): Promise<EditionSummary> {
@@ -146,12 +130,17 @@ const Places = z.record(z.string(), z.number());
 
 type OwnPlace = { ownValue: number; places: Record<string, number> };
 
-async function readOwnPlaces(actor: TownActor, editionId: number): Promise<Map<string, OwnPlace>> {
-  const places = await EditionPlace.findAll({ where: { editionId, townId: actor.townId } });
-  return new Map(
-    places.map(({ indicator, ownValue, places: ranks }) => [indicator, { ownValue, places: Places.parse(ranks) }]),
-  );
-}
+const readOwnPlaces = keepLast<`${number}|${number}`, Map<string, OwnPlace>>(
+  500,
+  async (key) => {
+    const [editionId, townId] = key.split("|").map(Number);
+    const places = await EditionPlace.findAll({ where: { editionId, townId } });
+    return new Map(
+      places.map(({ indicator, ownValue, places: ranks }) => [indicator, { ownValue, places: Places.parse(ranks) }]),
+    );
+  },
+  (places) => places.size > 0,
+);
 
 export type StandingRow = {
   indicator: IndicatorKey;
@@ -188,7 +177,10 @@ export async function getStanding(
     if (editionId === null) return null;
     throw notFound("edition");
   }
-  const [cells, places] = await Promise.all([listMemberCells(edition.id), readOwnPlaces(actor, edition.id)]);
+  const [cells, places] = await Promise.all([
+    listMemberCells(edition.id),
+    readOwnPlaces(`${edition.id}|${actor.townId}`),
+  ]);
   const keys = [...new Set(cells.map((cell) => cell.groupKey))];
   if (!keys.includes(groupKey)) throw notFound("peer group");
   const groups = keys.map((key) => {

@@ -4,7 +4,7 @@ import { dayMs, hourMs, minuteMs, now } from "#app/lib/clock.server.ts";
 import { db, inTransaction } from "#app/lib/db.server.ts";
 import { env } from "#app/lib/env.server.ts";
 import { log } from "#app/lib/log.server.ts";
-import { sendMail } from "#app/lib/mailer.server.ts";
+import { sendMail, UncertainDelivery } from "#app/lib/mailer.server.ts";
 import { type MailState, OutboxMail } from "#app/models/outbox-mail.server.ts";
 
 export type Letter = { toName: string; toAddress: string; subject: string; text: string; html: string };
@@ -46,16 +46,6 @@ async function claimMail(): Promise<OutboxMail | null> {
   });
 }
 
-/** The connection broke after the letter was handed over and before the answer: it may be on its way. */
-function mayHaveGoneOut(error: unknown) {
-  return (
-    error instanceof Error &&
-    "command" in error &&
-    error.command === "DATA" &&
-    !("responseCode" in error && error.responseCode)
-  );
-}
-
 async function deliver(mail: OutboxMail): Promise<boolean> {
   try {
     await sendMail(mail);
@@ -66,7 +56,7 @@ async function deliver(mail: OutboxMail): Promise<boolean> {
     const code = error instanceof Error && "code" in error ? error.code : "unknown";
     log.warn({ mailId: mail.id, attempts: mail.attempts, code }, "mail not sent");
     await mail.update(
-      mayHaveGoneOut(error)
+      error instanceof UncertainDelivery
         ? { state: "uncertain", lastError: reason }
         : wait === undefined
           ? { state: "dead", lastError: reason }

@@ -11,12 +11,14 @@ import { editionLetter } from "#app/emails/season.ts";
 import { now } from "#app/lib/clock.server.ts";
 import { inTransaction, isDuplicate } from "#app/lib/db.server.ts";
 import { env } from "#app/lib/env.server.ts";
+import { notFound } from "#app/lib/errors.ts";
 import { sha256 } from "#app/lib/secrets.server.ts";
 import { Edition } from "#app/models/edition.server.ts";
 import { EditionCell } from "#app/models/edition-cell.server.ts";
 import { EditionMember } from "#app/models/edition-member.server.ts";
 import { EditionPlace } from "#app/models/edition-place.server.ts";
 import { EditionRow } from "#app/models/edition-row.server.ts";
+import { Season } from "#app/models/season.server.ts";
 import { recordAudit } from "./audit.server.ts";
 import { queueJob } from "./jobs.server.ts";
 import { allDirectors } from "./mail-recipients.server.ts";
@@ -26,11 +28,15 @@ import { readPeerFigures } from "./peer-figures.server.ts";
 const Ids = z.array(z.number().int());
 const Figures = z.array(z.number());
 
-/** The groups that earlier editions of the season have shown: what a new group must not be subtracted from. */
-async function readRegistry(seasonStartYear: number, transaction: Transaction) {
+async function readEarlierEditionIds(seasonStartYear: number, transaction: Transaction) {
   const editions = await Edition.findAll({ attributes: ["id"], where: { seasonStartYear }, transaction });
+  return editions.map((edition) => edition.id);
+}
+
+/** The groups that earlier editions of the season have shown: what a new group must not be subtracted from. */
+async function readRegistry(editionIds: readonly number[], transaction: Transaction) {
   const members = await EditionMember.findAll({
-    where: { editionId: editions.map((edition) => edition.id), isPublished: true },
+    where: { editionId: [...editionIds], isPublished: true },
     transaction,
   });
   return members.flatMap(({ indicator, groupKey, contributorIds, figures }) =>
@@ -42,9 +48,12 @@ async function readRegistry(seasonStartYear: number, transaction: Transaction) {
 
 async function computeEdition(seasonStartYear: number, transaction: Transaction) {
   const towns = await readPeerFigures(seasonStartYear, transaction);
-  const registry = await readRegistry(seasonStartYear, transaction);
+  const earlierIds = await readEarlierEditionIds(seasonStartYear, transaction);
+  const registry = await readRegistry(earlierIds, transaction);
+  const hasEarlierRows = (await EditionRow.count({ where: { editionId: earlierIds }, transaction })) > 0;
   const random = () => randomInt(2 ** 32) / 2 ** 32;
-  return { towns, built: buildEdition({ seasonStartYear, towns, registry, policy: defaultPolicy, random }) };
+  const policy = defaultPolicy;
+  return { towns, built: buildEdition({ seasonStartYear, towns, registry, hasEarlierRows, policy, random }) };
 }
 
 export type EditionPreview = {
@@ -85,9 +94,11 @@ export async function previewEdition(_actor: NetworkActor, seasonStartYear: numb
  *
  * @param number - the number the coordinator was shown
  * @returns `{ ok: false }` when another edition was published meanwhile
+ * @throws 404 when the network has not opened that season
  */
 export async function requestEdition(actor: NetworkActor, seasonStartYear: number, number: number) {
   const request = async (transaction: Transaction) => {
+    if (!(await Season.findByPk(seasonStartYear, { transaction }))) throw notFound("season");
     const last = await Edition.max<number | null, Edition>("number", { where: { seasonStartYear }, transaction });
     if (number !== (last ?? 0) + 1) return { ok: false, reason: "published-meanwhile" } as const;
     const payload = { seasonStartYear, number, requestedById: actor.userId, isAnnounced: true };

@@ -72,6 +72,16 @@ export async function workingSeason(): Promise<number | null> {
   return (over ?? seasons[0])?.startYear ?? null;
 }
 
+/** How many events the town's newest season figures name; null when it has sent in none. */
+export async function lastEventCount(actor: TownActor): Promise<number | null> {
+  const figure = await SeasonFigure.findOne({
+    attributes: ["eventCount"],
+    where: { townId: actor.townId },
+    order: [["seasonStartYear", "DESC"]],
+  });
+  return figure?.eventCount ?? null;
+}
+
 /** @throws 404 when the network has not opened that season */
 export async function getSeason(actor: TownActor, seasonStartYear: number): Promise<SeasonView> {
   const [seasons, figures] = await Promise.all([

@@ -95,8 +95,10 @@ export type OwnSession = { id: number; device: string; createdAt: string; lastSe
 
 /** The actor's own open sessions, newest first. */
 export async function listOwnSessions(actor: PersonActor): Promise<OwnSession[]> {
+  const at = now();
+  const lastSeenAt = { [Op.gt]: new Date(at.getTime() - limits[actor.role].idleMs) };
   const sessions = await Session.findAll({
-    where: { userId: actor.userId, expiresAt: { [Op.gt]: now() } },
+    where: { userId: actor.userId, expiresAt: { [Op.gt]: at }, lastSeenAt },
     order: [["id", "DESC"]],
     limit: 50,
   });

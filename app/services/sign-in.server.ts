@@ -21,7 +21,6 @@ const Metadata = z.object({
   token_endpoint: z.url(),
   jwks_uri: z.url(),
   end_session_endpoint: z.url().optional(),
-  id_token_signing_alg_values_supported: z.array(z.string()),
 });
 const Claims = z.object({
   sub: z.string().min(1).max(190),
@@ -31,7 +30,7 @@ const Claims = z.object({
   email_verified: z.boolean().optional(),
 });
 
-/** Bound to the state, which is random for each attempt and lives only in a cookie: nothing more to store. */
+/** Worked out from the state, which is random for each attempt and bound to the browser by a cookie: nothing to store. */
 function nonceOf(state: string) {
   return createHash("sha256").update(`nonce|${state}`).digest("base64url");
 }

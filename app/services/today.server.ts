@@ -1,9 +1,7 @@
 import type { AnalystActor, NetworkActor, TownActor } from "#app/context.ts";
-import { dueState } from "#app/domain/calibration/due.ts";
-import { now } from "#app/lib/clock.server.ts";
-import { hasAcceptedTerms } from "./dataset.server.ts";
+import { type DatasetEdition, hasAcceptedTerms, listDatasetEditions } from "./dataset.server.ts";
 import { type EditionSummary, listEditions } from "./editions.server.ts";
-import { listFleet } from "./fleet.server.ts";
+import { listFleet, todaysDate } from "./fleet/read.server.ts";
 import { getReviewQueue } from "./review.server.ts";
 import { type FigureView, getSeason, workingSeason } from "./season-figures.server.ts";
 import { listTokens } from "./tokens.server.ts";
@@ -20,40 +18,51 @@ export type FleetLine = {
   isWaiting: boolean;
 };
 
+/** A truck and material to be weighed again, or for the first time. */
+export type DueLine = { truckId: number; unitNumber: string; materialName: string; isOverdue: boolean };
+
 export type TownToday = {
   today: string;
   season: { seasonStartYear: number; figuresDueOn: string; figure: FigureView | null } | null;
   readyCount: number;
   fleet: FleetLine[];
+  due: DueLine[];
   edition: EditionSummary | null;
 };
 
 /** What waits for a town: its season, its trucks, the newest edition. */
 export async function getTownToday(actor: TownActor): Promise<TownToday> {
-  const today = now().toISOString().slice(0, 10);
+  const today = todaysDate();
   const [startYear, trucks, editions] = await Promise.all([workingSeason(), listFleet(actor), listEditions()]);
   const season = startYear === null ? null : await getSeason(actor, startYear);
-  const fleet = trucks
-    .filter((truck) => truck.isInService && truck.spreaderKind !== "liquid-tanks")
+  const inService = trucks.filter((truck) => truck.isInService);
+  const fleet = inService
+    .filter((truck) => truck.spreaderKind !== "liquid-tanks")
     .map((truck): FleetLine => {
-      const salt = truck.calibrations.find(
-        ({ materialKind, state }) => materialKind === "salt" && state === "approved",
-      );
-      const isWaiting = truck.calibrations.some(
-        ({ materialKind, state }) => materialKind === "salt" && state === "ready",
-      );
+      const salt = truck.materials.find(({ materialKind }) => materialKind === "salt");
+      const isWaiting = (salt?.ready.length ?? 0) > 0;
       return {
         truckId: truck.id,
         unitNumber: truck.unitNumber,
         workingSpeedMph: truck.workingSpeedMph,
-        rateLbPerLaneMile: salt?.workingRateLbPerLaneMile ?? null,
-        place: salt?.workingPlace ?? null,
-        testedOn: salt?.testedOn ?? null,
-        isDue: !isWaiting && dueState(salt?.testedOn ?? null, today) !== "in-date",
+        rateLbPerLaneMile: salt?.inForce?.working?.lbPerLaneMile ?? null,
+        place: salt?.inForce?.working?.place ?? null,
+        testedOn: salt?.inForce?.testedOn ?? null,
+        isDue: !isWaiting && salt !== undefined && salt.due.state !== "in-date",
         isWaiting,
       };
     });
-  const ready = trucks.flatMap((truck) => truck.calibrations).filter(({ state }) => state === "ready");
+  // What was weighed already waits for the director, not for the yard.
+  const due = inService.flatMap((truck) =>
+    truck.materials
+      .filter((line) => line.due.state !== "in-date" && line.ready.length === 0)
+      .map((line) => ({
+        truckId: truck.id,
+        unitNumber: truck.unitNumber,
+        materialName: line.materialName,
+        isOverdue: line.due.state === "overdue",
+      })),
+  );
   return {
     today,
     season: season && {
@@ -61,8 +70,9 @@ export async function getTownToday(actor: TownActor): Promise<TownToday> {
       figuresDueOn: season.figuresDueOn,
       figure: season.figure,
     },
-    readyCount: ready.length,
+    readyCount: trucks.flatMap(({ materials }) => materials.flatMap((line) => line.ready)).length,
     fleet,
+    due,
     edition: editions[0] ?? null,
   };
 }
@@ -96,10 +106,14 @@ export async function getNetworkToday(actor: NetworkActor): Promise<NetworkToday
   };
 }
 
-export type AnalystToday = { edition: EditionSummary | null; hasTerms: boolean; tokenCount: number };
+export type AnalystToday = { edition: DatasetEdition | null; hasTerms: boolean; tokenCount: number };
 
 /** What waits for an analyst: the newest edition, the terms, the tokens. */
 export async function getAnalystToday(actor: AnalystActor): Promise<AnalystToday> {
-  const [editions, hasTerms, tokens] = await Promise.all([listEditions(), hasAcceptedTerms(actor), listTokens(actor)]);
+  const [editions, hasTerms, tokens] = await Promise.all([
+    listDatasetEditions(),
+    hasAcceptedTerms(actor),
+    listTokens(actor),
+  ]);
   return { edition: editions[0] ?? null, hasTerms, tokenCount: tokens.length };
 }

@@ -79,7 +79,7 @@ export type TokenLine = { id: number; name: string; createdAt: string; expiresAt
 /** The actor's open tokens, newest first. */
 export async function listTokens(actor: AnalystActor): Promise<TokenLine[]> {
   const tokens = await ApiToken.findAll({
-    where: { userId: actor.userId, revokedAt: null },
+    where: { userId: actor.userId, revokedAt: null, expiresAt: { [Op.gt]: now() } },
     order: [["id", "DESC"]],
     limit: 100,
   });

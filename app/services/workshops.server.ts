@@ -21,24 +21,24 @@ export type WorkshopLine = {
 
 /** The network's workshops, the latest first. Titles and days only: members may see them too. */
 export async function listWorkshops(_actor: PersonActor): Promise<WorkshopLine[]> {
-  const [workshops, boards] = await Promise.all([
-    Workshop.findAll({
-      include: [workshopEdition],
-      order: [
-        ["heldOn", "DESC"],
-        ["id", "DESC"],
-      ],
-      limit: 100,
-    }),
-    Board.findAll({ attributes: ["workshopId"], limit: 5000 }),
-  ]);
+  const workshops = await Workshop.findAll({
+    include: [workshopEdition],
+    order: [
+      ["heldOn", "DESC"],
+      ["id", "DESC"],
+    ],
+    limit: 100,
+  });
+  const workshopId = workshops.map(({ id }) => id);
+  const counts = await Board.count({ where: { workshopId }, group: ["workshopId"] });
+  const countOf = new Map(counts.map(({ workshopId: id, count }) => [id, count]));
   return workshops.map((workshop) => ({
     id: workshop.id,
     title: workshop.title,
     heldOn: workshop.heldOn,
     seasonStartYear: workshop.edition?.seasonStartYear ?? 0,
     editionNumber: workshop.edition?.number ?? 0,
-    boardCount: boards.filter((board) => board.workshopId === workshop.id).length,
+    boardCount: countOf.get(workshop.id) ?? 0,
   }));
 }
 

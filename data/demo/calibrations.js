@@ -121,6 +121,7 @@ function testRow(random, { testedOn, sixteenths }, { truck, material, crew }) {
     material_id: material.id,
     tested_on: testedOn,
     gate_opening_in: sixteenths / 16,
+    counts_from_calibration_id: null,
     state: isWaiting ? "ready" : "approved",
     upload_id: null,
     created_by_id: crew.tester.id,

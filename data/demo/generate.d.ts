@@ -76,6 +76,7 @@ export type CalibrationRow = {
   material_id: number;
   tested_on: string;
   gate_opening_in: number;
+  counts_from_calibration_id: number | null;
   state: "ready" | "approved";
   upload_id: null;
   created_by_id: number;
@@ -100,6 +101,40 @@ export type CatchRow = {
   tare_lb: number;
 };
 
+export type VerificationRow = {
+  calibration_id: number;
+  position: number;
+  speed_mph: number;
+  commanded_lb_per_lane_mile: number;
+  seconds: number;
+  gross_lb: number;
+  tare_lb: number;
+};
+
+export type LiquidRow = {
+  calibration_id: number;
+  position: number;
+  kind: "prewet" | "direct";
+  gallons: number;
+  seconds: number;
+  speed_mph: number | null;
+  lanes: number | null;
+  dry_lb_per_min: number | null;
+};
+
+export type TruckMaterialRow = { truck_id: number; material_id: number; since_on: string | null };
+
+export type TruckWorkRow = {
+  client_ref: string;
+  town_id: number;
+  truck_id: number;
+  done_on: string;
+  part: "gate" | "hydraulics" | "feed" | "controller";
+  note: string;
+  created_by_id: number;
+  created_at: string;
+};
+
 export type JobRow = {
   id: number;
   kind: "publish-edition";
@@ -119,6 +154,10 @@ export type Region = {
   calibration: CalibrationRow[];
   calibration_count: CountRow[];
   calibration_catch: CatchRow[];
+  calibration_verification: VerificationRow[];
+  calibration_liquid: LiquidRow[];
+  truck_material: TruckMaterialRow[];
+  truck_work: TruckWorkRow[];
   job: JobRow[];
   doubtful: { town: string; slip: string }[];
 };

@@ -1,4 +1,6 @@
 import { makeCalibrations } from "./calibrations.js";
+import { makeFleetCare } from "./fleet-care.js";
+import { makeGateChanges } from "./gate-changes.js";
 import { makeMaterials, makeTrucks } from "./fleet.js";
 import { makePeople } from "./people.js";
 import { lastSeasonReview, makeSeasonFigures, makeSeasons, seasonYears } from "./seasons.js";
@@ -17,6 +19,8 @@ export function generateRegion({ seed = 20261201 } = {}) {
   const materials = makeMaterials(seed, towns);
   const trucks = makeTrucks(seed, towns);
   const coordinator = people.find((person) => person.role === "coordinator");
+  const made = makeCalibrations(seed, { towns, trucks, materials, people });
+  const changes = makeGateChanges(seed, { towns, trucks, materials, made });
   const review = [...lastSeasonReview(seed, towns)];
   return {
     town: towns.map((town) => town.row),
@@ -25,7 +29,9 @@ export function generateRegion({ seed = 20261201 } = {}) {
     truck: trucks,
     season: makeSeasons(),
     season_figure: makeSeasonFigures(seed, { towns, people }),
-    ...makeCalibrations(seed, { towns, trucks, materials, people }),
+    ...made,
+    ...changes,
+    ...makeFleetCare(seed, { towns, trucks, materials, people, calibrations: made.calibration }),
     job: makeJobs(coordinator),
     doubtful: review.filter(([, { slip }]) => slip).map(([town, { slip }]) => ({ town, slip })),
   };

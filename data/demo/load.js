@@ -11,6 +11,10 @@ const tablesInOrder = [
   "calibration",
   "calibration_count",
   "calibration_catch",
+  "calibration_verification",
+  "calibration_liquid",
+  "truck_material",
+  "truck_work",
   "job",
 ];
 

@@ -40,7 +40,7 @@ export async function up({ sql }) {
     DROP COLUMN IF EXISTS staged,
     DROP COLUMN IF EXISTS problems,
     DROP COLUMN IF EXISTS row_count,
-    ADD CONSTRAINT upload_kind CHECK (kind IN ('season-figures','calibrations','storms','stock','weather')),
+    ADD CONSTRAINT upload_kind CHECK (kind IN ('season-figures','calibrations','trucks','storms','stock','weather')),
     ADD CONSTRAINT upload_format CHECK (format IN ('csv','xlsx')),
     ADD CONSTRAINT upload_state CHECK (state IN
       ('received','matching','checking','checked','accepting','accepted','cancelled','failed'))`);
@@ -138,11 +138,12 @@ export async function down({ sql }) {
     ADD COLUMN IF NOT EXISTS staged JSON NOT NULL DEFAULT '[]',
     ADD COLUMN IF NOT EXISTS problems JSON NOT NULL DEFAULT '[]'`);
   // What the older program does not know it cannot keep: other kinds of file, and files above its limit.
-  const lost = "SELECT id FROM upload WHERE kind NOT IN ('season-figures','calibrations') OR byte_count > 5242880";
+  const lost =
+    "SELECT id FROM upload WHERE kind NOT IN ('season-figures','calibrations','trucks') OR byte_count > 5242880";
   for (const table of ["storm", "stock_entry", "season_figure", "calibration"]) {
     await sql(`UPDATE ${table} SET upload_id = NULL WHERE upload_id IN (${lost})`);
   }
-  await sql("DELETE FROM upload WHERE kind NOT IN ('season-figures','calibrations') OR byte_count > 5242880");
+  await sql("DELETE FROM upload WHERE kind NOT IN ('season-figures','calibrations','trucks') OR byte_count > 5242880");
   await sql("SET SESSION group_concat_max_len = 16777215");
   await sql(`UPDATE upload u SET row_count = rows_read, content = COALESCE(
     (SELECT GROUP_CONCAT(c.content ORDER BY c.position SEPARATOR '') FROM upload_chunk c WHERE c.upload_id = u.id), '')`);
@@ -164,6 +165,6 @@ export async function down({ sql }) {
     DROP COLUMN IF EXISTS period_end,
     DROP COLUMN IF EXISTS is_replacing,
     DROP COLUMN IF EXISTS rows_accepted,
-    ADD CONSTRAINT upload_kind CHECK (kind IN ('season-figures','calibrations')),
+    ADD CONSTRAINT upload_kind CHECK (kind IN ('season-figures','calibrations','trucks')),
     ADD CONSTRAINT upload_state CHECK (state IN ('checked','accepted'))`);
 }

@@ -127,7 +127,9 @@ async function review(ilse, stop) {
   await stop("review-figure-refused", ilse.page);
   await ilse.page
     .getByLabel("Question that goes back with it")
-    .fill("Your salt is ten times that of earlier seasons. Was a decimal point lost? Please correct it and send again.");
+    .fill(
+      "Your salt is ten times that of earlier seasons. Was a decimal point lost? Please correct it and send again.",
+    );
   await press(ilse, "Send it back");
   await ilse.page.goto(new URL("/network/review", ilse.page.url()).href, { waitUntil: "networkidle" });
   await press(ilse, /together$|^Accept it$/);
@@ -150,8 +152,16 @@ async function workshop(ilse, stop) {
   await press(ilse, "Put it on the calendar");
   await ilse.page.waitForURL(/\/workshops\/\d+$/);
   await stop("workshop-empty", ilse.page);
-  await addBoard(ilse, "rate-at-working-setting|all", "What keeps your working setting above the band: the gate, the speed, or the habit?");
-  await addBoard(ilse, "salt-per-event|size-50-149", "Which of your routes could do with one pass less, and who would notice?");
+  await addBoard(
+    ilse,
+    "rate-at-working-setting|all",
+    "What keeps your working setting above the band: the gate, the speed, or the habit?",
+  );
+  await addBoard(
+    ilse,
+    "salt-per-event|size-50-149",
+    "Which of your routes could do with one pass less, and who would notice?",
+  );
   await stop("workshop", ilse.page);
   const boards = `${new URL(ilse.page.url()).pathname}/boards`;
   await ilse.see("board-1", `${boards}/1`);

@@ -13,7 +13,6 @@ import { pagesOf } from "#tests/support/pages.ts";
 
 let world: MatrixWorld;
 let app: TestApp;
-let requestCount = 0;
 const width = 8;
 const methods = ["GET", "HEAD", "POST", "PUT", "PATCH", "DELETE"] as const;
 type Method = (typeof methods)[number];
@@ -23,10 +22,7 @@ beforeAll(async () => {
   app = world.app;
 }, 120_000);
 
-afterAll(async () => {
-  console.log(`access matrix: ${requestCount} requests`);
-  expect(await app.close()).toEqual([]);
-});
+afterAll(async () => expect(await app.close()).toEqual([]));
 
 type Cell = { visitor: Visitor; method: Method; path: string };
 
@@ -47,7 +43,6 @@ function isRefused({ status, headers, body }: Answer) {
 }
 
 async function askCell({ visitor, method, path }: Cell, form: Record<string, string> | null): Promise<Answer> {
-  requestCount++;
   const { cookie, token } = await visitor.open();
   const headers: Record<string, string> =
     form === null ? {} : { origin: app.origin, "content-type": "application/x-www-form-urlencoded" };

@@ -89,7 +89,7 @@ test.each<[string, Record<string, string>]>([
   expect(await countOf(app, "session")).toBe(sessions);
 });
 
-test.each(["text/plain", "application/json", "multipart/form-dataX", "application/x-www-form-urlencoded2", ""])(
+test.each(["text/plain", "application/jsonX", "multipart/form-dataX", "application/x-www-form-urlencoded2", ""])(
   "a change of the type “%s” is no form, and refused",
   async (wrongType) => {
     const before = await contentDigest(app);
@@ -106,6 +106,16 @@ test.each(["text/plain", "application/json", "multipart/form-dataX", "applicatio
     expect(await contentDigest(app)).toEqual(before);
   },
 );
+
+test("JSON to a page that reads a form is no form, however it is filled in", async () => {
+  const before = await contentDigest(app);
+  for (const { path, cookie, form } of changes().filter((change) => Object.keys(change.form).length > 0)) {
+    const headers = { origin: app.origin, "content-type": "application/json" };
+    const answer = await app.ask(path, { method: "POST", cookie, body: JSON.stringify(form), headers });
+    expect(answer.status, path).toBe(400);
+  }
+  expect(await contentDigest(app)).toEqual(before);
+});
 
 test("a body without a type is no form either", async () => {
   const answer = await app.ask("/dataset", {

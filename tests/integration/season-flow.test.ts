@@ -126,16 +126,18 @@ test("a coordinator who looked at an older version decides nothing", async () =>
   expect(await stateOf(figureId)).toMatchObject({ state: "sent" });
 });
 
-test.each(["", "short", "x".repeat(2001), "       ?      "])(
-  "sending back asks for a question, not “%.20s”",
-  async (note) => {
-    const figureId = await aSeasonFigure(app, town, { state: "sent" });
-    const answer = await review(figureId, first, { version: "1", verdict: "return", note });
-    expect(answer.status).toBe(400);
-    expect(answer.body).toContain("Write the question");
-    expect(await stateOf(figureId)).toMatchObject({ state: "sent" });
-  },
-);
+test.each([
+  ["nothing", ""],
+  ["a word", "short"],
+  ["2,001 letters", "x".repeat(2001)],
+  ["blanks", "       ?      "],
+])("sending back asks for a question, not %s", async (_what, note) => {
+  const figureId = await aSeasonFigure(app, town, { state: "sent" });
+  const answer = await review(figureId, first, { version: "1", verdict: "return", note });
+  expect(answer.status).toBe(400);
+  expect(answer.body).toContain("Write the question");
+  expect(await stateOf(figureId)).toMatchObject({ state: "sent" });
+});
 
 test("a season goes back, is corrected by a file, sent again and accepted, with a mail at each turn", async () => {
   const figureId = await aSeasonFigure(app, town);

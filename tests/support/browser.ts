@@ -16,6 +16,9 @@ type Options = {
   hasScript?: boolean;
 };
 
+/** Pages in which no frame is ever asked for, so that waiting for one would not end. */
+const withoutScript = new WeakSet<Page>();
+
 /** One Chromium for a test file. */
 export async function openBrowser(): Promise<Browser> {
   return launchChromium();
@@ -36,7 +39,8 @@ export async function openTab(browser: Browser, options: Options): Promise<Tab> 
     timezoneId: "UTC",
   });
   const page = await context.newPage();
-  page.setDefaultTimeout(15_000);
+  page.setDefaultTimeout(20_000);
+  if (!hasScript) withoutScript.add(page);
   const problems: string[] = [];
   page.on("console", (message) => {
     const isAsked = /^Failed to load resource: the server responded with a status of 4\d\d /.test(message.text());
@@ -57,9 +61,20 @@ export async function signIn(page: Page, origin: string, subject: string, return
   await settled(page);
 }
 
-/** Wait until the scripts of a page have taken over: from then on forms and charts are alive. */
+declare global {
+  // Adding to a declaration of the platform takes an interface.
+  // eslint-disable-next-line @typescript-eslint/consistent-type-definitions
+  interface Window {
+    /** The framework's router, where scripts have taken over. */
+    __reactRouterDataRouter?: { state: { navigation: { state: string } } };
+  }
+}
+
+/** Wait until a page is at rest: its scripts have taken over, and what was asked for has come. */
 export async function settled(page: Page): Promise<void> {
   await page.waitForLoadState("networkidle");
+  if (withoutScript.has(page)) return;
+  await page.waitForFunction(() => (window.__reactRouterDataRouter?.state.navigation.state ?? "idle") === "idle");
   await page.evaluate(async () => {
     await document.fonts.ready;
     await new Promise((resolve) => requestAnimationFrame(() => requestAnimationFrame(resolve)));

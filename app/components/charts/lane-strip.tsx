@@ -6,12 +6,11 @@ import { HeapTable } from "./heap-table.tsx";
 import { LaneReadout } from "./lane-readout.tsx";
 import type { LaneStripSpec } from "./lane-strip-spec.ts";
 import { figureWords, heapWords, markWords } from "./lane-strip-words.ts";
+import { StaticStrip } from "./static-strip.tsx";
 import { useLiveStrip } from "./use-live-strip.ts";
 
 type Props = {
   spec: LaneStripSpec;
-  /** The server's drawings of the same spec. */
-  svg: { desk: string; phone: string };
   title: string;
   /** Said above the strip, where a page has more than one answer. */
   sentence?: ReactNode;
@@ -25,7 +24,7 @@ type Props = {
 
 /** One row of a comparison: what it is on the left, the strip on the right, the table that proves it behind a toggle. */
 export function LaneStrip(props: Props) {
-  const { spec, svg, title, sentence, facts = [] } = props;
+  const { spec, title, sentence, facts = [] } = props;
   const headingId = useId();
   const side = (
     <>
@@ -40,7 +39,7 @@ export function LaneStrip(props: Props) {
     <SideBySide side={side} hasRule>
       {sentence !== undefined && <p className="mb-2 max-w-measure text-pretty">{sentence}</p>}
       <figure aria-labelledby={headingId}>
-        <StripPicture spec={spec} svg={svg} title={title} />
+        <StripPicture spec={spec} title={title} />
       </figure>
       <StripTable {...props} />
     </SideBySide>
@@ -48,7 +47,7 @@ export function LaneStrip(props: Props) {
 }
 
 /** The strip alone, for pages that say the rest in their own words. Static first, alive once the page is. */
-function StripPicture({ spec, svg, title }: Pick<Props, "spec" | "svg" | "title">) {
+function StripPicture({ spec, title }: Pick<Props, "spec" | "title">) {
   const { frame, layout } = useLiveStrip(spec);
   const [at, setAt] = useState<number | null>(null);
   const peers = spec.peers.state === "shown" ? spec.peers : null;
@@ -60,8 +59,8 @@ function StripPicture({ spec, svg, title }: Pick<Props, "spec" | "svg" | "title"
       <div className="relative">
         {layout === null && (
           <>
-            <div className="max-w-120 @min-[45rem]:hidden" dangerouslySetInnerHTML={{ __html: svg.phone }} />
-            <div className="hidden @min-[45rem]:block" dangerouslySetInnerHTML={{ __html: svg.desk }} />
+            <StaticStrip spec={spec} size="phone" className="max-w-120 @min-[45rem]:hidden" />
+            <StaticStrip spec={spec} size="desk" className="hidden @min-[45rem]:block" />
           </>
         )}
         <div ref={frame} />
@@ -90,7 +89,7 @@ function StripTable({ spec, title, tableNote, downloadTo, isTableOpen = false }:
       <p className="mt-2 mb-1 text-note text-gravel">
         {tableNote}{" "}
         {downloadTo !== undefined && (
-          <TextLink to={downloadTo} isDocument>
+          <TextLink to={downloadTo} isDocument className="print:hidden">
             Download these figures (CSV)
           </TextLink>
         )}
@@ -98,7 +97,7 @@ function StripTable({ spec, title, tableNote, downloadTo, isTableOpen = false }:
     );
   if (peers === null) return footnote;
   return (
-    <details open={isTableOpen} className="group -mt-11 print:mt-0">
+    <details open={isTableOpen} className="open-on-paper group -mt-11 print:mt-0">
       <summary className="relative -top-2.5 ml-auto flex min-h-target w-fit list-none items-center text-note font-semibold text-spruce underline decoration-1 underline-offset-3 hover:decoration-2 print:hidden">
         <span className="group-open:hidden">Table</span>
         <span className="hidden group-open:inline">Hide the table</span>

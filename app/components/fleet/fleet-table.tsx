@@ -38,7 +38,7 @@ export function FleetTable({ lines }: { lines: readonly FleetLine[] }) {
         isCaptionHidden
         onPhone="keep"
         columns={[
-          { key: "truck", label: "truck" },
+          { key: "truck", label: "truck", foldPrefix: "Truck" },
           { key: "lays", label: "lays", isNumeric: true },
           { key: "weighed", label: "weighed", isNumeric: true },
         ]}

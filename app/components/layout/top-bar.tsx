@@ -23,6 +23,11 @@ export function TopBar({ areas, place, period, person, notForSharing = false }: 
       <SkipLink />
       <header>
         {notForSharing && <NotForSharing />}
+        {/* On paper there is no bar: one line says whose page it is. */}
+        <p className="mb-4 hidden justify-between border-b-2 border-line pb-1 text-note print:flex">
+          <b>{place}</b>
+          <span>Commonweigh</span>
+        </p>
         <DoubleRule>
           <Link to="/today" className={brandClass}>
             <Mark />

@@ -1,9 +1,7 @@
-import { SeasonTable } from "#app/components/season/season-table.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
-import { catchVariationPercent } from "#app/domain/calibration/catch-weight.ts";
 import type { StagedCalibration } from "#app/domain/calibration/calibration-file.ts";
+import type { StagedTruck } from "#app/domain/fleet/truck-file.ts";
 import type { StagedSeason } from "#app/domain/season/season-file.ts";
-import { seasonTotals } from "#app/domain/season/season-totals.ts";
 import { type StagedStock, stockKindWords } from "#app/domain/season/stock-file.ts";
 import type { StagedStorm } from "#app/domain/season/storm-file.ts";
 import { stormKindWords } from "#app/domain/season/storm-kind.ts";
@@ -17,9 +15,12 @@ import {
   formatWhole,
 } from "#app/lib/format.ts";
 
+import { UploadHolds } from "./upload-holds.tsx";
+
 export type ReadySample = {
   seasons: StagedSeason[];
   calibrations: StagedCalibration[];
+  trucks: StagedTruck[];
   storms: (StagedStorm & { sheetRow: number })[];
   stock: (StagedStock & { sheetRow: number })[];
   truckNames: Record<number, string>;
@@ -91,49 +92,9 @@ function Stock({ sample }: { sample: ReadySample }) {
   );
 }
 
-function Calibrations({ sample }: { sample: ReadySample }) {
-  return (
-    <Timetable
-      caption="Calibrations as read from the file"
-      columns={[
-        { key: "truck", label: "truck" },
-        { key: "material", label: "material" },
-        { key: "day", label: "weighed" },
-        { key: "gate", label: "gate", unit: "in", isNumeric: true },
-        { key: "counts", label: "settings counted", isNumeric: true },
-        { key: "catches", label: "catches", isNumeric: true },
-        { key: "spread", label: "catches differ by", unit: "%", isNumeric: true },
-      ]}
-      rows={sample.calibrations.map((calibration) => ({
-        key: String(calibration.row),
-        cells: {
-          truck: calibration.unitNumber,
-          material: calibration.materialName,
-          day: formatShortDay(calibration.testedOn),
-          gate: formatInches(calibration.gateOpeningIn),
-          counts: calibration.counts.length,
-          catches: calibration.catches.length,
-          spread: calibration.catches.length === 0 ? "–" : formatOneDecimal(catchVariationPercent(calibration.catches)),
-        },
-      }))}
-    />
-  );
-}
-
 /** What would be taken in, as it was understood. */
 export function ReadyRows({ sample }: { sample: ReadySample }) {
   if (sample.storms.length > 0) return <Storms sample={sample} />;
   if (sample.stock.length > 0) return <Stock sample={sample} />;
-  if (sample.calibrations.length > 0) return <Calibrations sample={sample} />;
-  if (sample.seasons.length === 0) return null;
-  return (
-    <SeasonTable
-      caption="As read from the file, and worked out from it"
-      seasons={sample.seasons.map(({ seasonStartYear, amounts }) => ({
-        seasonStartYear,
-        amounts,
-        totals: seasonTotals(amounts),
-      }))}
-    />
-  );
+  return <UploadHolds upload={sample} />;
 }

@@ -6,7 +6,7 @@ import { seasonLabel } from "#app/domain/dates.ts";
 import { formatShortDay } from "#app/lib/format.ts";
 
 type Props = {
-  edition: { id: number; seasonStartYear: number; number: number; publishedAt: string; townCount: number } | null;
+  edition: { id: number; seasonStartYear: number; number: number; publishedAt: string } | null;
   hasTerms: boolean;
   tokenCount: number;
 };

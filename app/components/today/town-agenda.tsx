@@ -20,6 +20,7 @@ type Props = {
   } | null;
   readyCount: number;
   fleet: readonly FleetLine[];
+  due: readonly { truckId: number; unitNumber: string; materialName: string; isOverdue: boolean }[];
   edition: { id: number; seasonStartYear: number; number: number; publishedAt: string } | null;
 };
 
@@ -74,8 +75,7 @@ function seasonStep({ season, isDirector, today }: Props): Step | null {
   }
 }
 
-function fleetSteps({ fleet, readyCount, isDirector }: Props): Step[] {
-  const due = fleet.filter((line) => line.isDue);
+function fleetSteps({ due, readyCount, isDirector }: Props): Step[] {
   const steps: Step[] = [];
   if (readyCount > 0 && isDirector) {
     steps.push({
@@ -89,18 +89,23 @@ function fleetSteps({ fleet, readyCount, isDirector }: Props): Step[] {
       sentence: `${sentenceStart(countWords(readyCount, "calibration waits", "calibrations wait"))} for you.`,
     });
   }
-  if (due.length > 0) {
-    const names = listWords(due.map((line) => line.unitNumber));
+  const units = [...new Set(due.map((line) => line.unitNumber))];
+  if (units.length > 0) {
+    const overdue = new Set(due.filter((line) => line.isOverdue).map((line) => line.unitNumber)).size;
+    const most = sentenceStart(countWords(units.length, "truck is", "trucks are"));
+    const how = overdue === units.length ? "overdue for" : "due for";
+    const some = overdue > 0 && overdue < units.length ? `, ${countWords(overdue, "of them", "of them")} overdue` : "";
+    const materials = [...new Set(due.map((line) => line.materialName.toLowerCase()))];
     steps.push({
       key: "due",
-      when: "This week",
+      when: overdue > 0 ? "Now" : "This week",
       whenDetail: "20 minutes each",
-      to: "/uploads?kind=calibrations",
-      button: "Upload the readings",
-      title: `Calibrate ${due.length === 1 ? "truck" : "trucks"} ${names} for salt`,
+      to: "/fleet/due",
+      button: "See what is due",
+      title: `Calibrate ${units.length === 1 ? "truck" : "trucks"} ${listWords(units)} for ${listWords(materials)}`,
       children:
         "Each truck is weighed once before the season, and again after work on gate, hydraulics, feed or controller.",
-      sentence: `${sentenceStart(countWords(due.length, "truck is", "trucks are"))} due for calibration.`,
+      sentence: `${most} ${how} calibration${some}.`,
     });
   }
   return steps;

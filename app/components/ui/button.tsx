@@ -5,15 +5,14 @@ type Variant = "primary" | "quiet";
 type Size = "desk" | "slim" | "yard";
 
 const shape =
-  "inline-flex items-center justify-center gap-2 rounded-field text-center font-semibold leading-tight no-underline cursor-pointer";
+  "inline-flex items-center justify-center gap-2 rounded-field text-center font-semibold leading-tight no-underline cursor-pointer print:hidden";
 const sizes: Record<Size, string> = {
   desk: "min-h-target px-5 py-2 text-m",
   slim: "min-h-target px-4.5 py-1 text-m sm:min-h-9.5",
   yard: "min-h-target-yard px-5 py-2 text-head",
 };
 const looks: Record<Variant, string> = {
-  primary:
-    "bg-spruce text-on-spruce hover:bg-spruce-deep active:bg-asphalt active:text-salt print:border print:border-line",
+  primary: "bg-spruce text-on-spruce hover:bg-spruce-deep active:bg-asphalt active:text-salt",
   quiet:
     "border-[1.5px] border-spruce text-spruce hover:bg-spruce-wash active:bg-asphalt active:border-asphalt active:text-salt",
 };

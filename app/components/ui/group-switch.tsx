@@ -22,41 +22,47 @@ type Props = { label: string; choices: readonly GroupChoice[] };
 export function GroupSwitch({ label, choices }: Props) {
   const current = choices.find(({ isCurrent }) => isCurrent === true);
   return (
-    <nav aria-label={label} className="mt-5 border-b border-line print:hidden">
-      <details key={current?.key} className="group sm:hidden">
-        <summary className="flex min-h-target list-none items-center justify-between gap-4">
-          <span>
-            <span className="text-gravel">{label} </span>
-            <b>{current?.label}</b> {current?.townCountWords}
-          </span>
-          <span className="font-semibold text-spruce underline underline-offset-3">
-            <span className="group-open:hidden">Change</span>
-            <span className="hidden group-open:inline">Close</span>
-          </span>
-        </summary>
-        <ul>
-          {choices.map((choice) => (
-            <li key={choice.key} className="border-t border-rule">
-              <Choice choice={choice} />
-            </li>
+    <>
+      <p className="mt-3 hidden print:block">
+        Compared with: <b>{current?.label}</b>
+        {current?.townCountWords !== undefined && `, ${current.townCountWords} towns`}
+      </p>
+      <nav aria-label={label} className="mt-5 border-b border-line print:hidden">
+        <details key={current?.key} className="group sm:hidden">
+          <summary className="flex min-h-target list-none items-center justify-between gap-4">
+            <span className="py-1.5">
+              <span className="block text-note text-gravel">{label}</span>
+              <b>{current?.label}</b> {current?.townCountWords}
+            </span>
+            <span className="font-semibold text-spruce underline underline-offset-3">
+              <span className="group-open:hidden">Change</span>
+              <span className="hidden group-open:inline">Close</span>
+            </span>
+          </summary>
+          <ul>
+            {choices.map((choice) => (
+              <li key={choice.key} className="border-t border-rule">
+                <Choice choice={choice} />
+              </li>
+            ))}
+          </ul>
+        </details>
+        <div className="max-sm:hidden">
+          {parts(choices).map(([part, own]) => (
+            <div key={part} className="flex gap-x-6">
+              {part !== "" && <p className="w-27 flex-none py-2.5 text-gravel">{part}</p>}
+              <ul className="flex flex-wrap gap-x-7">
+                {own.map((choice) => (
+                  <li key={choice.key}>
+                    <Choice choice={choice} />
+                  </li>
+                ))}
+              </ul>
+            </div>
           ))}
-        </ul>
-      </details>
-      <div className="max-sm:hidden">
-        {parts(choices).map(([part, own]) => (
-          <div key={part} className="flex gap-x-6">
-            {part !== "" && <p className="w-20 flex-none py-2.5 text-gravel">{part}</p>}
-            <ul className="flex flex-wrap gap-x-7">
-              {own.map((choice) => (
-                <li key={choice.key}>
-                  <Choice choice={choice} />
-                </li>
-              ))}
-            </ul>
-          </div>
-        ))}
-      </div>
-    </nav>
+        </div>
+      </nav>
+    </>
   );
 }
 

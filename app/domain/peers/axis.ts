@@ -11,10 +11,10 @@ const mostSteps = 12;
 /** With nothing to go by, wide enough for the rates that towns lay. */
 const emptyAxis = { low: 100, high: 500 };
 
-/** The stretch that most of the region lies in, worked out from figures that may themselves be published. */
+/** The stretch that most of the region lies in, worked out from figures that are themselves published. */
 function regionStretch(values: readonly number[], policy: DisclosurePolicy): number[] {
   const at = (p: number) => protectedNumber(quantileType7(values, p), policy.roundingBaseLb, policy.significantDigits);
-  if (values.length >= policy.decilesFrom) return [at(0.05), at(0.95)];
+  if (values.length >= policy.decilesFrom) return [at(0.1), at(0.9)];
   if (values.length >= policy.quartilesFrom) {
     const [lower, upper] = [at(0.25), at(0.75)];
     return [lower - (upper - lower), upper + (upper - lower)];
@@ -26,7 +26,7 @@ function regionStretch(values: readonly number[], policy: DisclosurePolicy): num
 /**
  * One axis for all groups of an indicator, rounded outward, never ending at a town's figure.
  *
- * @param regionValues - one a contributor of the whole region, in any order
+ * @param regionValues - one a contributor of the whole region, in any order; none when the region is withheld
  * @param band - drawn on the axis with a step beside it on either side; null when there is none
  * @param publishedNumbers - figures already protected that must fit on the axis
  * @returns ends that are multiples of the step, at or above 0

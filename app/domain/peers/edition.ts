@@ -21,7 +21,7 @@ import { type PeerGroup, groupKeysOf, peerGroups } from "./peer-groups.ts";
 export type { TownInput } from "./contributors.ts";
 
 /** Changes whenever the same figures could come out differently. */
-export const engineVersion = "1.0.0";
+export const engineVersion = "1.1.0";
 
 /**
  * A group of an edition and who is behind it: for the server only. `figures`, one a contributor in the same order, let
@@ -57,7 +57,7 @@ export type BuiltEdition = {
   cells: EditionCell[];
   members: EditionMember[];
   places: EditionPlace[];
-  rows: ProtectedRows;
+  rows: ProtectedRows | { state: "withheld"; reason: "given-before" };
 };
 
 type Member = { contributorId: number; groupKeys: string[]; value: number };
@@ -113,7 +113,9 @@ function publishedNumbers(cell: MemberCell): number[] {
 }
 
 function cellsOf(indicator: IndicatorKey, groups: readonly Group[], policy: DisclosurePolicy): EditionCell[] {
-  const region = groups.find(({ key }) => key === "all")?.members.map(({ value }) => value) ?? [];
+  // A region that is withheld must not show in the scale either.
+  const whole = groups.find(({ key, reason }) => key === "all" && reason === null);
+  const region = whole?.members.map(({ value }) => value) ?? [];
   const band = indicators[indicator].band;
   const valuesOf = (group: Group) => group.members.map(({ value }) => value);
   const firstAxis = indicatorAxis(region, band, policy, []);
@@ -166,26 +168,29 @@ function placesOf(
  *
  * The same figures give the same edition, in whatever order the towns come; only `rows` depend on `random`. Towns of
  * one contributor count once. The whole region comes first, then sizes, then districts: a group that conflicts with
- * one before it, or with a group of an earlier edition of the season, is withheld as "too-close".
+ * one before it, or with a group of an earlier edition of the season, is withheld as "too-close". Rows are given out
+ * once a season: each is a mean of a few figures, so two files would tell what one changed figure did to it.
  *
  * @param input - towns with values in the indicators' units; `registry` holds the groups that earlier editions of the
- *   same season published, of all indicators
+ *   same season published, of all indicators; `hasEarlierRows` says whether one of them gave out rows
  * @returns `cells` may leave the server; `members` never; of `places` a town sees its own
  * @throws RangeError when a town comes twice or a value is not finite
  *
  * Source: Handbook on Statistical Disclosure Control (ESSnet), chapters 3 to 5, with the limits of the policy.
- * @example buildEdition({ seasonStartYear: 2025, towns, registry: [], policy: defaultPolicy, random }).cells
+ * @example buildEdition({ seasonStartYear: 2025, towns, registry: [], hasEarlierRows: false, policy, random }).cells
  */
 export function buildEdition({
   seasonStartYear,
   towns,
   registry,
+  hasEarlierRows,
   policy,
   random,
 }: {
   seasonStartYear: number;
   towns: readonly TownInput[];
   registry: readonly RegisteredGroup[];
+  hasEarlierRows: boolean;
   policy: DisclosurePolicy;
   random: () => number;
 }): BuiltEdition {
@@ -211,6 +216,6 @@ export function buildEdition({
       })),
     ),
     places: built.flatMap(({ indicator, groups }) => placesOf(sortedTowns, indicator, groups, policy)),
-    rows: protectedRows(contributors, policy, random),
+    rows: hasEarlierRows ? { state: "withheld", reason: "given-before" } : protectedRows(contributors, policy, random),
   };
 }

@@ -33,8 +33,9 @@ function percentileWords(percentile: number) {
 function medianWords(ownValue: number, cell: MemberCell) {
   if (cell.state === "withheld") return null;
   const difference = Math.round(ownValue) - cell.median;
-  if (difference === 0) return `just the median of your ${cell.towns} peers`;
-  return `about ${whole(Math.abs(difference))} ${difference > 0 ? "above" : "below"} the median of your ${cell.towns} peers`;
+  // The group counts the town itself, so it is not that many peers.
+  if (difference === 0) return `just the median of the ${cell.towns} towns`;
+  return `about ${whole(Math.abs(difference))} ${difference > 0 ? "above" : "below"} the median of the ${cell.towns} towns`;
 }
 
 function peersAlone(cell: MemberCell, unit: string): string {
@@ -53,8 +54,8 @@ function ownWords(indicator: IndicatorKey, ownValue: number, speedMph: number | 
 
 function nothingOwn(indicator: IndicatorKey) {
   return indicator === "salt-per-event"
-    ? "Your town has no accepted figure for this season yet."
-    : "None of your salt trucks has a calibration that gives this rate yet.";
+    ? "This edition holds no figure of your town."
+    : "This edition holds no rate of your salt trucks.";
 }
 
 /**

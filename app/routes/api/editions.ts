@@ -2,25 +2,22 @@ import { personActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { env } from "#app/lib/env.server.ts";
 import { forbidden } from "#app/lib/errors.ts";
-import { hasAcceptedTerms } from "#app/services/dataset.server.ts";
-import { listEditions } from "#app/services/editions.server.ts";
+import { hasAcceptedTerms, listDatasetEditions } from "#app/services/dataset.server.ts";
 import type { Route } from "./+types/editions";
 
 /** Every edition with the addresses of its files. */
 export async function loader({ context }: Route.LoaderArgs) {
   if (!(await hasAcceptedTerms(personActor(context))))
     throw forbidden("Accept the terms of use on the Dataset page first.");
-  const editions = await listEditions();
+  const editions = await listDatasetEditions();
   return Response.json({
-    editions: editions.map(({ id, seasonStartYear, number, publishedAt, contentSha256 }) => ({
+    editions: editions.map(({ id, seasonStartYear, number, publishedAt, contentSha256, files }) => ({
       id,
       season: seasonLabel(seasonStartYear),
       number,
       publishedAt,
       contentSha256,
-      files: ["cells.csv", "rows.csv", "datapackage.json"].map(
-        (file) => `${env.publicOrigin}/api/v1/editions/${id}/${file}`,
-      ),
+      files: files.map((file) => `${env.publicOrigin}/api/v1/editions/${id}/${file}`),
     })),
   });
 }

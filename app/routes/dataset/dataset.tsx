@@ -9,13 +9,12 @@ import { personActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
 import { indicatorKeys, indicators } from "#app/domain/peers/indicators.ts";
 import { formatShortDay } from "#app/lib/format.ts";
-import { acceptTerms, hasAcceptedTerms } from "#app/services/dataset.server.ts";
-import { listEditions } from "#app/services/editions.server.ts";
+import { acceptTerms, hasAcceptedTerms, listDatasetEditions } from "#app/services/dataset.server.ts";
 import type { Route } from "./+types/dataset";
 
 export async function loader({ context }: Route.LoaderArgs) {
   const actor = personActor(context);
-  const [editions, hasTerms] = await Promise.all([listEditions(), hasAcceptedTerms(actor)]);
+  const [editions, hasTerms] = await Promise.all([listDatasetEditions(), hasAcceptedTerms(actor)]);
   return { editions, hasTerms, isAnalyst: actor.kind === "analyst" };
 }
 
@@ -39,7 +38,7 @@ export default function Dataset({ loaderData: { editions, hasTerms, isAnalyst } 
     <Page>
       <Answer>
         {newest
-          ? `The newest edition is ${seasonLabel(newest.seasonStartYear)}, edition ${newest.number}, from ${newest.townCount} contributors.`
+          ? `The newest edition is ${seasonLabel(newest.seasonStartYear)}, edition ${newest.number}, from ${newest.townBand} contributors.`
           : "No edition is published yet, so there is nothing to download."}
       </Answer>
       <Method>
@@ -82,7 +81,7 @@ export default function Dataset({ loaderData: { editions, hasTerms, isAnalyst } 
             cells: {
               edition: `${seasonLabel(edition.seasonStartYear)}, edition ${edition.number}`,
               day: formatShortDay(edition.publishedAt.slice(0, 10)),
-              files: hasTerms ? <Files editionId={edition.id} /> : "after accepting the terms",
+              files: hasTerms ? <Files {...edition} /> : "after accepting the terms",
               hash: <code className="text-note">{edition.contentSha256.slice(0, 12)}</code>,
             },
           }))}
@@ -119,21 +118,19 @@ export default function Dataset({ loaderData: { editions, hasTerms, isAnalyst } 
   );
 }
 
-function Files({ editionId }: { editionId: number }) {
-  const at = (file: string) => `/dataset/editions/${editionId}/${file}`;
-  return (
-    <>
-      <TextLink to={at("cells.csv")} isDocument>
-        cells (CSV)
+const fileWords: Record<string, string> = {
+  "cells.csv": "cells (CSV)",
+  "rows.csv": "rows (CSV)",
+  "datapackage.json": "description (JSON)",
+};
+
+function Files({ id, files }: { id: number; files: readonly string[] }) {
+  return files.map((file, position) => (
+    <span key={file}>
+      {position > 0 && ", "}
+      <TextLink to={`/dataset/editions/${id}/${file}`} isDocument>
+        {fileWords[file] ?? file}
       </TextLink>
-      ,{" "}
-      <TextLink to={at("rows.csv")} isDocument>
-        rows (CSV)
-      </TextLink>
-      ,{" "}
-      <TextLink to={at("datapackage.json")} isDocument>
-        description (JSON)
-      </TextLink>
-    </>
-  );
+    </span>
+  ));
 }

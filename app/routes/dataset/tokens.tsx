@@ -35,7 +35,11 @@ export async function action({ context, request }: Route.ActionArgs) {
   const parsed = NewTokenForm.safeParse(Object.fromEntries(form));
   if (!parsed.success)
     return data({ token: null, error: "Give the token a name, so that you know it again." }, { status: 400 });
-  return { token: await createToken(actor, parsed.data), error: null };
+  const token = await createToken(actor, parsed.data);
+  if (token !== null) return { token, error: null };
+  const error =
+    "This form was sent before, and its token shown then. If you did not copy it, revoke it and make another.";
+  return data({ token: null, error }, { status: 409 });
 }
 
 export const meta: Route.MetaFunction = () => [{ title: "Tokens · Commonweigh" }];

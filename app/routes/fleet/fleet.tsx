@@ -1,26 +1,29 @@
 import { Form, redirect } from "react-router";
-import { RateWords } from "#app/components/fleet/fleet-table.tsx";
+import { FleetPages } from "#app/components/fleet/fleet-pages.tsx";
+import { PlaceKey } from "#app/components/fleet/rate-words.tsx";
+import { ReadyCalibrations } from "#app/components/fleet/ready-calibrations.tsx";
+import { RegisterTable } from "#app/components/fleet/register-table.tsx";
+import { dueOfTruck, readView, showTrucks, sortChoices, stateChoices } from "#app/components/fleet/register-view.ts";
+import { TextField } from "#app/components/forms/field.tsx";
+import { SelectField } from "#app/components/forms/select-field.tsx";
 import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
 import { Page } from "#app/components/layout/page.tsx";
 import { Button, ButtonLink } from "#app/components/ui/button.tsx";
 import { EmptyState } from "#app/components/ui/empty-state.tsx";
-import { InBand, Over, Under } from "#app/components/ui/state-mark.tsx";
+import { Over } from "#app/components/ui/state-mark.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
-import { Timetable } from "#app/components/ui/timetable.tsx";
 import { townActor } from "#app/context.ts";
-import { dueState } from "#app/domain/calibration/due.ts";
-import { now } from "#app/lib/clock.server.ts";
 import { readForm } from "#app/lib/form.ts";
-import { formatInches, formatShortDay } from "#app/lib/format.ts";
 import { countWords, sentenceStart } from "#app/lib/words.ts";
-import { approveCalibrations, listFleet, type TruckView } from "#app/services/fleet.server.ts";
+import { approveCalibrations } from "#app/services/fleet/approve.server.ts";
+import { listFleet, type TruckLine } from "#app/services/fleet/read.server.ts";
 import type { Route } from "./+types/fleet";
 
-export async function loader({ context }: Route.LoaderArgs) {
+export async function loader({ context, url }: Route.LoaderArgs) {
   const actor = townActor(context);
   return {
     isDirector: actor.role === "director",
-    today: now().toISOString().slice(0, 10),
+    view: readView(url.searchParams),
     trucks: await listFleet(actor),
   };
 }
@@ -36,149 +39,110 @@ export async function action({ context, request }: Route.ActionArgs) {
 
 export const meta: Route.MetaFunction = () => [{ title: "Fleet · Commonweigh" }];
 
-const spreaderWords: Record<TruckView["spreaderKind"], string> = {
-  "tailgate-auger": "auger under the tailgate",
-  "hopper-auger": "auger in the hopper",
-  conveyor: "conveyor",
-  "liquid-tanks": "liquid tanks",
-};
-
-/** One line for each truck and material in use: the newest calibration, approved ones first. */
-function fleetLines(trucks: readonly TruckView[], today: string) {
-  return trucks
-    .filter((truck) => truck.isInService)
-    .flatMap((truck) => {
-      const materials = [...new Set(truck.calibrations.map(({ materialName }) => materialName))];
-      const names = materials.length > 0 ? materials : [null];
-      return names.map((materialName) => {
-        const own = truck.calibrations.filter((calibration) => calibration.materialName === materialName);
-        const inForce = own.find(({ state }) => state === "approved") ?? null;
-        return { truck, materialName, inForce, due: dueState(inForce?.testedOn ?? null, today) };
-      });
-    });
+function Sentence({ trucks }: { trucks: readonly TruckLine[] }) {
+  const inService = trucks.filter((truck) => truck.isInService);
+  const salt = inService.flatMap(({ materials }) =>
+    materials.flatMap(({ materialKind, inForce }) =>
+      materialKind === "salt" && inForce?.working && inForce.working.place !== null ? [inForce.working.place] : [],
+    ),
+  );
+  const over = salt.filter((place) => place === "over").length;
+  const due = inService.filter((truck) => ["due", "overdue"].includes(dueOfTruck(truck)?.state ?? "")).length;
+  return (
+    <>
+      {salt.length === 0 ? (
+        "No salt truck has a calibration in force."
+      ) : over > 0 ? (
+        <>
+          <Over>
+            {over === salt.length && over > 1
+              ? `All ${countWords(over, "truck", "trucks")}`
+              : `${sentenceStart(countWords(over, "truck", "trucks"))} of ${salt.length}`}
+          </Over>{" "}
+          {over === 1 ? "lays" : "lay"} more salt than the band at the working setting.
+        </>
+      ) : (
+        "No salt truck lays more than the band at its working setting."
+      )}{" "}
+      {due > 0 && `${sentenceStart(countWords(due, "is", "are"))} due for calibration.`}
+    </>
+  );
 }
 
-const dueWords = { "in-date": "in date", due: "due", never: "never weighed" } as const;
-
-export default function Fleet({ loaderData: { isDirector, today, trucks } }: Route.ComponentProps) {
-  const lines = fleetLines(trucks, today);
-  const salt = lines.filter(({ inForce }) => inForce?.materialKind === "salt" && inForce.workingPlace !== null);
-  const over = salt.filter(({ inForce }) => inForce?.workingPlace === "over").length;
-  const due = new Set(lines.filter((line) => line.due !== "in-date").map(({ truck }) => truck.id)).size;
+export default function Fleet({ loaderData: { isDirector, trucks, view } }: Route.ComponentProps) {
   const ready = trucks.flatMap((truck) =>
-    truck.calibrations.filter(({ state }) => state === "ready").map((calibration) => ({ truck, calibration })),
+    truck.materials.flatMap((line) => line.ready.map((calibration) => ({ truck, calibration }))),
   );
   if (trucks.length === 0) {
     return (
       <Page>
         <Answer>No truck is in the fleet yet.</Answer>
-        <EmptyState title="Trucks and their calibrations belong here">
-          The coordinator puts the first trucks in with your town. Then each truck is weighed with each material it
-          carries.
+        <EmptyState
+          title="Trucks and their calibrations belong here"
+          action={<ButtonLink to="/fleet/trucks/new">Put in the first truck</ButtonLink>}
+        >
+          One by one, or all of them from a spreadsheet:{" "}
+          <TextLink to="/uploads?kind=trucks">upload a list of trucks</TextLink>. Then each truck is weighed with each
+          material it carries.
         </EmptyState>
       </Page>
     );
   }
+  const shown = showTrucks(trucks, view);
   return (
     <Page>
       <Answer>
-        {salt.length === 0 ? (
-          "No salt truck has a calibration in force."
-        ) : over > 0 ? (
-          <>
-            <Over>
-              {over === salt.length && over > 1
-                ? `All ${countWords(over, "salt truck", "salt trucks")}`
-                : `${sentenceStart(countWords(over, "", "").trim())} of ${countWords(salt.length, "salt truck", "salt trucks")}`}
-            </Over>{" "}
-            {over === 1 ? "lays" : "lay"} more than the band at the working setting.
-          </>
-        ) : (
-          "No salt truck lays more than the band at its working setting."
-        )}{" "}
-        {due > 0 && `${sentenceStart(countWords(due, "is", "are"))} due for calibration.`}
+        <Sentence trucks={trucks} />
       </Answer>
       <Method>
-        Rates are measured: shaft turns counted at each setting, one turn’s catch weighed. The band is common practice,
-        250 to 300 lb per lane mile for straight salt; it is a yardstick and tells no driver how much to apply.
+        Rates are measured: shaft turns counted at each setting, one turn’s catch weighed. A band is a yardstick and
+        tells no driver how much to apply.
       </Method>
-      <p className="mt-4">
-        <ButtonLink to="/uploads?kind=calibrations" variant={ready.length > 0 && isDirector ? "quiet" : "primary"}>
-          Upload calibrations
-        </ButtonLink>
-      </p>
+      <FleetPages />
       {ready.length > 0 && <ReadyCalibrations isDirector={isDirector} ready={ready} />}
-      <Heading>In force</Heading>
-      <Timetable
-        caption="Trucks by material: what they lay at the working setting and speed"
-        isCaptionHidden
-        hasStickyHead
-        columns={[
-          { key: "truck", label: "truck", foldPrefix: "Truck" },
-          { key: "spreader", label: "spreader", isWideOnly: true },
-          { key: "material", label: "material" },
-          { key: "at", label: "working setting and speed", isWideOnly: true },
-          { key: "gate", label: "gate", unit: "in", isNumeric: true, isWideOnly: true },
-          { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
-          { key: "weighed", label: "weighed" },
-          { key: "due", label: "calibration" },
-        ]}
-        rows={lines.map(({ truck, materialName, inForce, due: state }) => ({
-          key: `${truck.id} ${materialName ?? ""}`,
-          cells: {
-            truck: <TextLink to={`/fleet/${truck.id}`}>{truck.unitNumber}</TextLink>,
-            spreader: spreaderWords[truck.spreaderKind] + (truck.control === "ground-speed" ? ", ground-speed" : ""),
-            material: materialName ?? "–",
-            at: `setting ${truck.workingSetting}, ${truck.workingSpeedMph} mph`,
-            gate: inForce ? formatInches(inForce.gateOpeningIn) : "–",
-            lays: <RateWords rate={inForce?.workingRateLbPerLaneMile ?? null} place={inForce?.workingPlace ?? null} />,
-            weighed: inForce ? formatShortDay(inForce.testedOn) : "–",
-            due: state === "in-date" ? dueWords[state] : <b>{dueWords[state]}</b>,
-          },
-        }))}
-      />
-      <p className="mt-2 text-note text-gravel">
-        <InBand>in the band</InBand> &ensp; <Over>above it</Over> &ensp; <Under>under it</Under>
-      </p>
-    </Page>
-  );
-}
-
-type Ready = { truck: TruckView; calibration: TruckView["calibrations"][number] };
-
-function ReadyCalibrations({ isDirector, ready }: { isDirector: boolean; ready: readonly Ready[] }) {
-  return (
-    <section>
-      <Heading>{isDirector ? "Waiting for your approval" : "Waiting for the director’s approval"}</Heading>
-      <Timetable
-        caption="Calibrations that are weighed and not yet in force"
-        isCaptionHidden
-        columns={[
-          { key: "truck", label: "truck", foldPrefix: "Truck" },
-          { key: "material", label: "material" },
-          { key: "gate", label: "gate", unit: "in", isNumeric: true },
-          { key: "lays", label: "lays", unit: "lb per lane mile", isNumeric: true },
-          { key: "weighed", label: "weighed" },
-        ]}
-        rows={ready.map(({ truck, calibration }) => ({
-          key: String(calibration.id),
-          cells: {
-            truck: <TextLink to={`/fleet/${truck.id}`}>{truck.unitNumber}</TextLink>,
-            material: calibration.materialName,
-            gate: formatInches(calibration.gateOpeningIn),
-            lays: <RateWords rate={calibration.workingRateLbPerLaneMile} place={calibration.workingPlace} />,
-            weighed: formatShortDay(calibration.testedOn),
-          },
-        }))}
-      />
-      {isDirector && (
-        <Form method="post" className="mt-4">
-          {ready.map(({ calibration }) => (
-            <input key={calibration.id} type="hidden" name="calibrationId" value={calibration.id} />
-          ))}
-          <Button>Approve {countWords(ready.length, "calibration", "calibrations")}</Button>
-        </Form>
+      <div className="flex flex-wrap items-center gap-x-6 gap-y-2">
+        {ready.length > 0 && isDirector ? (
+          <TextLink to="/fleet/worksheets" weight="bold">
+            Calibrate a truck
+          </TextLink>
+        ) : (
+          <ButtonLink to="/fleet/worksheets">Calibrate a truck</ButtonLink>
+        )}
+        <TextLink to="/fleet/trucks/new">Put in a truck</TextLink>
+        <TextLink to="/uploads?kind=calibrations">Upload calibrations</TextLink>
+        <TextLink to="/uploads?kind=trucks">Upload trucks</TextLink>
+        <TextLink to="/fleet/export" isDocument>
+          Download the fleet (CSV)
+        </TextLink>
+      </div>
+      <Heading>Trucks</Heading>
+      <Form className="mb-5 flex flex-wrap items-end gap-x-4 gap-y-3 print:hidden" role="search">
+        <div className="w-full sm:w-56">
+          <TextField name="q" label="Find" type="search" defaultValue={view.q} placeholder="number, body or material" />
+        </div>
+        <div className="w-[47%] sm:w-44">
+          <SelectField name="state" label="Show" choices={stateChoices} defaultValue={view.state} />
+        </div>
+        <div className="w-[47%] sm:w-52">
+          <SelectField name="sort" label="In the order of" choices={sortChoices} defaultValue={view.sort} />
+        </div>
+        <Button variant="quiet">Show them</Button>
+        {shown.length < trucks.length && (
+          <p className="flex min-h-target items-center gap-3" role="status">
+            {shown.length} of {trucks.length} <TextLink to="/fleet">Show all</TextLink>
+          </p>
+        )}
+      </Form>
+      {shown.length === 0 ? (
+        <p>No truck is like that. Look for less, or show all of them.</p>
+      ) : (
+        <>
+          <RegisterTable trucks={shown} />
+          <p className="mt-2 text-note text-gravel">
+            <PlaceKey /> &ensp; ± is about 95 %; without it, a single catch was weighed
+          </p>
+        </>
       )}
-    </section>
+    </Page>
   );
 }

@@ -53,7 +53,7 @@ export default function Audit({ loaderData: { entries } }: Route.ComponentProps)
             { key: "when", label: "when" },
             { key: "who", label: "who", isProse: true },
             { key: "did", label: "did", isProse: true },
-            { key: "town", label: "town", isProse: true },
+            { key: "town", label: "town", isWideOnly: true },
             { key: "what", label: "record", isWideOnly: true },
           ]}
           rows={entries.map((entry) => ({
@@ -62,7 +62,12 @@ export default function Audit({ loaderData: { entries } }: Route.ComponentProps)
               when: formatInstant(entry.at),
               who: entry.actorName === null ? actorWords(entry) : `${entry.actorName}, ${entry.actorRole}`,
               town: entry.townName ?? "–",
-              did: deedWords(entry.action),
+              did: (
+                <>
+                  {deedWords(entry.action)}
+                  <span className="sm:hidden">{ofTown(entry)}</span>
+                </>
+              ),
               what: entry.entityId === null ? "–" : `no. ${entry.entityId}`,
             },
           }))}

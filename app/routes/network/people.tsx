@@ -114,7 +114,7 @@ export default function People({ loaderData, actionData }: Route.ComponentProps)
       <Heading>People</Heading>
       <Form method="get" role="search" className="mb-4 flex items-end gap-3">
         <div className="w-full max-w-field">
-          <TextField name="find" label="Find a person or town" defaultValue={find} key={find} />
+          <TextField name="find" label="Find people" defaultValue={find} key={find} />
         </div>
         <Button variant="quiet">Find</Button>
       </Form>

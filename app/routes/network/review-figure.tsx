@@ -12,6 +12,7 @@ import { Button } from "#app/components/ui/button.tsx";
 import { Notice } from "#app/components/ui/notice.tsx";
 import { networkActor } from "#app/context.ts";
 import { seasonLabel } from "#app/domain/dates.ts";
+import { badRequest } from "#app/lib/errors.ts";
 import { readForm } from "#app/lib/form.ts";
 import { formatInstant } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
@@ -34,7 +35,10 @@ export async function action({ context, params, request }: Route.ActionArgs) {
   const version = idParam(typeof versionText === "string" ? versionText : "", "version of these figures");
   const noteText = form.get("note");
   const note = typeof noteText === "string" ? noteText.trim() : "";
-  const isReturn = form.get("verdict") === "return";
+  const verdict = form.get("verdict");
+  // Never by default: a form that lost a field must not accept a town's figures.
+  if (verdict !== "accept" && verdict !== "return") throw badRequest("Choose: accept the season, or send it back.");
+  const isReturn = verdict === "return";
   if (isReturn && (note.length < 8 || note.length > 2000)) {
     return data(
       { error: "Write the question that goes back with it: a sentence, at most 2,000 letters.", refusal: null },

@@ -1,5 +1,4 @@
 import { LaneStrip } from "#app/components/charts/lane-strip.tsx";
-import { laneStripSvgs } from "#app/components/charts/lane-strip-svg.server.ts";
 import { markedAlike, stripParts } from "#app/components/charts/lane-strip-spec.ts";
 import { StripKey } from "#app/components/charts/strip-key.tsx";
 import { Answer, Method } from "#app/components/layout/answer.tsx";
@@ -47,7 +46,7 @@ export async function loader({ context, url }: Route.LoaderArgs) {
   const specs = markedAlike(drawn.map(({ spec }) => spec));
   const strips = drawn.map((strip, position) => {
     const spec = specs[position] ?? strip.spec;
-    return { ...strip, spec, svg: laneStripSvgs(spec) };
+    return { ...strip, spec };
   });
   return { standing: { ...rest, strips } };
 }
@@ -98,12 +97,11 @@ export default function Peers({ loaderData: { standing } }: Route.ComponentProps
         }))}
       />
       {first && <StripKey parts={keyParts(strips)} hasBand={strips.some(({ spec }) => spec.band !== null)} />}
-      {strips.map(({ indicator, spec, svg, tenths }) => (
+      {strips.map(({ indicator, spec, tenths }) => (
         <LaneStrip
           key={`${indicator} ${groupKey} ${edition.id}`}
           title={indicators[indicator].name}
           spec={spec}
-          svg={svg}
           tableNote={
             tenths &&
             `One town in ten lies under ${formatWhole(tenths.low)}, one in ten over ${formatWhole(tenths.high)}.`
@@ -136,7 +134,7 @@ export default function Peers({ loaderData: { standing } }: Route.ComponentProps
 
 function partWords(groupKey: string) {
   if (groupKey.startsWith("size-")) return "by size";
-  return groupKey.startsWith("district-") ? "by district" : "all";
+  return groupKey.startsWith("district-") ? "by district" : "compare with";
 }
 
 type Strips = NonNullable<Route.ComponentProps["loaderData"]["standing"]>["strips"];

@@ -102,7 +102,7 @@ export default function SeasonPage({ loaderData: { season, isLate, isDirector },
       ) : (
         <>
           {isOpen && (
-            <div className="mt-5 flex flex-wrap items-center gap-x-5 gap-y-2">
+            <div className="mt-5 flex flex-wrap items-center gap-x-5 gap-y-2 print:hidden">
               {isDirector ? (
                 <Form method="post">
                   <input type="hidden" name="version" value={figure.version} />
@@ -130,7 +130,7 @@ export default function SeasonPage({ loaderData: { season, isLate, isDirector },
         </>
       )}
       {others.length > 0 && (
-        <p className="mt-6 text-gravel">
+        <p className="mt-6 text-gravel print:hidden">
           Other seasons:{" "}
           {others.map((year, position) => (
             <span key={year}>

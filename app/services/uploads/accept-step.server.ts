@@ -9,6 +9,7 @@ import { recordAudit } from "../audit.server.ts";
 import { storeCalibrations } from "./store-calibrations.server.ts";
 import { storeSeasons } from "./store-seasons.server.ts";
 import { storeStock } from "./store-stock.server.ts";
+import { storeTrucks } from "./store-trucks.server.ts";
 import { storeStorms } from "./store-storms.server.ts";
 import { storeWeather } from "./store-weather.server.ts";
 import { NotNow, type StagedRow, type Stored } from "./staged.server.ts";
@@ -26,6 +27,7 @@ const stores: Record<UploadKind, Store> = {
   stock: storeStock,
   "season-figures": storeSeasons,
   calibrations: storeCalibrations,
+  trucks: storeTrucks,
   weather: storeWeather,
 };
 

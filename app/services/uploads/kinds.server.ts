@@ -2,14 +2,15 @@ import type { Transaction } from "sequelize";
 import type { TownActor } from "#app/context.ts";
 import { calibrationFileColumns } from "#app/domain/calibration/calibration-file.ts";
 import type { FileProblem, FileRow } from "#app/domain/file-problem.ts";
+import { truckFileColumns } from "#app/domain/fleet/truck-file.ts";
 import { seasonFileColumns } from "#app/domain/season/season-file.ts";
 import { readStockRow, stockFields, stockTemplate } from "#app/domain/season/stock-file.ts";
 import { stormFields, stormTemplate } from "#app/domain/season/storm-fields.ts";
 import { readStormRow } from "#app/domain/season/storm-file.ts";
 import type { UploadField } from "#app/domain/upload/field.ts";
 import type { UploadKind } from "#app/models/upload.server.ts";
-import { checkCalibrations, checkSeasons } from "./whole-files.server.ts";
-import { calibrationFields, seasonFields } from "./template-fields.ts";
+import { checkCalibrations, checkSeasons, checkTrucks } from "./whole-files.server.ts";
+import { calibrationFields, seasonFields, truckFields } from "./template-fields.ts";
 import { stockKnowledge, stormKnowledge, townMaterials } from "./knowledge.server.ts";
 
 /** What a row came to: what would be stored, or null while an error stands; and what is wrong or doubtful. */
@@ -137,6 +138,35 @@ export const uploadKinds: Record<UploadKind, Kind> = {
     reading: { by: "file", mostRows: 20_000, check: checkCalibrations },
     // Without one of its readings a calibration would be another one.
     canLeaveOut: false,
+    isReplacing: false,
+  },
+  trucks: {
+    label: "Trucks",
+    things: { one: "truck", many: "trucks" },
+    home: { to: "/fleet", words: "Open the fleet" },
+    fields: async () => truckFields,
+    template: async () => ({
+      heads: truckFileColumns,
+      example: [
+        [
+          "12",
+          "8-yard hopper",
+          "hopper-auger",
+          "manual",
+          "1",
+          "25",
+          "3",
+          "1600",
+          "4 1/2",
+          "8.6",
+          "yes",
+          "Salt; Sand mix",
+        ],
+        ["14", "10-yard chain body", "conveyor", "ground-speed", "1", "25", "4", "", "", "", "yes", "Salt"],
+      ],
+    }),
+    reading: { by: "file", mostRows: 2_000, check: checkTrucks },
+    canLeaveOut: true,
     isReplacing: false,
   },
   weather: {

@@ -120,7 +120,8 @@ export async function problemGroups(
     found.map(async (group): Promise<ProblemGroup> => {
       const { code, field, severity, rowCount, messages, message } = group;
       const key = groupKey(code, field);
-      const sort = sortOfCode[code];
+      // A list of names in one cell is put right in the cell.
+      const sort = field === "materials" ? undefined : sortOfCode[code];
       const limit = key === shownKey ? rowsShown.many : rowsShown.few;
       const values = sort === undefined ? [] : await namesIn(uploadId, group);
       return {

@@ -1,5 +1,6 @@
 import { QueryTypes } from "sequelize";
 import type { StagedCalibration } from "#app/domain/calibration/calibration-file.ts";
+import type { StagedTruck } from "#app/domain/fleet/truck-file.ts";
 import type { StagedSeason } from "#app/domain/season/season-file.ts";
 import type { StagedStock } from "#app/domain/season/stock-file.ts";
 import type { StagedStorm } from "#app/domain/season/storm-file.ts";
@@ -7,12 +8,13 @@ import { db } from "#app/lib/db.server.ts";
 import { Material } from "#app/models/material.server.ts";
 import { Truck } from "#app/models/truck.server.ts";
 import type { Upload } from "#app/models/upload.server.ts";
-import { CalibrationShape, SeasonShape, StockShape, StormShape } from "./staged.server.ts";
+import { CalibrationShape, SeasonShape, StockShape, StormShape, TruckShape } from "./staged.server.ts";
 
 /** The first rows that would be taken in, as they were understood, and what they span. */
 export type Sample = {
   seasons: StagedSeason[];
   calibrations: StagedCalibration[];
+  trucks: StagedTruck[];
   storms: (StagedStorm & { sheetRow: number })[];
   stock: (StagedStock & { sheetRow: number })[];
   truckNames: Record<number, string>;
@@ -65,6 +67,7 @@ export async function readySample(upload: Upload): Promise<Sample> {
   return {
     seasons: upload.kind === "season-figures" ? staged.map(({ value }) => SeasonShape.parse(value)) : [],
     calibrations: upload.kind === "calibrations" ? staged.map(({ value }) => CalibrationShape.parse(value)) : [],
+    trucks: upload.kind === "trucks" ? staged.map(({ value }) => TruckShape.parse(value)) : [],
     storms:
       upload.kind === "storms" ? staged.map(({ sheetRow, value }) => ({ sheetRow, ...StormShape.parse(value) })) : [],
     stock:

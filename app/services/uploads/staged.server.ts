@@ -1,5 +1,7 @@
 import { z } from "zod";
 import type { StagedCalibration } from "#app/domain/calibration/calibration-file.ts";
+import { controlKinds, spreaderKinds } from "#app/domain/fleet/truck.ts";
+import type { StagedTruck } from "#app/domain/fleet/truck-file.ts";
 import type { StagedSeason } from "#app/domain/season/season-file.ts";
 import { type StagedStock, stockKinds } from "#app/domain/season/stock-file.ts";
 import type { StagedStorm } from "#app/domain/season/storm-file.ts";
@@ -36,6 +38,23 @@ export const CalibrationShape = z.object({
   counts: z.array(z.object({ setting: z.number().int(), revolutions: Positive, seconds: Positive })),
   catches: z.array(z.object({ revolutions: Positive, grossLb: Positive, tareLb: Amount })),
 }) satisfies z.ZodType<StagedCalibration>;
+
+export const TruckShape = z.object({
+  row: z.number(),
+  truckId: z.number().int().nullable(),
+  unitNumber: z.string(),
+  body: z.string(),
+  spreaderKind: z.enum(spreaderKinds),
+  control: z.enum(controlKinds),
+  lanesPerPass: Positive,
+  workingSpeedMph: Positive,
+  workingSetting: Positive,
+  workingRpm: Positive.nullable(),
+  gateMaxIn: Positive.nullable(),
+  capacityTons: Positive.nullable(),
+  isInService: z.boolean(),
+  materialIds: z.array(z.number().int()),
+}) satisfies z.ZodType<StagedTruck>;
 
 export const StormShape = z.object({
   seasonStartYear: z.number().int(),

@@ -119,3 +119,32 @@ export const calibrationFields: readonly UploadField[] = [
     need: "always",
   },
 ];
+
+/** Columns of a file of trucks, one truck a row. Blank cells of what is not known are fine, missing columns are not. */
+export const truckFields: readonly UploadField[] = [
+  {
+    key: "truck",
+    label: "truck",
+    names: ["truck", "unit", "unit number", "truck number"],
+    holds: "text",
+    need: "always",
+  },
+  { key: "body", label: "body", names: ["body"], holds: "text", need: "always" },
+  { key: "spreader", label: "spreader", names: ["spreader", "spreader kind"], holds: "text", need: "always" },
+  { key: "control", label: "control", names: ["control"], holds: "text", need: "always" },
+  { key: "lanes_per_pass", label: "lanes per pass", names: ["lanes per pass"], holds: "figure", need: "always" },
+  {
+    key: "working_speed_mph",
+    label: "working speed, mph",
+    names: ["working speed mph"],
+    holds: "figure",
+    need: "always",
+  },
+  { key: "working_setting", label: "working setting", names: ["working setting"], holds: "figure", need: "always" },
+  { key: "working_rpm", label: "working rpm", names: ["working rpm"], holds: "figure", need: "always" },
+  // Fractions are read here, which only inches have.
+  { key: "gate_max_in", label: "widest gate, inches", names: ["gate max in"], holds: "text", need: "always" },
+  { key: "capacity_tons", label: "load, tons", names: ["capacity tons"], holds: "figure", need: "always" },
+  { key: "in_service", label: "in service", names: ["in service"], holds: "text", need: "always" },
+  { key: "materials", label: "materials", names: ["materials"], holds: "text", need: "always" },
+];

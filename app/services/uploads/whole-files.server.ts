@@ -1,6 +1,7 @@
 import type { TownActor } from "#app/context.ts";
 import { calibrationKey, readCalibrationRows } from "#app/domain/calibration/calibration-file.ts";
 import type { FileProblem, FileRow } from "#app/domain/file-problem.ts";
+import { readTruckRows } from "#app/domain/fleet/truck-file.ts";
 import { readSeasonRows } from "#app/domain/season/season-file.ts";
 import { now } from "#app/lib/clock.server.ts";
 import { Calibration } from "#app/models/calibration.server.ts";
@@ -40,6 +41,21 @@ export async function checkSeasons(actor: TownActor, rows: readonly FileRow[]): 
     earlier: figures
       .filter((figure) => figure.state === "accepted")
       .map((figure) => ({ seasonStartYear: figure.seasonStartYear, amounts: figure })),
+  });
+  return byRow(rows, checked);
+}
+
+/** Reads a file of trucks against the town's fleet; only a director may take one in or out of service. */
+export async function checkTrucks(actor: TownActor, rows: readonly FileRow[]): Promise<WholeOutcome> {
+  const where = { townId: actor.townId };
+  const [trucks, materials] = await Promise.all([
+    Truck.findAll({ where, attributes: ["id", "unitNumber", "isInService"] }),
+    Material.findAll({ where, attributes: ["id", "name"] }),
+  ]);
+  const checked = readTruckRows(rows, {
+    trucks: trucks.map(({ id, unitNumber, isInService }) => ({ id, unitNumber, isInService })),
+    materials: materials.map(({ id, name }) => ({ id, name })),
+    maySetService: actor.role === "director",
   });
   return byRow(rows, checked);
 }

@@ -23,8 +23,13 @@ const weakPolicy: DisclosurePolicy = {
   rowFile: { networkMin: 1, k: 1, l: 1, spreadShare: 0 },
 };
 
-function build(towns: readonly TownInput[], policy = defaultPolicy, registry: readonly EditionMember[] = []) {
-  return buildEdition({ seasonStartYear: 2025, towns, registry, policy, random: seededRandom(5) });
+function build(
+  towns: readonly TownInput[],
+  policy = defaultPolicy,
+  registry: readonly EditionMember[] = [],
+  hasEarlierRows = false,
+) {
+  return buildEdition({ seasonStartYear: 2025, towns, registry, hasEarlierRows, policy, random: seededRandom(5) });
 }
 
 /** A region with a district of two towns, which a weak policy would show. */
@@ -165,6 +170,32 @@ test("one late town is not in the next edition's groups, whichever town it is", 
     expect(withLate.filter(({ isPublished }) => isPublished)).toEqual([]);
     expect(differencing([first, second])).toEqual([]);
   }
+});
+
+/** What is left of one figure's total when the rows of an earlier edition are taken from those of a later one. */
+function rowTotalDifference(first: BuiltEdition, second: BuiltEdition, indicator: string): number | null {
+  if (first.rows.state === "withheld" || second.rows.state === "withheld") return null;
+  const [before, after] = [first.rows.rows, second.rows.rows].map((rows) =>
+    rows.reduce((sum, { values }) => sum + (values[indicator] ?? 0), 0),
+  );
+  return (after ?? 0) - (before ?? 0);
+}
+
+test("rows are given out once a season: from two files a late town's figure could be worked out", () => {
+  const indicator = "rate-at-working-setting";
+  const towns = inventedRegion();
+  const [like, lateRate] = [towns[30], 1437.3];
+  if (!like) throw new Error("a town was expected");
+  const late = { ...like, townId: 999, contributorId: 999, values: { ...like.values, [indicator]: lateRate } };
+  const first = build(towns);
+  const published = first.members.filter(({ isPublished }) => isPublished);
+  // The attack does find the figure, to within a tenth, where a second file is given out.
+  const found = rowTotalDifference(first, build([...towns, late], defaultPolicy, published), indicator);
+  expect(Math.abs((found ?? 0) - lateRate)).toBeLessThan(lateRate / 10);
+
+  const second = build([...towns, late], defaultPolicy, published, true);
+  expect(second.rows).toEqual({ state: "withheld", reason: "given-before" });
+  expect(rowTotalDifference(first, second, indicator)).toBeNull();
 });
 
 test("whoever sends in for 40 other regions is not exposed either", () => {

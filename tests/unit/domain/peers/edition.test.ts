@@ -10,7 +10,8 @@ import { inventedRegion, seededRandom } from "../region.ts";
 const indicator = "rate-at-working-setting";
 
 function build(towns: readonly TownInput[], registry: readonly RegisteredGroup[] = []) {
-  return buildEdition({ seasonStartYear: 2025, towns, registry, policy: defaultPolicy, random: seededRandom(3) });
+  const random = seededRandom(3);
+  return buildEdition({ seasonStartYear: 2025, towns, registry, hasEarlierRows: false, policy: defaultPolicy, random });
 }
 
 function memberCellOf(edition: ReturnType<typeof build>, groupKey: string) {
@@ -153,6 +154,20 @@ test("an earlier edition without figures is compared by its towns alone", () => 
     .filter(({ isPublished }) => isPublished)
     .map((one) => ({ indicator: one.indicator, groupKey: one.groupKey, contributorIds: one.contributorIds }));
   expect(build(inventedRegion(), registry).cells).toEqual(first.cells);
+});
+
+test("while the region is held back, its newcomer does not show in the scale either", () => {
+  const first = build(plainTowns(12, spread));
+  const published = first.members.filter(({ isPublished }) => isPublished);
+  const [low, high] = [101.3, 2931.7].map((late) => {
+    const second = build(
+      plainTowns(13, (place) => (place < 12 ? spread(place) : late)),
+      published,
+    );
+    return memberCellOf(second, "all");
+  });
+  expect(low).toMatchObject({ state: "withheld", reason: "too-close" });
+  expect(high).toEqual(low);
 });
 
 test("all groups of an indicator share one axis, in fifties, that ends at nobody's figure", () => {

@@ -49,9 +49,9 @@ test("the speed is named when all trucks work at one", () => {
   expect(text).toContain("at the working setting and 25 mph: 88 above");
 });
 
-test("without a place the median of the 8 peers takes its stead", () => {
+test("without a place the median of the 8 towns takes its stead", () => {
   expect(sentenceText(placeSentence({ indicator, ownValue: 388, cell: few, percentile: null, band }))).toMatch(
-    /: 88 above the band, about 68 above the median of your 8 peers\.$/,
+    /: 88 above the band, about 68 above the median of the 8 towns\.$/,
   );
 });
 
@@ -60,7 +60,7 @@ test("a figure without a band is set against the median and the place", () => {
     placeSentence({ indicator: "salt-per-event", ownValue: 410.2, cell, percentile: 80, band: null }),
   );
   expect(text).toBe(
-    "Your town laid 410 lb of salt on a lane mile in each event: about 90 above the median of your 65 peers, more than about 80 in 100 of your peers.",
+    "Your town laid 410 lb of salt on a lane mile in each event: about 90 above the median of the 65 towns, more than about 80 in 100 of your peers.",
   );
 });
 
@@ -79,7 +79,7 @@ test("withheld peers are said with the reason, with and without a band", () => {
 
 test("a town without a figure is told so, and what its peers lay", () => {
   expect(sentenceText(placeSentence({ indicator, ownValue: null, cell, percentile: null, band }))).toBe(
-    "None of your salt trucks has a calibration that gives this rate yet. Half of 65 towns lie between 270 and 380 lb per lane mile.",
+    "This edition holds no rate of your salt trucks. Half of 65 towns lie between 270 and 380 lb per lane mile.",
   );
   expect(sentenceText(placeSentence({ indicator, ownValue: null, cell: few, percentile: null, band }))).toContain(
     "The median of 8 towns is about 320 lb per lane mile.",

@@ -1,0 +1,125 @@
+import type { TownActor } from "#app/context.ts";
+import type { Band } from "#app/domain/calibration/band.ts";
+import { type CabCard, cabCard } from "#app/domain/calibration/card.ts";
+import { env } from "#app/lib/env.server.ts";
+import { type QrDrawing, qrDrawing } from "#app/lib/qr.ts";
+import { type CalibrationDetail, getCalibration } from "./calibration.server.ts";
+import { listFleet, type MaterialLine, type TruckLine, workingRateOf } from "./read.server.ts";
+import { dischargeReadings } from "./readings.server.ts";
+
+export type PrintedCard = {
+  calibrationId: number;
+  card: CabCard;
+  townName: string;
+  band: Band | null;
+  workingSpeedMph: number;
+  workingRpm: number | null;
+  /** ± of the rates, percent, k = 2, at the working setting; null after a single catch. */
+  plusMinusPercent: number | null;
+  /** What the card counts for. A card of anything but what is in force says so in large type. */
+  standing: "in-force" | "ready" | "history";
+  /** Leads to the record. */
+  address: string;
+  qr: QrDrawing;
+};
+
+const columnCount = 4;
+const stepMph = 5;
+
+/**
+ * The speeds of a card: the working speed, two round ones below it, and round ones above until there are four.
+ *
+ * @param workingSpeedMph - > 0
+ * @returns ascending mph, each at least 5 save for a slower working speed
+ * @example cardSpeeds(25) // [15, 20, 25, 30]
+ */
+export function cardSpeeds(workingSpeedMph: number): number[] {
+  const below = (Math.ceil(workingSpeedMph / stepMph) - 1) * stepMph;
+  const speeds = [below - stepMph, below].filter((speed) => speed >= stepMph);
+  speeds.push(workingSpeedMph);
+  for (
+    let speed = (Math.floor(workingSpeedMph / stepMph) + 1) * stepMph;
+    speeds.length < columnCount;
+    speed += stepMph
+  ) {
+    speeds.push(speed);
+  }
+  return speeds;
+}
+
+function plusMinusPercent({ truck, readings, band }: CalibrationDetail): number | null {
+  const working = workingRateOf(truck, readings, band);
+  if (!working || working.plusMinusLbPerLaneMile === null) return null;
+  return (100 * working.plusMinusLbPerLaneMile) / working.lbPerLaneMile;
+}
+
+function printed(actor: TownActor, calibration: CalibrationDetail): PrintedCard | null {
+  const { id, truck, readings, band, state, inForceId } = calibration;
+  const measured = dischargeReadings(readings);
+  if (measured === null) return null;
+  const address = `${env.publicOrigin}/fleet/calibrations/${id}`;
+  return {
+    calibrationId: id,
+    card: cabCard({
+      ...measured,
+      unitNumber: truck.unitNumber,
+      materialName: calibration.materialName,
+      gateOpeningIn: calibration.gateOpeningIn,
+      gateScaleMark: calibration.gateScaleMark,
+      testedOn: calibration.testedOn,
+      testedBy: calibration.testerName ?? "",
+      lanesPerPass: truck.lanesPerPass,
+      speedsMph: cardSpeeds(truck.workingSpeedMph),
+      workingSpeedMph: truck.workingSpeedMph,
+      band,
+    }),
+    townName: actor.townName,
+    band,
+    workingSpeedMph: truck.workingSpeedMph,
+    workingRpm: truck.workingRpm,
+    plusMinusPercent: plusMinusPercent(calibration),
+    standing: state === "ready" ? "ready" : id === inForceId ? "in-force" : "history",
+    address,
+    qr: qrDrawing(address),
+  };
+}
+
+/**
+ * The cab card of one calibration.
+ *
+ * @returns null when no setting was measured, as after liquids alone
+ * @throws 404 when the calibration is not the town's
+ */
+export async function getCard(actor: TownActor, calibrationId: number): Promise<PrintedCard | null> {
+  return printed(actor, await getCalibration(actor, calibrationId));
+}
+
+/** A truck and material without a card in the batch, and why. */
+export type LeftOut = { truckId: number; unitNumber: string; materialName: string; line: MaterialLine };
+
+function pairs(trucks: readonly TruckLine[]) {
+  return trucks
+    .filter(({ isInService }) => isInService)
+    .flatMap((truck) => truck.materials.map((line) => ({ truck, line })));
+}
+
+/** The cards of everything in force and in date, by unit number; what is due gets none, and is named instead. */
+export async function listCards(actor: TownActor): Promise<{ cards: PrintedCard[]; leftOut: LeftOut[] }> {
+  const all = pairs(await listFleet(actor));
+  const ids = all.flatMap(({ line }) => (line.inForce && line.due.state === "in-date" ? [line.inForce.id] : []));
+  const cards: PrintedCard[] = [];
+  // One after the other: a large fleet must not take every connection of the pool.
+  for (const id of ids) {
+    const card = await getCard(actor, id);
+    if (card) cards.push(card);
+  }
+  const leftOut = all
+    .filter(({ line }) => line.due.state !== "in-date")
+    .map(({ truck, line }) => ({
+      truckId: truck.id,
+      unitNumber: truck.unitNumber,
+      materialName: line.materialName,
+      line,
+    }));
+  return { cards, leftOut };
+}

@@ -23,7 +23,7 @@ class BulkError extends Error {
 }
 
 /** Rows sent to the database at a time. */
-export const bulkRows = 2000;
+export const bulkRows = 1000;
 
 /**
  * Insert many rows in a transaction, by the connector's own bulk protocol: some ten times as fast as through models.

@@ -57,10 +57,17 @@ export function encodingFinder(): { add: (piece: Uint8Array) => void; result: ()
   };
 }
 
+/** Decoded at a time: the parser makes all rows of a piece at once, and only so many are to be in memory. */
+const decodedBytes = 64 * 1024;
+
 /** The pieces as text; a mark at the start is dropped. @throws RangeError for the encoding "none" */
 export async function* decodedPieces(pieces: AsyncIterable<Uint8Array>, encoding: TextEncodingName) {
   if (encoding === "none") throw new RangeError("bytes that are no text cannot be decoded");
   const decoder = new TextDecoder(encoding);
-  for await (const piece of pieces) yield decoder.decode(piece, { stream: true });
+  for await (const piece of pieces) {
+    for (let start = 0; start < piece.length; start += decodedBytes) {
+      yield decoder.decode(piece.subarray(start, start + decodedBytes), { stream: true });
+    }
+  }
   yield decoder.decode();
 }

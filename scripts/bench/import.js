@@ -161,7 +161,8 @@ async function wholeImport(system, db, town, text) {
     for (;;) {
       const [upload] = await db.query("SELECT state, failure FROM upload WHERE id = ?", [uploadId]);
       if (upload.state === state) return;
-      if (upload.state === "failed") throw new Error(upload.failure);
+      if (["failed", "matching"].includes(upload.state))
+        throw new Error(`The upload is ${upload.state}: ${upload.failure}`);
       await sleep(20);
     }
   };
@@ -182,7 +183,7 @@ async function wholeImport(system, db, town, text) {
   if (stored !== rowCount) throw new Error(`${stored} rows were stored, not ${rowCount}.`);
   await clear(db, town);
   await db.query("DELETE FROM upload WHERE id = ?", [uploadId]);
-  return { seconds, checkSeconds: (checkedAt - started) / 1000, grownMb: peakMb - startMb };
+  return { seconds, checkSeconds: (checkedAt - started) / 1000, startMb, grownMb: peakMb - startMb };
 }
 
 /**
@@ -206,7 +207,7 @@ export async function importRates({ rounds = 3, say = console.log } = {}) {
       bare.push(await bareImport(db, town, text));
       whole.push(await wholeImport(system, db, town, text));
       say(
-        `round ${round + 1}: bare ${bare.at(-1).toFixed(2)} s, whole ${whole.at(-1).seconds.toFixed(2)} s (checked after ${whole.at(-1).checkSeconds.toFixed(2)} s), memory +${whole.at(-1).grownMb.toFixed(0)} MB`,
+        `round ${round + 1}: bare ${bare.at(-1).toFixed(2)} s, whole ${whole.at(-1).seconds.toFixed(2)} s (checked after ${whole.at(-1).checkSeconds.toFixed(2)} s), memory ${whole.at(-1).startMb.toFixed(0)} MB, +${whole.at(-1).grownMb.toFixed(0)} MB`,
       );
     }
     const best = whole.reduce((one, other) => (other.seconds < one.seconds ? other : one));

@@ -6,14 +6,7 @@ import { type StagedStock, stockKindWords } from "#app/domain/season/stock-file.
 import type { StagedStorm } from "#app/domain/season/storm-file.ts";
 import { stormKindWords } from "#app/domain/season/storm-kind.ts";
 import { unitWords } from "#app/domain/upload/measure.ts";
-import {
-  formatDollars,
-  formatInches,
-  formatOneDecimal,
-  formatShortDay,
-  formatTons,
-  formatWhole,
-} from "#app/lib/format.ts";
+import { formatDollars, formatOneDecimal, formatShortDay, formatTons, formatWhole } from "#app/lib/format.ts";
 
 import { UploadHolds } from "./upload-holds.tsx";
 

@@ -72,7 +72,6 @@ const fixedFields: readonly UploadField[] = [
     label: "pavement temperature",
     names: [
       "pavement temp",
-      "pavement temp f",
       "pavement temperature",
       "road temp",
       "road temperature",

@@ -31,7 +31,7 @@ const stores: Record<UploadKind, Store> = {
   weather: storeWeather,
 };
 
-const rowsAtATime = 2000;
+const rowsAtATime = 1000;
 
 /** The good rows in their order, some at a time. */
 async function* readyRows(uploadId: number, transaction: Transaction): AsyncGenerator<StagedRow[]> {

@@ -15,9 +15,9 @@ const Encoding = z.enum(["utf-8", "utf-16le", "utf-16be", "windows-1252", "none"
 /** Keep a file that has arrived, in pieces. @param path - where it lies */
 export async function storeFile(uploadId: number, path: string, transaction: Transaction): Promise<void> {
   const file = await open(path);
+  const chunk = Buffer.alloc(chunkBytes);
   try {
     for (let position = 0; ; position++) {
-      const chunk = Buffer.alloc(chunkBytes);
       const { bytesRead } = await file.read(chunk, 0, chunkBytes, position * chunkBytes);
       if (bytesRead === 0) return;
       const content = chunk.subarray(0, bytesRead);

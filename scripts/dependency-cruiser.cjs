@@ -107,12 +107,6 @@ module.exports = {
       to: { path: "^node_modules/(exceljs|yauzl)" },
     },
     {
-      name: "one-owner-forms-with-files",
-      severity: "error",
-      from: { path: "^app", pathNot: "^app/lib/multipart" },
-      to: { path: "^node_modules/(busboy|@remix-run/form-data-parser)" },
-    },
-    {
       name: "one-owner-mail",
       severity: "error",
       from: { path: "^app", pathNot: "^app/lib/mailer" },

@@ -1,8 +1,6 @@
 import { createHash } from "node:crypto";
-import { createWriteStream } from "node:fs";
-import { Readable, Transform } from "node:stream";
-import { pipeline } from "node:stream/promises";
-import busboy from "busboy";
+import { open } from "node:fs/promises";
+import { boundaryOf, BrokenForm, formPieces } from "./form-parts.ts";
 import { encodingFinder, type TextEncodingName } from "./text-encoding.server.ts";
 
 /** A file that has arrived, lying at the path that was given for it. */
@@ -21,26 +19,26 @@ export type ReceivedForm =
   | { ok: true; fields: Map<string, string>; file: ReceivedFile | null }
   | { ok: false; reason: "too-large" | "not-whole" | "not-a-form" | "disk-full" };
 
+const most = { fields: 20, fieldBytes: 10_000 };
+
+class TooLarge extends Error {}
+
 /** Notes of a file what has to be known of it, while it passes by. */
-function noteTaker() {
+function noteTaker(mostBytes: number) {
   const hash = createHash("sha256");
   const encoding = encodingFinder();
   const noted = { byteCount: 0, lineCount: 0, opening: new Uint8Array() };
-  const stream = new Transform({
-    transform(piece: Buffer, _encoding, done) {
-      if (noted.byteCount === 0) noted.opening = Uint8Array.from(piece.subarray(0, 8));
-      noted.byteCount += piece.length;
-      for (let place = piece.indexOf(10); place !== -1; place = piece.indexOf(10, place + 1)) noted.lineCount++;
-      hash.update(piece);
-      encoding.add(piece);
-      done(null, piece);
+  return {
+    add(bytes: Uint8Array) {
+      if (noted.opening.length < 8) noted.opening = Uint8Array.from([...noted.opening, ...bytes.subarray(0, 8)]);
+      noted.byteCount += bytes.length;
+      if (noted.byteCount > mostBytes) throw new TooLarge();
+      for (let place = bytes.indexOf(10); place !== -1; place = bytes.indexOf(10, place + 1)) noted.lineCount++;
+      hash.update(bytes);
+      encoding.add(bytes);
     },
-  });
-  return { stream, result: () => ({ ...noted, sha256: hash.digest("hex"), encoding: encoding.result() }) };
-}
-
-function codeOf(error: unknown) {
-  return typeof error === "object" && error !== null && "code" in error ? error.code : null;
+    result: () => ({ ...noted, sha256: hash.digest("hex"), encoding: encoding.result() }),
+  };
 }
 
 async function* piecesOf(body: ReadableStream<Uint8Array>) {
@@ -53,6 +51,51 @@ async function* piecesOf(body: ReadableStream<Uint8Array>) {
   }
 }
 
+type Pieces = ReturnType<typeof formPieces>;
+
+async function readField(pieces: Pieces): Promise<string> {
+  const decoder = new TextDecoder();
+  let [text, byteCount] = ["", 0];
+  for (let next = await pieces.next(); next.done !== true && next.value.type !== "end"; next = await pieces.next()) {
+    if (next.value.type !== "data") continue;
+    byteCount += next.value.bytes.length;
+    if (byteCount > most.fieldBytes) throw new BrokenForm("a field is too long");
+    text += decoder.decode(next.value.bytes, { stream: true });
+  }
+  return text + decoder.decode();
+}
+
+async function writeFile(pieces: Pieces, path: string, mostBytes: number) {
+  const notes = noteTaker(mostBytes);
+  const file = await open(path, "wx", 0o600);
+  try {
+    for (let next = await pieces.next(); next.done !== true && next.value.type !== "end"; next = await pieces.next()) {
+      if (next.value.type !== "data") continue;
+      notes.add(next.value.bytes);
+      await file.writeFile(next.value.bytes);
+    }
+  } finally {
+    await file.close();
+  }
+  return notes.result();
+}
+
+async function readForm(pieces: Pieces, path: string, mostBytes: number) {
+  const fields = new Map<string, string>();
+  let file: ReceivedFile | null = null;
+  let partCount = 0;
+  for (let next = await pieces.next(); next.done !== true; next = await pieces.next()) {
+    if (next.value.type !== "part") continue;
+    const { name, fileName } = next.value;
+    partCount++;
+    if (partCount > most.fields || (fileName !== null && file !== null)) throw new BrokenForm("too many parts");
+    // Browsers send an empty part without a name when no file is chosen.
+    if (fileName === null || fileName === "") fields.set(name, await readField(pieces));
+    else file = { fileName, ...(await writeFile(pieces, path, mostBytes)) };
+  }
+  return { ok: true, fields, file } as const;
+}
+
 /**
  * A form with one file, written to `path` as it arrives: however large it is, only a piece of it is in memory.
  *
@@ -62,44 +105,16 @@ async function* piecesOf(body: ReadableStream<Uint8Array>) {
  * @returns the fields and what was noted of the file (null when none was chosen), or why it could not be taken
  */
 export async function receiveForm(request: Request, path: string, mostBytes: number): Promise<ReceivedForm> {
-  const contentType = request.headers.get("content-type") ?? "";
-  if (!request.body || !/^multipart\/form-data\b/i.test(contentType)) return { ok: false, reason: "not-a-form" };
-  let parser: busboy.Busboy;
+  const boundary = boundaryOf(request.headers.get("content-type") ?? "");
+  if (!request.body || boundary === null) return { ok: false, reason: "not-a-form" };
+  const pieces = formPieces(piecesOf(request.body), boundary);
   try {
-    const limits = { files: 1, fileSize: mostBytes, fields: 20, fieldSize: 10_000, parts: 30 };
-    parser = busboy({ headers: { "content-type": contentType }, limits, defParamCharset: "utf8" });
-  } catch {
-    return { ok: false, reason: "not-a-form" };
-  }
-  const fields = new Map<string, string>();
-  let file: ReceivedFile | null = null;
-  let writing = Promise.resolve();
-  let isTooLarge = false;
-  for (const limit of ["filesLimit", "fieldsLimit", "partsLimit"] as const) {
-    parser.on(limit, () => parser.destroy(new Error(limit)));
-  }
-  parser.on("field", (name, value) => fields.set(name, value));
-  parser.on("file", (_name, stream, { filename }) => {
-    // Browsers send an empty part without a name when no file is chosen.
-    if (!filename) return stream.resume();
-    const notes = noteTaker();
-    stream.on("limit", () => {
-      isTooLarge = true;
-      parser.destroy(new Error("too large"));
-    });
-    writing = pipeline(stream, notes.stream, createWriteStream(path, { flags: "wx", mode: 0o600 })).then(() => {
-      file = { fileName: filename, ...notes.result() };
-    });
-    writing.catch((error: unknown) => parser.destroy(error instanceof Error ? error : new Error("write")));
-    return stream;
-  });
-  try {
-    await pipeline(Readable.from(piecesOf(request.body)), parser);
-    await writing;
+    return await readForm(pieces, path, mostBytes);
   } catch (error) {
-    await writing.catch(() => {});
-    if (isTooLarge) return { ok: false, reason: "too-large" };
-    return { ok: false, reason: codeOf(error) === "ENOSPC" ? "disk-full" : "not-whole" };
+    if (error instanceof TooLarge) return { ok: false, reason: "too-large" };
+    const isFull = error instanceof Error && "code" in error && error.code === "ENOSPC";
+    return { ok: false, reason: isFull ? "disk-full" : "not-whole" };
+  } finally {
+    await pieces.return(undefined);
   }
-  return { ok: true, fields, file };
 }

@@ -140,7 +140,9 @@ function cellValue(cell, is1904) {
   let isFormula = false;
   if (value !== null && typeof value === "object" && !(value instanceof Date) && "formula" in value) {
     isFormula = true;
-    value = value.result ?? null;
+    // Asked of the cell: the copy that its value is leaves out a result of nought.
+    value = cell.result ?? Number.NaN;
+    // What was never worked out, or came to an error, has no figure.
     if (typeof value === "number" && Number.isNaN(value)) return { value: "#ERROR!", isFormula };
     if (typeof value === "number" && isDateFormat(cell.numFmt)) value = dateText(value, is1904);
   }

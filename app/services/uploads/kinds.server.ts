@@ -10,6 +10,7 @@ import { readStormRow } from "#app/domain/season/storm-file.ts";
 import type { UploadField } from "#app/domain/upload/field.ts";
 import type { UploadKind } from "#app/models/upload.server.ts";
 import { checkCalibrations, checkSeasons, checkTrucks } from "./whole-files.server.ts";
+import { spreadsheetErrors } from "./rows.server.ts";
 import { calibrationFields, seasonFields, truckFields } from "./template-fields.ts";
 import { stockKnowledge, stormKnowledge, townMaterials } from "./knowledge.server.ts";
 
@@ -46,14 +47,25 @@ export type Kind = {
   isReplacing: boolean;
 };
 
+/** A cell that holds an error is told as that, and not as what its text fails to be. */
+function whole(read: RowReader): RowReader {
+  return (row) => {
+    const errors = spreadsheetErrors(row);
+    if (errors.length === 0) return read(row);
+    const inError = new Set(errors.map(({ column }) => column));
+    const others = read(row).problems.filter(({ column }) => !inError.has(column));
+    return { staged: null, problems: [...errors, ...others] };
+  };
+}
+
 async function stormReader(actor: TownActor, transaction?: Transaction): Promise<RowReader> {
   const known = await stormKnowledge(actor, transaction);
-  return (row) => readStormRow(row, known);
+  return whole((row) => readStormRow(row, known));
 }
 
 async function stockReader(actor: TownActor, transaction?: Transaction): Promise<RowReader> {
   const known = await stockKnowledge(actor, transaction);
-  return (row) => readStockRow(row, known);
+  return whole((row) => readStockRow(row, known));
 }
 
 async function stormExample(actor: TownActor) {

@@ -1,4 +1,4 @@
-import type { FileRow, RowStyle } from "#app/domain/file-problem.ts";
+import { cellProblem, type FileProblem, type FileRow, type RowStyle } from "#app/domain/file-problem.ts";
 import type { MeasureUnit } from "#app/domain/upload/measure.ts";
 import type { SheetRow } from "#app/lib/file-error.ts";
 import type { Matching } from "./matching.server.ts";
@@ -44,4 +44,17 @@ export function fileRows(matching: Matching): (sheetRow: SheetRow, answers: RowA
 /** A row's cells as text, for keeping and showing. */
 export function cellTexts(sheetRow: SheetRow): string[] {
   return sheetRow.cells.map(String);
+}
+
+const spreadsheetError = /^#(?:REF!|DIV\/0!|N\/A|NAME\?|NUM!|NULL!|VALUE!|SPILL!|ERROR!)$/;
+
+/** Cells that hold a spreadsheet's error in the place of a value. */
+export function spreadsheetErrors(fileRow: FileRow): FileProblem[] {
+  const found: FileProblem[] = [];
+  for (const [field, text] of fileRow.cells) {
+    if (!text.startsWith("#") || !spreadsheetError.test(text)) continue;
+    const message = "A formula came to an error here, or was never worked out. Give the value itself.";
+    found.push(cellProblem(fileRow, field, "spreadsheet-error", message));
+  }
+  return found;
 }

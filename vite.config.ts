@@ -11,8 +11,18 @@ export default defineConfig({
   build: { sourcemap: false },
   test: {
     projects: [
-      { test: { name: "unit", include: ["tests/unit/**/*.test.{ts,tsx}"], environment: "node" } },
-      { test: { name: "external", include: ["tests/external/**/*.test.ts"], environment: "node" } },
+      // The time limits are for a slow or busy machine: nothing here is timed.
+      {
+        test: {
+          name: "unit",
+          include: ["tests/unit/**/*.test.{ts,tsx}"],
+          environment: "node",
+          testTimeout: 60_000,
+        },
+      },
+      {
+        test: { name: "external", include: ["tests/external/**/*.test.ts"], environment: "node", testTimeout: 60_000 },
+      },
       {
         test: {
           name: "integration",
@@ -21,7 +31,7 @@ export default defineConfig({
           pool: "forks",
           fileParallelism: true,
           maxWorkers: 2,
-          testTimeout: 30_000,
+          testTimeout: 60_000,
           hookTimeout: 60_000,
         },
       },

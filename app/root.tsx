@@ -54,6 +54,16 @@ const areasByRole: Record<Role, readonly Area[]> = {
 
 const placeByKind: Record<PersonActor["kind"], string> = { town: "", network: "The network", analyst: "Open dataset" };
 
+/** For pages that do not get to give their own. */
+export const meta: Route.MetaFunction = ({ error }) => [
+  {
+    title:
+      error === undefined
+        ? "Commonweigh"
+        : `${words(isRouteErrorResponse(error) ? error : null).title.replace(/\.$/, "")} · Commonweigh`,
+  },
+];
+
 export function loader({ context }: Route.LoaderArgs) {
   const visitor = context.get(visitorContext);
   return {

@@ -13,7 +13,7 @@ module.exports = {
     {
       name: "statistics-in-one-place",
       severity: "error",
-      from: { pathNot: "^app/domain/stats" },
+      from: { path: "^app", pathNot: "^app/domain/stats" },
       to: { path: "^node_modules/simple-statistics" },
     },
     {

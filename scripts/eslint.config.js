@@ -66,6 +66,7 @@ export default tseslint.config(
           "__dirname",
           "performance",
           "Response",
+          "TextEncoder",
           "document",
           "window",
         ].map((name) => [name, "readonly"]),

@@ -117,7 +117,9 @@ export function sheetDifferences(mine: Worksheet, theirs: Worksheet, base: Works
   const readings = pairs.flatMap((pair) => {
     if (isSame(pair.mine, pair.theirs)) return [];
     const row = pair.mine ?? pair.theirs;
-    const place = row && pair.list === "counts" ? ` at setting ${row.setting ?? ""}` : "";
+    const side = rowsOf(pair.mine ? mine : theirs, pair.list);
+    const number = side.findIndex(({ id }) => id === row?.id) + 1;
+    const place = pair.list === "counts" ? ` at setting ${row?.setting ?? ""}` : ` ${number}`;
     const before = base && row ? counterpart(pair.list, row, rowsOf(base, pair.list)) : null;
     const hasBoth = pair.mine !== null && pair.theirs !== null;
     const oneSided: Choice = pair.mine === null ? "theirs" : "mine";

@@ -1,4 +1,4 @@
-import { afterAnswer, type Draft, type Message, messageOf, needsSending, ownerKey } from "./draft.ts";
+import { afterAnswer, type Message, messageOf, needsSending, ownerKey } from "./draft.ts";
 import { isKitAnswer, isSyncAnswer, type KitAnswer } from "./answers.ts";
 import { keepKit, keepMessage, listDrafts, listMessages, settleMessage } from "./store.client.ts";
 
@@ -89,9 +89,4 @@ export async function sendWorksheets(owner: string, onProgress: () => void): Pro
   return navigator.locks.request("commonweigh-send", { ifAvailable: true }, (lock) =>
     lock === null ? "waiting" : sendAll(owner, onProgress),
   );
-}
-
-/** Whether anything of this owner waits to be sent. */
-export function owesAnything(drafts: readonly Draft[]): boolean {
-  return drafts.some(needsSending);
 }

@@ -77,7 +77,8 @@ export function openYard(clientRef: string | null) {
         });
         if (unwritten === typed) {
           unwritten = null;
-          if (stored) show({ draft: stored });
+          // The same sheet stays the same object, so that nothing is worked out twice for it.
+          if (stored) show({ draft: stored.calibrationId === null ? { ...stored, sheet } : stored });
         }
       }
       channel?.postMessage(clientRef);

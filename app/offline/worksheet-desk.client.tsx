@@ -1,5 +1,4 @@
-import { useEffect, useMemo, useRef, useState } from "react";
-import { useLocation, useNavigate } from "react-router";
+import { useMemo, useRef, useState } from "react";
 import { newReadingId, type Editor } from "#app/components/worksheet/editor.ts";
 import { SettleVersions } from "#app/components/worksheet/settle-versions.tsx";
 import { FootButton, SheetFrame } from "#app/components/worksheet/sheet-frame.tsx";
@@ -15,7 +14,6 @@ import { workedOut, type WorkedOut } from "#app/components/worksheet/worked-out.
 import { Say } from "#app/components/worksheet/yard-field.tsx";
 import {
   emptyWorksheet,
-  nextStep,
   stepOfField,
   type Worksheet,
   worksheetAtNewGate,
@@ -31,6 +29,7 @@ import type { Draft } from "./draft.ts";
 import type { Snapshot, Yard } from "./session.client.ts";
 import { standingWords } from "./standing-words.ts";
 import { todayOnPhone, useYard } from "./use-yard.client.ts";
+import { useStep } from "./use-step.client.ts";
 import { YardMessage, SendNotice } from "./yard-message.client.tsx";
 
 /** One worksheet, from the phone's own store. */
@@ -124,28 +123,6 @@ const wayOn: Record<WorksheetStep, string> = {
   card: "Finish the sheet",
 };
 
-function useStep(draft: Draft, truck: Editor["truck"]) {
-  const { hash } = useLocation();
-  const navigate = useNavigate();
-  const named = worksheetSteps.find((step) => hash === `#${step}`);
-  const step = named ?? (draft.calibrationId === null ? nextStep(draft.sheet, truck) : "card");
-  const go = (to: WorksheetStep) => void navigate({ hash: to });
-
-  useEffect(() => {
-    // The step gets an address of its own, or filling in its last field would turn the page.
-    if (!named) void navigate({ hash: step, search: window.location.search }, { replace: true });
-  }, [named, step, navigate]);
-
-  const before = useRef(step);
-  useEffect(() => {
-    if (before.current === step) return;
-    before.current = step;
-    window.scrollTo(0, 0);
-    document.getElementById("step-heading")?.focus({ preventScroll: true });
-  }, [step]);
-  return { step, go };
-}
-
 function Desk(props: DeskProps) {
   const { yard, snapshot, draft, truck, material } = props;
   const { sheet, running, calibrationId } = draft;
@@ -200,6 +177,7 @@ function Desk(props: DeskProps) {
       title={`Truck ${truck.unitNumber}, ${material.name.toLowerCase()}`}
       standing={standingWords(draft, snapshot.connection)}
       steps={steps}
+      onStep={(to) => go(worksheetSteps.find((one) => one === to) ?? step)}
       foot={
         isCounting || isAtEnd ? undefined : (
           <FootButton onClick={goOn}>{wayOn[step === "gate" && isTimed ? "counts" : step]}</FootButton>
@@ -230,14 +208,13 @@ type StepProps = DeskProps & {
 };
 
 function Step({ step, editor, worked, isWaiting, onNewGate, yard, draft, truck }: StepProps) {
-  const { search } = useLocation();
   switch (step) {
     case "truck":
       return <StepTruck editor={editor} />;
     case "cautions":
       return <StepCautions editor={editor} />;
     case "gate": {
-      const aim = readNumber(new URLSearchParams(search).get("aim") ?? "");
+      const aim = readNumber(new URLSearchParams(window.location.search).get("aim") ?? "");
       return <StepGate editor={editor} aimIn={aim.ok && aim.value > 0 && aim.value <= 24 ? aim.value : null} />;
     }
     case "counts":

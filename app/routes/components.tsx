@@ -20,7 +20,7 @@ export function loader() {
   return {
     strips: stripSamples,
     front: laneStripSvgs(exampleStrip),
-    wall: laneStripSvg(wallSample, "wall"),
+    wall: { svg: laneStripSvg(wallSample, "wall"), phoneSvg: laneStripSvg(wallSample, "phone") },
   };
 }
 
@@ -42,14 +42,14 @@ export default function Components({ loaderData }: Route.ComponentProps) {
           <LaneStrip key={key} {...strip} downloadTo="/components" isTableOpen={key === "twelve"} />
         ))}
         <Heading>On the wall</Heading>
-        <WallStrip svg={wall} />
+        <WallStrip {...wall} />
         <Heading>On the front page</Heading>
         <FrontStrip svg={front} />
         <PartSamples />
         <FormSamples />
         <Heading>In the dark</Heading>
-        <div data-theme="dark" className="bg-salt p-4 text-asphalt">
-          <WallStrip svg={wall} />
+        <div data-theme="dark" className="-mx-4 bg-salt p-4 text-asphalt">
+          <WallStrip {...wall} />
           <p className="mt-4">
             <Button type="button">Weigh the catch</Button>
           </p>

@@ -1,7 +1,6 @@
 import { redirect } from "react-router";
 import { exampleStrip, FrontStrip } from "#app/components/charts/front-strip.tsx";
 import { laneStripSvgs } from "#app/components/charts/lane-strip-svg.server.ts";
-import { Page } from "#app/components/layout/page.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { visitorContext } from "#app/context.ts";
@@ -46,8 +45,8 @@ const people = [
 
 export default function Home({ loaderData: { svg } }: Route.ComponentProps) {
   return (
-    <>
-      <Page hasBottomBar={false} className="pb-0!">
+    <main id="main" tabIndex={-1}>
+      <div className="mx-auto w-full max-w-column px-4 pt-6 sm:px-8 sm:pt-8">
         <h1 className="max-w-[16.6em] text-[clamp(2.25rem,6.4vw,4rem)] leading-[1.06] font-bold tracking-[-0.028em] text-balance">
           Weigh in. See where you stand. Change one thing. Weigh in again.
         </h1>
@@ -55,7 +54,7 @@ export default function Home({ loaderData: { svg } }: Route.ComponentProps) {
           Commonweigh is where the towns of a snow region measure what each truck really lays on a lane mile, and
           compare it, without any town’s figures being shown to another.
         </p>
-      </Page>
+      </div>
       <div className="mt-6">
         <FrontStrip svg={svg} />
       </div>
@@ -88,6 +87,6 @@ export default function Home({ loaderData: { svg } }: Route.ComponentProps) {
           <TextLink to="/protection">How towns are protected</TextLink>
         </p>
       </div>
-    </>
+    </main>
   );
 }

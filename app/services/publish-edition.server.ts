@@ -33,23 +33,36 @@ async function readEarlierEditionIds(seasonStartYear: number, transaction: Trans
   return editions.map((edition) => edition.id);
 }
 
-/** The groups that earlier editions of the season have shown: what a new group must not be subtracted from. */
-async function readRegistry(editionIds: readonly number[], transaction: Transaction) {
-  const members = await EditionMember.findAll({
-    where: { editionId: [...editionIds], isPublished: true },
+/** Its calibrations may stem from the season before, so neighbouring seasons share most of its figures. */
+const lastingIndicator: IndicatorKey = "rate-at-working-setting";
+
+/**
+ * The groups that a new group must not be subtracted from: all that earlier editions of the season have shown, and, of
+ * the figures that outlast a season, those of the seasons next to it.
+ */
+async function readRegistry(seasonStartYear: number, transaction: Transaction) {
+  const editions = await Edition.findAll({
+    attributes: ["id", "seasonStartYear"],
+    where: { seasonStartYear: [seasonStartYear - 1, seasonStartYear, seasonStartYear + 1] },
     transaction,
   });
-  return members.flatMap(({ indicator, groupKey, contributorIds, figures }) =>
-    isIndicatorKey(indicator)
+  const seasonOf = new Map(editions.map((edition) => [edition.id, edition.seasonStartYear]));
+  const members = await EditionMember.findAll({
+    where: { editionId: [...seasonOf.keys()], isPublished: true },
+    transaction,
+  });
+  return members.flatMap(({ editionId, indicator, groupKey, contributorIds, figures }) => {
+    const isCompared = seasonOf.get(editionId) === seasonStartYear || indicator === lastingIndicator;
+    return isCompared && isIndicatorKey(indicator)
       ? [{ indicator, groupKey, contributorIds: Ids.parse(contributorIds), figures: Figures.parse(figures) }]
-      : [],
-  );
+      : [];
+  });
 }
 
 async function computeEdition(seasonStartYear: number, transaction: Transaction) {
   const towns = await readPeerFigures(seasonStartYear, transaction);
   const earlierIds = await readEarlierEditionIds(seasonStartYear, transaction);
-  const registry = await readRegistry(earlierIds, transaction);
+  const registry = await readRegistry(seasonStartYear, transaction);
   const hasEarlierRows = (await EditionRow.count({ where: { editionId: earlierIds }, transaction })) > 0;
   const random = () => randomInt(2 ** 32) / 2 ** 32;
   const policy = defaultPolicy;

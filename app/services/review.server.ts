@@ -144,15 +144,26 @@ export async function returnFigure(actor: NetworkActor, figureId: number, versio
   return inTransaction((transaction) => settle(actor, figureId, version, { state: "returned", note }, transaction));
 }
 
+/** A figure as the coordinator saw it on the page. */
+export type SeenFigure = { figureId: number; version: number };
+
 /**
- * Accept every sent season that passed all checks.
+ * Accept the sent seasons that the coordinator saw listed as clean. One that was changed or settled since, or is no
+ * longer clean, is passed over.
  *
- * @returns how many
+ * @param seen - at most 1,000
+ * @returns how many were accepted
  */
-export async function acceptCleanFigures(actor: NetworkActor, seasonStartYear: number): Promise<number> {
+export async function acceptCleanFigures(
+  actor: NetworkActor,
+  seasonStartYear: number,
+  seen: readonly SeenFigure[],
+): Promise<number> {
   const { clean } = await getReviewQueue(actor, seasonStartYear);
+  const isSeen = ({ id, version }: FigureView) =>
+    seen.slice(0, 1000).some((one) => one.figureId === id && one.version === version);
   let accepted = 0;
-  for (const { figure } of clean) {
+  for (const { figure } of clean.filter((item) => isSeen(item.figure))) {
     const outcome = await acceptFigure(actor, figure.id, figure.version);
     if (outcome.ok) accepted++;
   }

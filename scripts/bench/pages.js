@@ -1,101 +1,106 @@
-import { createHash, randomBytes } from "node:crypto";
 import { readFileSync } from "node:fs";
+import { setTimeout as sleep } from "node:timers/promises";
 import autocannon from "autocannon";
-import { connect } from "../migrate.js";
-import { startPassingSystem } from "../passing-system.js";
-import { middleOf, short } from "./measure.js";
+import { Failure } from "../failures.js";
 
 const connections = 10;
+const warmUpSeconds = 4;
+const seconds = 8;
 const rounds = 3;
-const secondsEach = 5;
-/** Peers may cost at most so much more than the least page there can be, in the same server. */
-const leastPeersRatio = 0.35;
 
 /**
- * A session of a demo person, written straight into the database.
+ * Requests a second of the pages worth watching, each measured several times in turn with the others, so that whatever
+ * else the machine does falls on all of them.
  *
- * @param {Awaited<ReturnType<typeof startPassingSystem>>} system
- * @param {string} subject
- * @returns {Promise<string>} the cookie header
+ * @param {object} given
+ * @param {import("../passing-system.js").PassingSystem} given.system
+ * @param {(line: string) => void} given.say
+ * @returns {Promise<{ requestsPerSecond: Record<string, number>, p99Ms: Record<string, number>, failedRequests: number,
+ *   ratios: Record<string, number>, rssMb: number }>} medians of the rounds
  */
-async function sessionOf(system, subject) {
-  const token = randomBytes(32).toString("base64url");
-  const connection = await connect(system.migrator);
-  await connection.query(
-    `INSERT INTO session (token_hash, user_id, created_at, last_seen_at, expires_at, authenticated_at)
-     SELECT ?, id, UTC_TIMESTAMP(3), UTC_TIMESTAMP(3), UTC_TIMESTAMP(3) + INTERVAL 1 HOUR, UTC_TIMESTAMP(3)
-       FROM user_account WHERE subject = ?`,
-    [createHash("sha256").update(token).digest("hex"), subject],
-  );
-  await connection.end();
-  // The cookie as the application itself writes it: its value is JSON in base64.
-  const value = encodeURIComponent(Buffer.from(JSON.stringify(token)).toString("base64"));
-  return `sid=${value}`;
-}
+export async function pageRates({ system, say }) {
+  const cookie = await signIn(system, "maren.oake");
+  await editionsOut(system, cookie);
+  const targets = {
+    bare: { path: "/bare", headers: {} },
+    peers: { path: "/peers", headers: { cookie } },
+    peersOfGroup: { path: "/peers?group=size-50-149", headers: { cookie } },
+    healthz: { path: "/healthz", headers: {} },
+  };
+  const run = (name, duration) =>
+    autocannon({ url: `${system.origin}${targets[name].path}`, headers: targets[name].headers, connections, duration });
 
-/** @param {string} url @param {string} cookie @param {number} duration in s @returns {Promise<number>} requests a second */
-async function throughput(url, cookie, duration) {
-  const headers = cookie === "" ? {} : { cookie };
-  const result = await autocannon({ url, connections, duration, headers });
-  if (result.errors > 0 || result.non2xx > 0 || result.timeouts > 0) {
-    throw new Error(`${url}: ${result.errors} errors, ${result.non2xx} answers other than 2xx`);
+  say("Warming up …");
+  for (const name of Object.keys(targets)) await run(name, warmUpSeconds);
+  const found = Object.fromEntries(Object.keys(targets).map((name) => [name, []]));
+  for (let round = 1; round <= rounds; round += 1) {
+    say(`Round ${round} of ${rounds} …`);
+    for (const name of Object.keys(targets)) found[name].push(await run(name, seconds));
   }
-  return result.requests.average;
+
+  const requestsPerSecond = mapped(found, (runs) => Math.round(median(runs.map((each) => each.requests.average))));
+  const p99Ms = mapped(found, (runs) => median(runs.map((each) => each.latency.p99)));
+  const failedRequests = Object.values(found)
+    .flat()
+    .reduce((sum, each) => sum + each.errors + each.timeouts + each.non2xx, 0);
+  const perBare = (name) => Number((requestsPerSecond[name] / requestsPerSecond.bare).toFixed(3));
+  return {
+    requestsPerSecond,
+    p99Ms,
+    failedRequests,
+    ratios: {
+      peersPerBare: perBare("peers"),
+      peersOfGroupPerBare: perBare("peersOfGroup"),
+      healthzPerBare: perBare("healthz"),
+    },
+    rssMb: residentMb(system.appPid),
+  };
 }
 
-/** @param {number} pid @returns {number} resident memory in MB, from the kernel's own account */
-function residentMb(pid) {
-  const line = /^VmRSS:\s+(\d+) kB$/m.exec(readFileSync(`/proc/${pid}/status`, "utf8"));
-  return line ? Number(line[1]) / 1024 : Number.NaN;
-}
-
-/** Pages of the built application against the bare page of the same server, turn about. */
-export async function measurePages() {
-  const system = await startPassingSystem({ logLevel: "warn", say: () => undefined });
-  try {
-    const cookie = await sessionOf(system, "maren.oake");
-    const pages = [
-      { name: "bare", path: "/bare", cookie: "" },
-      { name: "peers", path: "/peers", cookie },
-      { name: "peers in a group", path: "/peers?group=size-50-149", cookie },
-      { name: "today", path: "/today", cookie },
-    ];
-    const marker = await fetch(`${system.origin}/peers`, { headers: { cookie } }).then((answer) => answer.text());
-    if (!marker.includes("<svg")) throw new Error("The Peers page that is measured shows no strip.");
-    const rates = new Map(pages.map(({ name }) => [name, []]));
-    for (const page of pages) await throughput(system.origin + page.path, page.cookie, secondsEach);
-    for (let round = 0; round < rounds; round++) {
-      for (const { name, path, cookie: own } of pages) {
-        rates.get(name).push(await throughput(system.origin + path, own, secondsEach));
-      }
+/** Sign in by link, as a browser would. @returns {Promise<string>} the session's cookie */
+async function signIn(system, subject) {
+  const jars = new Map([system.origin, system.idpOrigin].map((origin) => [origin, new Map()]));
+  let address = new URL(`/auth/start?hint=${subject}`, system.origin);
+  for (let step = 0; step < 12; step += 1) {
+    const jar = jars.get(address.origin) ?? new Map();
+    const cookie = [...jar].map(([name, value]) => `${name}=${value}`).join("; ");
+    const response = await fetch(address, { redirect: "manual", headers: cookie === "" ? {} : { cookie } });
+    await response.arrayBuffer();
+    for (const line of response.headers.getSetCookie()) {
+      const [pair = ""] = line.split(";");
+      jar.set(pair.slice(0, pair.indexOf("=")), pair.slice(pair.indexOf("=") + 1));
     }
-    const bare = middleOf(rates.get("bare"));
-    const ratios = pages.slice(1).map(({ name }) => {
-      const rate = middleOf(rates.get(name));
-      const ratio = rate / bare;
-      const isLimited = name.startsWith("peers");
-      return {
-        name: `throughput of ${name} against the bare page`,
-        value: short(ratio),
-        unit: "ratio",
-        limit: isLimited ? `at least ${leastPeersRatio}` : null,
-        isMet: !isLimited || ratio >= leastPeersRatio,
-        detail: `${short(rate)} against ${short(bare)} requests a second`,
-      };
-    });
-    const memory = residentMb(system.appPid);
-    return [
-      ...ratios,
-      {
-        name: "memory of the server after the load",
-        value: short(memory),
-        unit: "MB",
-        limit: null,
-        isMet: true,
-        detail: "",
-      },
-    ];
-  } finally {
-    await system.stop();
+    const next = response.headers.get("location");
+    if (next === null)
+      return [...(jars.get(system.origin) ?? [])].map(([name, value]) => `${name}=${value}`).join("; ");
+    address = new URL(next, address);
   }
+  throw new Failure("Signing in for the measurement does not come to an end.");
+}
+
+/** The demo's editions are published by its worker, one after the other. */
+async function editionsOut(system, cookie) {
+  for (let attempt = 0; attempt < 240; attempt += 1) {
+    const page = await (await fetch(`${system.origin}/peers`, { headers: { cookie } })).text();
+    if (page.includes("above the band") && page.includes("2021–22, edition 1")) return;
+    await sleep(250);
+  }
+  throw new Failure("The demo's editions are not published within a minute.");
+}
+
+function residentMb(pid) {
+  const line = readFileSync(`/proc/${pid}/status`, "utf8").match(/^VmRSS:\s+(\d+) kB$/m);
+  return Math.round(Number(line?.[1] ?? 0) / 1024);
+}
+
+/** @template Value @template Result @param {Record<string, Value>} record @param {(value: Value) => Result} change */
+function mapped(record, change) {
+  return Object.fromEntries(Object.entries(record).map(([name, value]) => [name, change(value)]));
+}
+
+/** @param {number[]} values */
+export function median(values) {
+  const sorted = values.toSorted((one, other) => one - other);
+  const middle = sorted.length / 2;
+  return ((sorted[Math.ceil(middle) - 1] ?? NaN) + (sorted[Math.floor(middle)] ?? NaN)) / 2;
 }

@@ -82,7 +82,7 @@ async function mailTo(address: RegExp, subject: RegExp): Promise<Mail> {
 async function rowsFromDatabase<Row>(sql: string): Promise<Row[]> {
   const connection = await connect(system.migrator);
   try {
-    return (await connection.query(sql)) as Row[];
+    return await connection.query<Row[]>(sql);
   } finally {
     await connection.end();
   }

@@ -40,12 +40,22 @@ function comparable({ status, headers, body }: Answer) {
   return { status, headers: plain(JSON.stringify(kept)), body: plain(body) };
 }
 
-type IdCase = [path: (id: number) => string, kind: "truckId" | "uploadId", form: Record<string, string> | null];
+type IdCase = [
+  path: (id: number) => string,
+  kind: "truckId" | "uploadId" | "calibrationId",
+  form: Record<string, string> | null,
+];
 
 test.each<IdCase>([
   [(id) => `/fleet/${id}`, "truckId", null],
   [(id) => `/fleet/${id}.data`, "truckId", null],
   [(id) => `/fleet/${id}.data?_routes=routes/fleet/truck`, "truckId", null],
+  [(id) => `/fleet/${id}/edit`, "truckId", null],
+  [(id) => `/fleet/${id}/work`, "truckId", null],
+  [(id) => `/fleet/${id}/work`, "truckId", { clientRef: randomUUID(), part: "gate", doneOn: "2025-10-20" }],
+  [(id) => `/fleet/calibrations/${id}`, "calibrationId", null],
+  [(id) => `/fleet/calibrations/${id}.data`, "calibrationId", null],
+  [(id) => `/fleet/calibrations/${id}/card`, "calibrationId", null],
   [(id) => `/uploads/${id}`, "uploadId", null],
   [(id) => `/uploads/${id}.data`, "uploadId", null],
   [(id) => `/uploads/${id}/problems`, "uploadId", null],

@@ -212,10 +212,13 @@ test("clean seasons accepted together by two coordinators at once are accepted o
   await app.db.query("UPDATE season_figure SET state = 'accepted' WHERE state = 'sent'");
   const ids: number[] = [];
   for (let turn = 0; turn < 5; turn++) ids.push(await aSeasonFigure(app, await aTown(app), { state: "sent" }));
+  const unseenId = await aSeasonFigure(app, await aTown(app), { state: "sent" });
+  const seen: [string, string][] = [["season", "2024"], ...ids.map((id): [string, string] => ["figure", `${id}|1`])];
   const answers = await Promise.all(
-    [first, second].map((by) => app.ask("/network/review", { cookie: by, form: { season: "2024" } })),
+    [first, second].map((by) => app.ask("/network/review", { cookie: by, form: seen })),
   );
   expect(answers.map(({ status }) => status)).toEqual([302, 302]);
+  expect(await stateOf(unseenId)).toMatchObject({ state: "sent", version: 1 });
   for (const id of ids) {
     expect(await stateOf(id)).toMatchObject({ state: "accepted", version: 2 });
     expect(await deeds(id, "season-figure.accept")).toBe(1);

@@ -4,8 +4,8 @@ import { emptyWorksheet, type Worksheet } from "#app/domain/calibration/workshee
 import type { SyncRequest } from "#app/services/worksheets/sheet-schema.server.ts";
 import { startApp, type TestApp } from "#tests/support/app.ts";
 import { aCalibration, aMaterial, aPerson, aTown, aTruck, signIn } from "#tests/support/factories.ts";
-import { countOf, rows } from "#tests/support/rows.ts";
 import { inParallel } from "#tests/support/http.ts";
+import { countOf, rows } from "#tests/support/rows.ts";
 
 let app: TestApp;
 

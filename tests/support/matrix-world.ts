@@ -188,9 +188,16 @@ export async function matrixWorld(): Promise<MatrixWorld> {
     ":editionId": network.editionId,
     ":file": "cells.csv",
     ":figureId": network.sentFigureId,
+    ":calibrationId": own.calibrationId,
     "*": "no/such/page",
   };
+  const truck = { spreaderKind: "conveyor", control: "manual", lanesPerPass: "1", workingSpeedMph: "25" };
   const forms: Record<string, Record<string, string>> = {
+    "/fleet/trucks/new": { ...truck, unitNumber: "One more", workingSetting: "3" },
+    "/fleet/:truckId/edit": { ...truck, unitNumber: "Renamed", workingSetting: "4" },
+    "/fleet/:truckId/work": { clientRef: randomUUID(), part: "gate", doneOn: "2025-10-20" },
+    "/fleet/bands": { "salt-low": "200", "salt-high": "280" },
+    "/network/bands": { "salt-low": "220", "salt-high": "310", tolerance: "7" },
     "/fleet": { calibrationId: String(own.calibrationId) },
     "/season/:seasonStartYear": { version: "1" },
     "/workshops": {

@@ -1,3 +1,5 @@
+import { formatShortDay } from "#app/lib/format.ts";
+
 /** One calibration of a truck with a material, at the working setting and speed. */
 export type DriftPoint = {
   testedOn: string;
@@ -31,6 +33,7 @@ export function driftSentence({ points, rateUnit, band }: DriftSpec) {
   const [first, last] = [points[0], points.at(-1)];
   if (!first || !last) return "Nothing was weighed yet.";
   const range = band === null ? "" : ` The band is ${figure(band.low)} to ${figure(band.high)}.`;
-  if (points.length === 1) return `Weighed once, ${first.testedOn}: ${figure(first.rate)} ${rateUnit}.${range}`;
-  return `Weighed ${points.length} times from ${first.testedOn} to ${last.testedOn}: from ${figure(first.rate)} to ${figure(last.rate)} ${rateUnit}.${range}`;
+  if (points.length === 1)
+    return `Weighed once, ${formatShortDay(first.testedOn)}: ${figure(first.rate)} ${rateUnit}.${range}`;
+  return `Weighed ${points.length} times from ${formatShortDay(first.testedOn)} to ${formatShortDay(last.testedOn)}: from ${figure(first.rate)} to ${figure(last.rate)} ${rateUnit}.${range}`;
 }

@@ -15,7 +15,7 @@ export type FleetLine = {
 };
 
 /** A rate with the shape that says where it lies; the bare figure where there is no band. */
-export function RateWords({ rate, place }: { rate: number | null; place: FleetLine["place"] }) {
+function RateWords({ rate, place }: { rate: number | null; place: FleetLine["place"] }) {
   const words = formatWhole(rate);
   if (place === "over") return <Over isWordHidden>{words}</Over>;
   if (place === "under") return <Under isWordHidden>{words}</Under>;

@@ -1,4 +1,4 @@
-import { gallonsToLitres, lbPerLaneMileToKgPerLaneKm, lbToKg, milesToKm } from "#app/domain/units.ts";
+import { lbPerLaneMileToKgPerLaneKm, lbToKg, milesToKm } from "#app/domain/units.ts";
 
 export type UnitChoice = "us" | "si";
 export type BasisChoice = "lane" | "mile";
@@ -35,10 +35,6 @@ export function shownSpeed(speedMph: number, units: UnitChoice) {
 
 export function shownWeight(weightLb: number, units: UnitChoice) {
   return units === "us" ? weightLb : lbToKg(weightLb);
-}
-
-export function shownVolume(gallons: number, units: UnitChoice) {
-  return units === "us" ? gallons : gallonsToLitres(gallons);
 }
 
 export function rateUnitWords({ units, basis }: Pick<RateView, "units" | "basis">) {

@@ -10,7 +10,7 @@ export function CheckField({ name, label, hint, error, id, ...rest }: Props) {
   return (
     <div className="max-w-measure">
       <label htmlFor={ties.id} className="flex min-h-target cursor-pointer items-start gap-3 py-2">
-        <input {...rest} type="checkbox" {...ties} className="mt-px size-5.5 flex-none accent-spruce" />
+        <input {...rest} type="checkbox" {...ties} className="mt-px size-6 flex-none accent-spruce" />
         <span>{label}</span>
       </label>
       <FieldError id={`${ties.id}-error`} error={error} />

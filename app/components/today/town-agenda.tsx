@@ -92,9 +92,7 @@ function fleetSteps({ due, readyCount, isDirector }: Props): Step[] {
   const units = [...new Set(due.map((line) => line.unitNumber))];
   if (units.length > 0) {
     const overdue = new Set(due.filter((line) => line.isOverdue).map((line) => line.unitNumber)).size;
-    const most = sentenceStart(countWords(units.length, "truck is", "trucks are"));
-    const how = overdue === units.length ? "overdue for" : "due for";
-    const some = overdue > 0 && overdue < units.length ? `, ${countWords(overdue, "of them", "of them")} overdue` : "";
+    const late = `${sentenceStart(countWords(overdue, "is", "are"))} overdue: the season opened on 1 November. `;
     const materials = [...new Set(due.map((line) => line.materialName.toLowerCase()))];
     steps.push({
       key: "due",
@@ -103,9 +101,8 @@ function fleetSteps({ due, readyCount, isDirector }: Props): Step[] {
       to: "/fleet/due",
       button: "See what is due",
       title: `Calibrate ${units.length === 1 ? "truck" : "trucks"} ${listWords(units)} for ${listWords(materials)}`,
-      children:
-        "Each truck is weighed once before the season, and again after work on gate, hydraulics, feed or controller.",
-      sentence: `${most} ${how} calibration${some}.`,
+      children: `${overdue > 0 ? late : ""}Each truck is weighed once before the season, and again after work on gate, hydraulics, feed or controller.`,
+      sentence: `${sentenceStart(countWords(units.length, "truck is", "trucks are"))} due for calibration.`,
     });
   }
   return steps;

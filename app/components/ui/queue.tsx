@@ -47,7 +47,7 @@ function QueueRow({ item, number }: { item: QueueItem; number: number }) {
       </div>
       {!isOpen && (
         <p className="col-start-2 md:col-start-auto md:text-right">
-          <TextLink to={item.to} weight="bold" className="inline-flex min-h-target items-center md:min-h-0">
+          <TextLink to={item.to} weight="bold" className="inline-flex min-h-target items-center md:min-h-6">
             {item.action ?? "Look closer"}
             <span className="sr-only"> at {item.name}</span>
           </TextLink>

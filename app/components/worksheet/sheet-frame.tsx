@@ -8,12 +8,13 @@ type Props = {
   title: string;
   standing: StandingWords | null;
   steps: readonly StepLink[];
+  onStep?: (to: string) => void;
   children: ReactNode;
   foot?: ReactNode;
 };
 
 /** The worksheet's own frame: what is weighed, where it is kept, how far one is. The application's bar would take the room. */
-export function SheetFrame({ title, standing, steps, children, foot }: Props) {
+export function SheetFrame({ title, standing, steps, onStep, children, foot }: Props) {
   return (
     <div className="mx-auto flex min-h-dvh w-full max-w-[34rem] flex-col text-head leading-normal">
       <SkipLink />
@@ -55,6 +56,11 @@ export function SheetFrame({ title, standing, steps, children, foot }: Props) {
                 <li key={group}>
                   <a
                     href={`#${to}`}
+                    onClick={(event) => {
+                      if (!onStep || event.metaKey || event.ctrlKey) return;
+                      event.preventDefault();
+                      onStep(to);
+                    }}
                     aria-current={isCurrent ? "step" : undefined}
                     className={`flex min-h-11 items-center gap-1 no-underline ${isCurrent ? "font-bold text-asphalt" : isDone ? "text-spruce" : "text-gravel"}`}
                   >

@@ -1,3 +1,4 @@
+import { useState } from "react";
 import type { RateSheetRow } from "#app/domain/calibration/rate-sheet.ts";
 import { formatWhole } from "#app/lib/format.ts";
 import type { Editor } from "./editor.ts";
@@ -31,6 +32,7 @@ export function NotYet({ missing }: { missing: readonly { step: string; words: s
 export function StepRates({ editor, worked }: { editor: Editor; worked: WorkedOut }) {
   const { truck, band } = editor;
   const { working } = worked;
+  const [isFullOpen, setFullOpen] = useState(false);
   return (
     <>
       <Say>
@@ -58,7 +60,10 @@ export function StepRates({ editor, worked }: { editor: Editor; worked: WorkedOu
         {band ? `, ${band.lowLbPerLaneMile}–${band.highLbPerLaneMile}` : ""} &ensp;
         <Key d="M5 0 10 10H0z" look="text-rust" /> over &ensp; ± is about 95 %
       </p>
-      <details className="group mt-3 border-t-2 border-line">
+      <details
+        className="group mt-3 border-t-2 border-line"
+        onToggle={(event) => setFullOpen(event.currentTarget.open)}
+      >
         <summary className="flex min-h-12 list-none items-center justify-between gap-3 font-semibold text-spruce">
           Every speed from 5 to 45 mph
           <svg
@@ -69,14 +74,16 @@ export function StepRates({ editor, worked }: { editor: Editor; worked: WorkedOu
             <path d="M1 1l4 4 4-4" />
           </svg>
         </summary>
-        <div role="region" aria-label="Every speed from 5 to 45 mph" tabIndex={0} className="overflow-x-auto pb-2">
-          <RateTable
-            caption="Pounds per lane mile by setting and speed, 5 to 45 mph"
-            rows={worked.full}
-            workingSpeedMph={truck.workingSpeedMph}
-            isWide
-          />
-        </div>
+        {isFullOpen && (
+          <div role="region" aria-label="Every speed from 5 to 45 mph" tabIndex={0} className="overflow-x-auto pb-2">
+            <RateTable
+              caption="Pounds per lane mile by setting and speed, 5 to 45 mph"
+              rows={worked.full()}
+              workingSpeedMph={truck.workingSpeedMph}
+              isWide
+            />
+          </div>
+        )}
         <p className="text-table leading-snug text-gravel">
           {truck.lanesPerPass === 1
             ? "One lane in a pass: per mile of travel it is the same."

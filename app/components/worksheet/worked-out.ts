@@ -20,8 +20,8 @@ export type WorkedOut = {
   /** Around the working speed, for the phone's width. */
   nearSpeedsMph: number[];
   near: RateSheetRow[];
-  /** From 5 to 45 mph by fives. */
-  full: RateSheetRow[];
+  /** From 5 to 45 mph by fives; worked out when somebody asks for it. */
+  full: () => RateSheetRow[];
   sentence: RateSentencePart[];
   /** At the working setting and speed; null when that setting was not measured. */
   working: { lbPerLaneMile: number; plusMinus: number | null; place: BandPlace | null; distance: number } | null;
@@ -79,7 +79,7 @@ export function workedOut(given: Given): WorkedOut | null {
     gateOpeningIn,
     nearSpeedsMph,
     near,
-    full: rateSheet({ ...all, speedsMph: speedsFromTo(5) }),
+    full: () => rateSheet({ ...all, speedsMph: speedsFromTo(5) }),
     sentence: bandSentence(summary).parts,
     working,
     advice: adviceFor(given, { gateOpeningIn, counts, catches, isInBand: working?.place === "in" }),

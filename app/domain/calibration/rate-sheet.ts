@@ -4,8 +4,8 @@ import { type Band, type BandPlace, bandPlace, distanceFromBand } from "./band.t
 import { type DischargeReadings, type SettingDischarge, settingDischarges } from "./discharge.ts";
 
 /** The speeds of a rate sheet: those at which spreaders work. */
-export const slowestSpeedMph = 5;
-export const fastestSpeedMph = 45;
+const slowestSpeedMph = 5;
+const fastestSpeedMph = 45;
 const leastStepMph = 0.5;
 
 /** One rate; `plusMinus` is in lb per lane mile (k = 2, about 95 %), null after a single catch. */

@@ -30,7 +30,12 @@ export async function action({ context, request }: Route.ActionArgs) {
   const form = await readForm(request);
   const season = form.get("season");
   const startYear = seasonParam(typeof season === "string" ? season : "");
-  await acceptCleanFigures(networkActor(context), startYear);
+  // Each is named with the version that was on the page: what changed since is not accepted unseen.
+  const seen = form.getAll("figure").flatMap((text) => {
+    const match = typeof text === "string" ? /^([1-9]\d{0,9})\|([1-9]\d{0,9})$/.exec(text) : null;
+    return match ? [{ figureId: Number(match[1]), version: Number(match[2]) }] : [];
+  });
+  await acceptCleanFigures(networkActor(context), startYear, seen);
   return redirect(`/network/review?season=${startYear}`);
 }
 
@@ -85,6 +90,9 @@ export default function ReviewQueuePage({ loaderData: { queue } }: Route.Compone
           </p>
           <Form method="post" className="mt-4">
             <input type="hidden" name="season" value={seasonStartYear} />
+            {clean.map(({ figure }) => (
+              <input key={figure.id} type="hidden" name="figure" value={`${figure.id}|${figure.version}`} />
+            ))}
             <Button variant={doubtful.length > 0 ? "quiet" : "primary"}>
               Accept {clean.length === 1 ? "it" : `these ${clean.length} together`}
             </Button>

@@ -1,6 +1,7 @@
 import type { TownActor } from "#app/context.ts";
 import type { Band } from "#app/domain/calibration/band.ts";
 import { type CabCard, cabCard } from "#app/domain/calibration/card.ts";
+import { cardSpeeds } from "#app/domain/fleet/card-speeds.ts";
 import { env } from "#app/lib/env.server.ts";
 import { type QrDrawing, qrDrawing } from "#app/lib/qr.ts";
 import { type CalibrationDetail, getCalibration } from "./calibration.server.ts";
@@ -22,30 +23,6 @@ export type PrintedCard = {
   address: string;
   qr: QrDrawing;
 };
-
-const columnCount = 4;
-const stepMph = 5;
-
-/**
- * The speeds of a card: the working speed, two round ones below it, and round ones above until there are four.
- *
- * @param workingSpeedMph - > 0
- * @returns ascending mph, each at least 5 save for a slower working speed
- * @example cardSpeeds(25) // [15, 20, 25, 30]
- */
-export function cardSpeeds(workingSpeedMph: number): number[] {
-  const below = (Math.ceil(workingSpeedMph / stepMph) - 1) * stepMph;
-  const speeds = [below - stepMph, below].filter((speed) => speed >= stepMph);
-  speeds.push(workingSpeedMph);
-  for (
-    let speed = (Math.floor(workingSpeedMph / stepMph) + 1) * stepMph;
-    speeds.length < columnCount;
-    speed += stepMph
-  ) {
-    speeds.push(speed);
-  }
-  return speeds;
-}
 
 function plusMinusPercent({ truck, readings, band }: CalibrationDetail): number | null {
   const working = workingRateOf(truck, readings, band);

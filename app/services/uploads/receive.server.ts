@@ -17,12 +17,9 @@ function formatOf({ opening }: ReceivedFile): "csv" | "xlsx" {
 /** A name without folders and invisible characters, as it is shown and given back. */
 function plainName(fileName: string) {
   const last = fileName.split(/[/\\]/).at(-1) ?? "";
-  return (
-    last
-      .replace(/[\p{C}]/gu, "")
-      .trim()
-      .slice(0, 200) || "file"
-  );
+  const plain = last.replace(/\p{C}/gu, "").trim();
+  // By whole characters: half of one cannot be written into a header.
+  return [...plain].slice(0, 200).join("") || "file";
 }
 
 /**

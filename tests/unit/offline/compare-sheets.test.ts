@@ -20,7 +20,7 @@ test("a catch that both corrected is undecided, and both may be kept", () => {
   expect(sheetDifferences(mine, theirs, base)).toEqual([
     {
       key: "catches.k1",
-      label: "Catch",
+      label: "Catch 1",
       mine: "2 turns, 27.4 lb gross, 2.2 lb pail",
       theirs: "2 turns, 28 lb gross, 2.2 lb pail",
       mayKeepBoth: true,

@@ -103,13 +103,13 @@ export function worksheetAtNewGate(
   };
 }
 
-/** The readings of a worksheet as numbers; those of the method that is not in use are left out. */
-export type WorksheetReadings = RowReadings & { gateOpeningIn: number; gateScaleMark: string | null };
+/** As numbers, those of the method not in use left out; the gate is null for liquid alone, which passes none. */
+export type WorksheetReadings = RowReadings & { gateOpeningIn: number | null; gateScaleMark: string | null };
 
-/** A tank truck without a spreader: it has neither gate nor shaft. */
+/** Pump or nozzles alone, as on a tank truck: neither gate nor shaft has a part in it. */
 function isLiquidAlone({ counts, catches, timedCatches, verification, liquids }: Worksheet) {
   const dry = [counts, catches, timedCatches, verification];
-  return liquids.length > 0 && liquids.every(({ kind }) => kind === "direct") && dry.every((rows) => rows.length === 0);
+  return liquids.length > 0 && dry.every((rows) => rows.length === 0);
 }
 
 /** Ground-speed verification alone is a whole job: the controller sets the feed, so no setting is counted. */
@@ -245,8 +245,8 @@ export function worksheetProblems(sheet: Worksheet, truck: WorksheetTruck): Find
 /**
  * The readings of a worksheet as numbers.
  *
- * @returns null while the sheet has an error in gate, counts or catches, and for a tank truck's sheet of direct liquid
- *   alone, which has no gate (its figures are in `readableReadings`); the cautions are not looked at
+ * @returns null while the sheet has an error in gate, counts or catches; the gate is null, whatever was typed there, when
+ *   liquid alone was caught; the cautions are not looked at
  * @example worksheetReadings(sheet)?.gateOpeningIn // 1.875
  */
 export function worksheetReadings(sheet: Worksheet): WorksheetReadings | null {
@@ -254,8 +254,8 @@ export function worksheetReadings(sheet: Worksheet): WorksheetReadings | null {
   const isWrong = worksheetProblems(sheet, anyTruck).some(
     ({ field, severity }) => severity === "error" && readingSteps.some((step) => step === stepOfField(field)),
   );
-  if (gateOpeningIn === null || isWrong) return null;
-  const scaleMark = sheet.gate.scaleMark.trim();
+  if (isWrong) return null;
+  const scaleMark = gateOpeningIn === null ? "" : sheet.gate.scaleMark.trim();
   return { gateOpeningIn, gateScaleMark: scaleMark === "" ? null : scaleMark, ...readings };
 }
 

@@ -31,9 +31,9 @@ function plusMinusPercent({ truck, readings, band }: CalibrationDetail): number 
 }
 
 function printed(actor: TownActor, calibration: CalibrationDetail): PrintedCard | null {
-  const { id, truck, readings, band, state, inForceId } = calibration;
+  const { id, truck, gateOpeningIn, readings, band, state, inForceId } = calibration;
   const measured = dischargeReadings(readings);
-  if (measured === null) return null;
+  if (measured === null || gateOpeningIn === null) return null;
   const address = `${env.publicOrigin}/fleet/calibrations/${id}`;
   return {
     calibrationId: id,
@@ -41,7 +41,7 @@ function printed(actor: TownActor, calibration: CalibrationDetail): PrintedCard 
       ...measured,
       unitNumber: truck.unitNumber,
       materialName: calibration.materialName,
-      gateOpeningIn: calibration.gateOpeningIn,
+      gateOpeningIn,
       gateScaleMark: calibration.gateScaleMark,
       testedOn: calibration.testedOn,
       testedBy: calibration.testerName ?? "",

@@ -19,7 +19,7 @@ export class Calibration extends Model<InferAttributes<Calibration>, InferCreati
   declare truckId: number;
   declare materialId: number;
   declare testedOn: string; // local date, YYYY-MM-DD
-  declare gateOpeningIn: number;
+  declare gateOpeningIn: number | null; // null for liquid alone: tanks have no gate
   declare method: CreationOptional<"counts" | "timed-catch">;
   declare gateScaleMark: CreationOptional<string | null>;
   /** Whose counts were used again after a gate change. */
@@ -45,7 +45,7 @@ Calibration.init(
     truckId: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
     materialId: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
     testedOn: { type: DataTypes.DATEONLY, allowNull: false },
-    gateOpeningIn: { type: DataTypes.DOUBLE, allowNull: false },
+    gateOpeningIn: DataTypes.DOUBLE,
     method: DataTypes.STRING(16),
     gateScaleMark: DataTypes.STRING(20),
     countsFromCalibrationId: DataTypes.INTEGER.UNSIGNED,

@@ -10,6 +10,7 @@ import { StepDecision } from "#app/components/worksheet/step-decision.tsx";
 import { StepGate } from "#app/components/worksheet/step-gate.tsx";
 import { NotYet, StepRates } from "#app/components/worksheet/step-rates.tsx";
 import { StepTruck } from "#app/components/worksheet/step-truck.tsx";
+import { StepWithoutRates } from "#app/components/worksheet/step-without-rates.tsx";
 import { workedOut, type WorkedOut } from "#app/components/worksheet/worked-out.ts";
 import { Say } from "#app/components/worksheet/yard-field.tsx";
 import {
@@ -18,6 +19,8 @@ import {
   type Worksheet,
   worksheetAtNewGate,
   worksheetProblems,
+  type WorksheetReadings,
+  worksheetReadings,
   readableReadings,
   type WorksheetStep,
   worksheetSteps,
@@ -133,6 +136,7 @@ function Desk(props: DeskProps) {
     () => (needsWork ? workedOut({ sheet, truck, band: editor.band, earlier: editor.earlier }) : null),
     [needsWork, sheet, truck, editor.band, editor.earlier],
   );
+  const readings = useMemo(() => (needsWork ? worksheetReadings(sheet) : null), [needsWork, sheet]);
   const isWaiting = draft.wantsFinish && draft.isDirty;
   const isTimed = sheet.method === "timed-catch";
   const order = worksheetSteps.filter((one) => !(isTimed && one === "counts"));
@@ -160,7 +164,7 @@ function Desk(props: DeskProps) {
   }
 
   const isCounting = step === "counts" && running !== null;
-  const isAtEnd = step === "card" && (calibrationId !== null || isWaiting || worked === null);
+  const isAtEnd = step === "card" && (calibrationId !== null || isWaiting || readings === null);
   const unfinished = new Set(
     problems.flatMap(({ severity, field }) => (severity === "error" ? [stepOfField(field)] : [])),
   );
@@ -191,6 +195,7 @@ function Desk(props: DeskProps) {
           step={step}
           editor={editor}
           worked={worked}
+          readings={readings}
           isWaiting={isWaiting}
           onNewGate={(aimIn) => void weighAtNewGate(aimIn)}
         />
@@ -203,11 +208,12 @@ type StepProps = DeskProps & {
   step: WorksheetStep;
   editor: Editor;
   worked: WorkedOut | null;
+  readings: WorksheetReadings | null;
   isWaiting: boolean;
   onNewGate: (aimIn: number) => void;
 };
 
-function Step({ step, editor, worked, isWaiting, onNewGate, yard, draft, truck }: StepProps) {
+function Step({ step, editor, worked, readings, isWaiting, onNewGate, yard, draft, truck }: StepProps) {
   switch (step) {
     case "truck":
       return <StepTruck editor={editor} />;
@@ -222,7 +228,7 @@ function Step({ step, editor, worked, isWaiting, onNewGate, yard, draft, truck }
     case "catches":
       return <StepCatches editor={editor} />;
     case "card":
-      if (worked || draft.calibrationId !== null) {
+      if (readings || draft.calibrationId !== null) {
         return (
           <StepCard
             editor={editor}
@@ -235,7 +241,8 @@ function Step({ step, editor, worked, isWaiting, onNewGate, yard, draft, truck }
       }
       return <Missing editor={editor} truck={truck} />;
     default:
-      if (!worked) return <Missing editor={editor} truck={truck} />;
+      if (!readings) return <Missing editor={editor} truck={truck} />;
+      if (!worked) return <StepWithoutRates step={step} readings={readings} />;
       return step === "rates" ? (
         <StepRates editor={editor} worked={worked} />
       ) : (

@@ -32,6 +32,8 @@ async function saltCalibrationsInForce(seasonStartYear: number, transaction: Tra
     attributes: ["id", "townId", "truckId"],
     where: {
       state: "approved",
+      // Liquid alone says nothing of what the spreader lays, so it takes no dry calibration's place here.
+      gateOpeningIn: { [Op.ne]: null },
       materialId: materials.map((material) => material.id),
       testedOn: { [Op.between]: [`${seasonStartYear - 1}-07-01`, `${seasonStartYear + 1}-06-30`] },
     },

@@ -9,6 +9,8 @@ export async function up({ sql }) {
   // One statement, because the truck's foreign key must never be without an index.
   await sql(`ALTER TABLE calibration DROP INDEX IF EXISTS calibration_once,
     ADD UNIQUE KEY calibration_once (truck_id, material_id, tested_on, gate_opening_in, same_day_number)`);
+  await sql(`ALTER TABLE calibration
+    MODIFY gate_opening_in DOUBLE NULL COMMENT 'null for liquid alone: tanks have no gate'`);
   await sql(`CREATE TABLE IF NOT EXISTS calibration_timed_catch (
     id INT UNSIGNED NOT NULL AUTO_INCREMENT PRIMARY KEY,
     calibration_id INT UNSIGNED NOT NULL,
@@ -151,13 +153,12 @@ export async function down({ sql }) {
   ]) {
     await sql(`DROP TABLE IF EXISTS ${table}`);
   }
-  await sql(
-    "DELETE c FROM calibration_catch c JOIN calibration k ON k.id = c.calibration_id WHERE k.same_day_number > 1",
-  );
-  await sql(
-    "DELETE c FROM calibration_count c JOIN calibration k ON k.id = c.calibration_id WHERE k.same_day_number > 1",
-  );
-  await sql("DELETE FROM calibration WHERE same_day_number > 1");
+  for (const table of ["calibration_catch", "calibration_count"]) {
+    await sql(`DELETE c FROM ${table} c JOIN calibration k ON k.id = c.calibration_id
+      WHERE k.same_day_number > 1 OR k.gate_opening_in IS NULL`);
+  }
+  await sql("DELETE FROM calibration WHERE same_day_number > 1 OR gate_opening_in IS NULL");
+  await sql("ALTER TABLE calibration MODIFY gate_opening_in DOUBLE NOT NULL");
   await sql(`ALTER TABLE calibration DROP INDEX IF EXISTS calibration_once,
     ADD UNIQUE KEY calibration_once (truck_id, material_id, tested_on, gate_opening_in)`);
   await sql(`ALTER TABLE calibration DROP COLUMN IF EXISTS method, DROP COLUMN IF EXISTS gate_scale_mark,

@@ -141,6 +141,50 @@ test("the calibration holds exactly the figures that were typed, ready for appro
   ]);
 });
 
+test("liquid alone is finished without a gate, and its calibration shows what it lays", async () => {
+  const yard = await aYard();
+  await app.db.query("UPDATE truck SET spreader_kind = 'liquid-tanks' WHERE id = ?", [yard.truckId]);
+  const aTankSheet = () =>
+    aSheet(yard, {
+      gate: { scaleMark: "", openingText: "" },
+      counts: [],
+      catches: [],
+      liquids: [{ id: "d", kind: "direct", gallons: "20", seconds: "60", speedMph: "30", lanes: "1", dryLbPerMin: "" }],
+    });
+  const answers = await inParallel([aTankSheet(), aTankSheet()], 2, (sheet) =>
+    send(yard, aMessage(yard, sheet, { isFinish: true })),
+  );
+  for (const answer of answers) expect(answer).toMatchObject({ status: 200, body: { outcome: "finished" } });
+  expect(
+    await rows(
+      app,
+      "SELECT gate_opening_in, same_day_number FROM calibration WHERE truck_id = ? ORDER BY same_day_number",
+      [yard.truckId],
+    ),
+  ).toEqual([
+    { gate_opening_in: null, same_day_number: 1 },
+    { gate_opening_in: null, same_day_number: 2 },
+  ]);
+  const id = Number(answers[0]?.body.calibrationId);
+  await app.db.query("UPDATE calibration SET state = 'approved', approved_at = created_at WHERE id = ?", [id]);
+  // 20 gal a minute at 30 mph, a mile in two minutes: 40 gal on each lane mile.
+  const page = await app.ask(`/fleet/calibrations/${id}`, { cookie: yard.cookie });
+  expect(page.status).toBe(200);
+  expect(page.body).toContain("40.0 gal per lane mile at 30 mph, one lane in a pass");
+  expect(page.body).toContain("no gate");
+  for (const path of ["/fleet", `/fleet/${yard.truckId}`]) {
+    const list = await app.ask(path, { cookie: yard.cookie });
+    expect(list.status).toBe(200);
+    expect(list.body).toContain("40.0 gal per lane mile");
+  }
+  const card = await app.ask(`/fleet/calibrations/${id}/card`, { cookie: yard.cookie });
+  expect(card.status).toBe(200);
+  expect(card.body).toContain("There is no cab card of this calibration.");
+  expect((await app.ask("/fleet/cards", { cookie: yard.cookie })).status).toBe(200);
+  const kit = await app.ask("/fleet/worksheets/kit", { cookie: yard.cookie });
+  expect(JSON.parse(kit.body)).toMatchObject({ kit: { calibrations: [] } });
+});
+
 test("timed catches are stored in place of counts", async () => {
   const yard = await aYard();
   const timedCatches = [{ id: "t", setting: "3", seconds: "30", grossLb: "37", tareLb: "2" }];

@@ -3,19 +3,19 @@ import type { DriftSpec } from "#app/components/charts/drift-spec.ts";
 import { Heading } from "#app/components/layout/answer.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
-import { formatInches, formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
-import { WorkingRateWords } from "./rate-words.tsx";
+import { formatOneDecimal, formatShortDay } from "#app/lib/format.ts";
+import { gateInWords, gateWords } from "./fleet-words.ts";
+import { LaysWords } from "./liquid-words.tsx";
 import { rateUnitWords, type UnitChoice } from "./shown-units.ts";
 
 type Line = {
   id: number;
   testedOn: string;
-  gateOpeningIn: number;
+  gateOpeningIn: number | null;
   state: "ready" | "approved";
-  working: Parameters<typeof WorkingRateWords>[0]["working"];
   driftPercent: number | null;
   isDriftClear: boolean | null;
-};
+} & NonNullable<Parameters<typeof LaysWords>[0]["line"]>;
 
 type Props = {
   /** Oldest first. */
@@ -56,7 +56,7 @@ function sentence(lines: readonly Line[], ownId: number) {
   if (!own || !before || own.driftPercent === null) return "There is no earlier calibration to compare this one with.";
   const moved = `Against the calibration before, it lays ${signed(own.driftPercent)}.`;
   if (before.gateOpeningIn !== own.gateOpeningIn) {
-    return `${moved} The gate was moved between them, from ${formatInches(before.gateOpeningIn)} to ${formatInches(own.gateOpeningIn)} in.`;
+    return `${moved} The gate was moved between them, from ${gateInWords(before.gateOpeningIn)} to ${gateInWords(own.gateOpeningIn)}.`;
   }
   if (own.isDriftClear === null) return moved;
   return own.isDriftClear
@@ -91,8 +91,8 @@ export function CalibrationHistory({ lines, ownId, inForceId, chart, workingWord
                 ) : (
                   <TextLink to={`/fleet/calibrations/${line.id}`}>{formatShortDay(line.testedOn)}</TextLink>
                 ),
-              gate: formatInches(line.gateOpeningIn),
-              lays: <WorkingRateWords working={line.working} units={units} />,
+              gate: gateWords(line.gateOpeningIn),
+              lays: <LaysWords line={line} units={units} />,
               drift: driftWords(line),
               state: stateWords(line, inForceId),
             },

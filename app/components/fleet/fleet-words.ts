@@ -1,4 +1,5 @@
 import type { ControlKind, SpreaderKind } from "#app/domain/fleet/truck.ts";
+import { formatInches } from "#app/lib/format.ts";
 
 export const spreaderWords: Record<SpreaderKind, string> = {
   "tailgate-auger": "auger under the tailgate",
@@ -28,4 +29,14 @@ export function workingPointWords({
   workingSpeedMph: number;
 }) {
   return `setting ${workingSetting}, ${workingSpeedMph} mph`;
+}
+
+/** An opening for a column headed "in", or that there is none: liquid passes no gate. */
+export function gateWords(gateOpeningIn: number | null): string {
+  return gateOpeningIn === null ? "no gate" : formatInches(gateOpeningIn);
+}
+
+/** An opening within a sentence, with its unit. */
+export function gateInWords(gateOpeningIn: number | null): string {
+  return gateOpeningIn === null ? "no gate" : `${formatInches(gateOpeningIn)} in`;
 }

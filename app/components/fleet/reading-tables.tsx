@@ -2,9 +2,9 @@ import { Heading } from "#app/components/layout/answer.tsx";
 import { Over, Under } from "#app/components/ui/state-mark.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import { weightPerRevolution } from "#app/domain/calibration/catch-weight.ts";
-import { directGalPerLaneMile, prewetGalPerTon, timedGalPerMin } from "#app/domain/calibration/liquids.ts";
 import { verificationPoint, verifyGroundSpeed } from "#app/domain/calibration/verification.ts";
 import { formatOneDecimal, formatWhole } from "#app/lib/format.ts";
+import { exact, lanesWords, type Liquid, liquidRate } from "./liquid-words.tsx";
 
 type Readings = {
   counts: readonly { setting: number; revolutions: number; seconds: number }[];
@@ -12,10 +12,9 @@ type Readings = {
   timedCatches: readonly { setting: number; seconds: number; grossLb: number; tareLb: number }[];
 };
 
-const exact = (value: number) => value.toLocaleString("en-US", { maximumFractionDigits: 3 });
-
 /** The readings as they were taken, behind a toggle: whoever doubts a rate finds its roots here. */
 export function RawReadings({ counts, catches, timedCatches }: Readings) {
+  if (counts.length + catches.length + timedCatches.length === 0) return null;
   return (
     <details className="mt-10 border-t-2 border-line">
       <summary className="flex min-h-target list-none items-center text-l font-bold text-spruce underline decoration-1 underline-offset-4 hover:decoration-2">
@@ -155,25 +154,6 @@ export function VerificationSection({ readings, lanesPerPass, tolerancePercent }
   );
 }
 
-type Liquid = {
-  kind: "prewet" | "direct";
-  gallons: number;
-  seconds: number;
-  speedMph: number | null;
-  lanes: number | null;
-  dryLbPerMin: number | null;
-};
-
-function liquidRate(reading: Liquid) {
-  const galPerMin = timedGalPerMin(reading);
-  const { kind, dryLbPerMin, speedMph, lanes } = reading;
-  if (kind === "prewet") {
-    return dryLbPerMin === null ? "–" : `${formatOneDecimal(prewetGalPerTon({ galPerMin, dryLbPerMin }))} gal per ton`;
-  }
-  if (speedMph === null) return "–";
-  return `${formatOneDecimal(directGalPerLaneMile({ galPerMin, speedMph, lanes: lanes ?? 1 }))} gal per lane mile`;
-}
-
 /** Liquids: wetting at the spreader, or laid by themselves. */
 export function LiquidSection({ readings }: { readings: readonly Liquid[] }) {
   if (readings.length === 0) return null;
@@ -199,7 +179,7 @@ export function LiquidSection({ readings }: { readings: readonly Liquid[] }) {
             at:
               reading.kind === "prewet"
                 ? `${reading.dryLbPerMin === null ? "–" : formatWhole(reading.dryLbPerMin)} lb of dry material a minute`
-                : `${reading.speedMph === null ? "–" : exact(reading.speedMph)} mph, ${reading.lanes ?? 1} lane`,
+                : `${reading.speedMph === null ? "–" : exact(reading.speedMph)} mph, ${lanesWords(reading.lanes ?? 1)}`,
             rate: <b>{liquidRate(reading)}</b>,
           },
         }))}

@@ -3,19 +3,19 @@ import { Heading } from "#app/components/layout/answer.tsx";
 import { Button } from "#app/components/ui/button.tsx";
 import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
-import { formatInches, formatShortDay } from "#app/lib/format.ts";
+import { formatShortDay } from "#app/lib/format.ts";
 import { countWords } from "#app/lib/words.ts";
-import { WorkingRateWords } from "./rate-words.tsx";
+import { gateWords } from "./fleet-words.ts";
+import { LaysWords } from "./liquid-words.tsx";
 
 type Ready = {
   truck: { id: number; unitNumber: string };
   calibration: {
     id: number;
     materialName: string;
-    gateOpeningIn: number;
+    gateOpeningIn: number | null;
     testedOn: string;
-    working: Parameters<typeof WorkingRateWords>[0]["working"];
-  };
+  } & NonNullable<Parameters<typeof LaysWords>[0]["line"]>;
 };
 
 /** What was weighed and is not in force yet. The director can look at each, or approve them together. */
@@ -39,8 +39,8 @@ export function ReadyCalibrations({ isDirector, ready }: { isDirector: boolean; 
           cells: {
             truck: <TextLink to={`/fleet/${truck.id}`}>{truck.unitNumber}</TextLink>,
             material: calibration.materialName,
-            gate: formatInches(calibration.gateOpeningIn),
-            lays: <WorkingRateWords working={calibration.working} />,
+            gate: gateWords(calibration.gateOpeningIn),
+            lays: <LaysWords line={calibration} />,
             weighed: formatShortDay(calibration.testedOn),
             look: (
               <TextLink to={`/fleet/calibrations/${calibration.id}`}>

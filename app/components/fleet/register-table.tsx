@@ -2,10 +2,10 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { Timetable } from "#app/components/ui/timetable.tsx";
 import type { DueReason } from "#app/domain/calibration/due.ts";
 import type { ControlKind, SpreaderKind } from "#app/domain/fleet/truck.ts";
-import { formatInches, formatShortDay } from "#app/lib/format.ts";
+import { formatShortDay } from "#app/lib/format.ts";
 import { DueMark } from "./due-mark.tsx";
-import { controlWords, spreaderWords, workingPointWords } from "./fleet-words.ts";
-import { WorkingRateWords } from "./rate-words.tsx";
+import { controlWords, gateWords, spreaderWords, workingPointWords } from "./fleet-words.ts";
+import { LaysWords, type Liquid } from "./liquid-words.tsx";
 import { mainLine, urgentLine } from "./register-view.ts";
 
 type Working = {
@@ -17,7 +17,13 @@ type Line = {
   materialName: string;
   materialKind: string;
   due: DueReason;
-  inForce: { id: number; testedOn: string; gateOpeningIn: number; working: Working } | null;
+  inForce: {
+    id: number;
+    testedOn: string;
+    gateOpeningIn: number | null;
+    working: Working;
+    liquids: readonly Liquid[];
+  } | null;
 };
 type Truck = {
   id: number;
@@ -69,10 +75,10 @@ function rowCells(truck: Truck) {
     ),
     at: <span className="whitespace-nowrap">{workingPointWords(truck)}</span>,
     material: line ? `${line.materialName}${others > 0 ? ` and ${others} more` : ""}` : "–",
-    gate: inForce ? <span className="whitespace-nowrap">{formatInches(inForce.gateOpeningIn)}</span> : "–",
+    gate: inForce ? <span className="whitespace-nowrap">{gateWords(inForce.gateOpeningIn)}</span> : "–",
     lays: inForce ? (
       <TextLink to={`/fleet/calibrations/${inForce.id}`} className="no-underline hover:underline">
-        <WorkingRateWords working={inForce.working} />
+        <LaysWords line={inForce} />
       </TextLink>
     ) : (
       "–"

@@ -190,6 +190,7 @@ function Liquids({ editor }: { editor: Editor }) {
     });
   return (
     <>
+      <Problem editor={editor} field="liquids" />
       <p className="leading-snug text-gravel">
         Run pump or nozzles into a container for a stretch of time, and measure the gallons.
       </p>

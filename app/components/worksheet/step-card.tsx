@@ -23,7 +23,9 @@ export function StepCard({ editor, worked, calibrationId, isWaiting, serverProbl
           ? "The calibration has arrived. It waits for the director’s approval."
           : isWaiting
             ? "Finished on this phone. It is sent as soon as there is signal."
-            : "This is what the cab card will say. Finish the sheet to make a calibration of it."}
+            : worked
+              ? "This is what the cab card will say. Finish the sheet to make a calibration of it."
+              : "Without a feed setting there is no cab card. Finish the sheet to make a calibration of it."}
       </Say>
       {serverProblems.length > 0 && (
         <div role="alert" className="mt-3 border-t-4 border-rust pt-2">
@@ -37,14 +39,16 @@ export function StepCard({ editor, worked, calibrationId, isWaiting, serverProbl
       )}
       {calibrationId !== null && (
         <p className="mt-3 grid gap-1">
-          <TextLink
-            to={`/fleet/calibrations/${calibrationId}/card`}
-            isDocument
-            weight="bold"
-            className="inline-flex min-h-12 items-center"
-          >
-            Cab card
-          </TextLink>
+          {worked && (
+            <TextLink
+              to={`/fleet/calibrations/${calibrationId}/card`}
+              isDocument
+              weight="bold"
+              className="inline-flex min-h-12 items-center"
+            >
+              Cab card
+            </TextLink>
+          )}
           <TextLink
             to={`/fleet/calibrations/${calibrationId}`}
             isDocument
@@ -114,7 +118,7 @@ export function StepCard({ editor, worked, calibrationId, isWaiting, serverProbl
           </p>
         </section>
       )}
-      {calibrationId === null && (
+      {calibrationId === null && worked && (
         <p className="mt-3 text-table leading-snug text-gravel">The printed card comes once the sheet has arrived.</p>
       )}
     </>

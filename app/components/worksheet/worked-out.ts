@@ -9,7 +9,7 @@ import {
   type RateSentencePart,
   speedsFromTo,
 } from "#app/domain/calibration/rate-sheet.ts";
-import { worksheetReadings } from "#app/domain/calibration/worksheet.ts";
+import { type WorksheetReadings, worksheetReadings } from "#app/domain/calibration/worksheet.ts";
 import { seasonStartYearOf } from "#app/domain/dates.ts";
 import type { Editor } from "./editor.ts";
 
@@ -58,6 +58,7 @@ export function workedOut(given: Given): WorkedOut | null {
   const readings = worksheetReadings(sheet);
   if (!readings) return null;
   const { counts, catches, timedCatches, gateOpeningIn } = readings;
+  if (gateOpeningIn === null) return null;
   if (timedCatches.length === 0 && (counts.length === 0 || catches.length === 0)) return null;
   const measured = sheet.method === "counts" ? { counts, catches } : { timedCatches };
   const all = { ...measured, lanesPerPass: truck.lanesPerPass, band };
@@ -86,7 +87,7 @@ export function workedOut(given: Given): WorkedOut | null {
   };
 }
 
-type Weighed = Pick<NonNullable<ReturnType<typeof worksheetReadings>>, "gateOpeningIn" | "counts" | "catches">;
+type Weighed = Pick<WorksheetReadings, "counts" | "catches"> & { gateOpeningIn: number };
 
 function adviceFor(given: Given, weighed: Weighed & { isInBand: boolean }): WorkedOut["advice"] {
   const { truck, band } = given;

@@ -1,3 +1,4 @@
+import type { SpreaderKind } from "#app/domain/fleet/truck.ts";
 import { isLocalDate, type LocalDate } from "#app/domain/dates.ts";
 import type { Finding } from "#app/domain/finding.ts";
 import { catchVariationPercent } from "./catch-weight.ts";
@@ -48,6 +49,8 @@ export type WorksheetTruck = {
   workingSetting: number;
   lanesPerPass: number;
   workingSpeedMph: number;
+  /** Of a tank truck nothing dry is asked. */
+  spreaderKind?: SpreaderKind;
 };
 
 type WorksheetHead = { clientRef: string; truckId: number; materialId: number; testedOn: LocalDate };
@@ -103,13 +106,14 @@ export function worksheetAtNewGate(
   };
 }
 
-/** The readings of a worksheet as numbers; those of the method that is not in use are left out. */
-export type WorksheetReadings = RowReadings & { gateOpeningIn: number; gateScaleMark: string | null };
+/** As numbers, those of the method not in use left out; the gate is null for liquid alone, which passes none. */
+export type WorksheetReadings = RowReadings & { gateOpeningIn: number | null; gateScaleMark: string | null };
 
-/** A tank truck without a spreader: it has neither gate nor shaft. */
-function isLiquidAlone({ counts, catches, timedCatches, verification, liquids }: Worksheet) {
+/** Pump or nozzles alone, as on a tank truck: neither gate nor shaft has a part in it. */
+function isLiquidAlone({ counts, catches, timedCatches, verification, liquids }: Worksheet, truck: WorksheetTruck) {
   const dry = [counts, catches, timedCatches, verification];
-  return liquids.length > 0 && liquids.every(({ kind }) => kind === "direct") && dry.every((rows) => rows.length === 0);
+  const isAboutLiquid = liquids.length > 0 || truck.spreaderKind === "liquid-tanks";
+  return isAboutLiquid && dry.every((rows) => rows.length === 0);
 }
 
 /** Ground-speed verification alone is a whole job: the controller sets the feed, so no setting is counted. */
@@ -124,13 +128,13 @@ function isVerificationAlone({ counts, catches, timedCatches, verification }: Wo
  * @example readableReadings(sheet).catches.length // 2 while the third is being typed
  */
 export function readableReadings(sheet: Worksheet): RowReadings {
-  return readSheet(sheet).readings;
+  return readSheet(sheet, anyTruck).readings;
 }
 
-function readSheet(sheet: Worksheet) {
+function readSheet(sheet: Worksheet, truck: WorksheetTruck) {
   const findings: Finding[] = [];
   const isCounted = sheet.method === "counts";
-  const gateOpeningIn = isLiquidAlone(sheet) ? null : readGate(sheet.gate.openingText, findings);
+  const gateOpeningIn = isLiquidAlone(sheet, truck) ? null : readGate(sheet.gate.openingText, findings);
   const readings: RowReadings = {
     counts: isCounted ? readRows(sheet.counts, readCount, findings) : [],
     catches: isCounted ? readRows(sheet.catches, readCatch, findings) : [],
@@ -154,7 +158,7 @@ function headFindings(sheet: Worksheet, truck: WorksheetTruck): Finding[] {
   }
   const message = "Read the cautions and tick them before anything turns.";
   const countsHere = sheet.method === "counts" && sheet.countsFromCalibrationId === null;
-  const isTurning = countsHere && !isLiquidAlone(sheet) && !isVerificationAlone(sheet);
+  const isTurning = countsHere && !isLiquidAlone(sheet, truck) && !isVerificationAlone(sheet);
   if (isTurning && !sheet.cautions.counting) findings.push(error("not-ticked", "cautions.counting", message));
   if (!sheet.cautions.catching) findings.push(error("not-ticked", "cautions.catching", message));
   return findings;
@@ -228,12 +232,15 @@ function timedCatchFindings(sheet: Worksheet, { timedCatches }: RowReadings, tru
  * @example worksheetProblems(sheet, truck)[0]?.message // "Setting 3 is counted twice. Keep one of the counts."
  */
 export function worksheetProblems(sheet: Worksheet, truck: WorksheetTruck): Finding[] {
-  const { gateOpeningIn, readings, findings } = readSheet(sheet);
+  const { gateOpeningIn, readings, findings } = readSheet(sheet, truck);
   const dry =
     sheet.method === "counts"
       ? [...countFindings(sheet, readings, truck), ...catchFindings(sheet, readings)]
       : timedCatchFindings(sheet, readings, truck);
-  const isWithoutSettings = isLiquidAlone(sheet) || isVerificationAlone(sheet);
+  const isWithoutSettings = isLiquidAlone(sheet, truck) || isVerificationAlone(sheet);
+  if (isLiquidAlone(sheet, truck) && sheet.liquids.length === 0) {
+    findings.push(error("no-catch", "liquids", "Catch the liquid at least once."));
+  }
   return [
     ...headFindings(sheet, truck),
     ...findings,
@@ -245,21 +252,21 @@ export function worksheetProblems(sheet: Worksheet, truck: WorksheetTruck): Find
 /**
  * The readings of a worksheet as numbers.
  *
- * @returns null while the sheet has an error in gate, counts or catches, and for a tank truck's sheet of direct liquid
- *   alone, which has no gate (its figures are in `readableReadings`); the cautions are not looked at
+ * @returns null while the sheet has an error in gate, counts or catches; the gate is null, whatever was typed there, when
+ *   liquid alone was caught; the cautions are not looked at
  * @example worksheetReadings(sheet)?.gateOpeningIn // 1.875
  */
 export function worksheetReadings(sheet: Worksheet): WorksheetReadings | null {
-  const { gateOpeningIn, readings } = readSheet(sheet);
+  const { gateOpeningIn, readings } = readSheet(sheet, anyTruck);
   const isWrong = worksheetProblems(sheet, anyTruck).some(
     ({ field, severity }) => severity === "error" && readingSteps.some((step) => step === stepOfField(field)),
   );
-  if (gateOpeningIn === null || isWrong) return null;
-  const scaleMark = sheet.gate.scaleMark.trim();
+  if (isWrong) return null;
+  const scaleMark = gateOpeningIn === null ? "" : sheet.gate.scaleMark.trim();
   return { gateOpeningIn, gateScaleMark: scaleMark === "" ? null : scaleMark, ...readings };
 }
 
-/** Errors do not depend on the truck, only checks do. */
+/** A sheet with readings has the same errors on every truck: only checks, and what an empty sheet lacks, differ. */
 const anyTruck: WorksheetTruck = { gateMaxIn: null, workingSetting: 1, lanesPerPass: 1, workingSpeedMph: 1 };
 
 export const worksheetSteps = ["truck", "cautions", "gate", "counts", "catches", "rates", "decision", "card"] as const;

@@ -7,7 +7,8 @@ import { CalibrationHistory } from "#app/components/fleet/calibration-history.ts
 import { driftSpec, fanSpec } from "#app/components/fleet/calibration-specs.ts";
 import { BeforeAfter, Decision, SavingsWords } from "#app/components/fleet/decision.tsx";
 import { FleetPages } from "#app/components/fleet/fleet-pages.tsx";
-import { workingPointWords } from "#app/components/fleet/fleet-words.ts";
+import { gateInWords, workingPointWords } from "#app/components/fleet/fleet-words.ts";
+import { liquidRateAt } from "#app/components/fleet/liquid-words.tsx";
 import { PlaceKey } from "#app/components/fleet/rate-words.tsx";
 import { RateTable } from "#app/components/fleet/rate-table.tsx";
 import { LiquidSection, RawReadings, VerificationSection } from "#app/components/fleet/reading-tables.tsx";
@@ -22,7 +23,7 @@ import { TextLink } from "#app/components/ui/text-link.tsx";
 import { townActor } from "#app/context.ts";
 import { distanceFromBand } from "#app/domain/calibration/band.ts";
 import { bandSentence, type BandSummary } from "#app/domain/calibration/rate-sheet.ts";
-import { formatInches, formatShortDay, formatWhole } from "#app/lib/format.ts";
+import { formatShortDay, formatWhole } from "#app/lib/format.ts";
 import { idParam } from "#app/lib/params.ts";
 import { countWords } from "#app/lib/words.ts";
 import { approveCalibration } from "#app/services/fleet/approve.server.ts";
@@ -77,7 +78,9 @@ function basisWords(calibration: CalibrationDetail) {
     ...(liquids.length > 0 ? [countWords(liquids.length, "catch of liquid", "catches of liquid")] : []),
   ];
   const lanes = truck.lanesPerPass === 1 ? "one lane in a pass" : `${truck.lanesPerPass} lanes in a pass`;
-  return `Weighed ${formatShortDay(testedOn)}${by} at a gate of ${formatInches(gateOpeningIn)} in${mark}: ${what.join(", ")}; ${lanes}.`;
+  if (gateOpeningIn === null) return `Caught ${formatShortDay(testedOn)}${by}, no gate: ${what.join(", ")}.`;
+  const gate = `a gate of ${gateInWords(gateOpeningIn)}${mark}`;
+  return `Weighed ${formatShortDay(testedOn)}${by} at ${gate}: ${what.join(", ")}; ${lanes}.`;
 }
 
 function stateWords({ state, id, inForceId, approvedOn, approverName, history }: CalibrationDetail) {
@@ -87,6 +90,12 @@ function stateWords({ state, id, inForceId, approvedOn, approverName, history }:
   if (id === inForceId) return `${approved}: it is in force for this truck and material.`;
   const newer = history.find((line) => line.id === inForceId);
   return `${approved}. It is history: the one in force was weighed ${newer ? formatShortDay(newer.testedOn) : "later"}.`;
+}
+
+/** Without a dry rate: what the liquid gives, when it was caught by itself. */
+function answerWithoutRates({ gateOpeningIn, liquids, materialName }: CalibrationDetail) {
+  if (gateOpeningIn !== null || liquids.length === 0) return "No setting was measured.";
+  return `Liquid alone, ${materialName.toLowerCase()}: ${liquids.map(liquidRateAt).join("; ")}.`;
 }
 
 export default function Calibration({ loaderData, actionData }: Route.ComponentProps) {
@@ -107,7 +116,7 @@ export default function Calibration({ loaderData, actionData }: Route.ComponentP
             <OwnSetting truck={truck} summary={rates.summary} units={view.units} />
           </>
         ) : (
-          "No setting was measured."
+          answerWithoutRates(calibration)
         )}
       </Answer>
       <Method>
@@ -147,15 +156,17 @@ export default function Calibration({ loaderData, actionData }: Route.ComponentP
               <RateFan spec={fan.spec} svg={fan.svg} title={`Rate against speed, truck ${truck.unitNumber}`} />
             </>
           )}
-          <Decision
-            decision={calibration.decision}
-            gateOpeningIn={calibration.gateOpeningIn}
-            working={own?.working ?? null}
-            truck={truck}
-            eventCount={calibration.eventCount}
-            inBandSettings={rates.summary?.inBandSettings ?? []}
-            units={view.units}
-          />
+          {calibration.gateOpeningIn !== null && (
+            <Decision
+              decision={calibration.decision}
+              gateOpeningIn={calibration.gateOpeningIn}
+              working={own?.working ?? null}
+              truck={truck}
+              eventCount={calibration.eventCount}
+              inBandSettings={rates.summary?.inBandSettings ?? []}
+              units={view.units}
+            />
+          )}
         </>
       )}
       {changed && own && (
@@ -164,10 +175,10 @@ export default function Calibration({ loaderData, actionData }: Route.ComponentP
           <BeforeAfter
             caption="The earlier opening and this one"
             before={{
-              name: `before, ${formatInches(changed.before.gateOpeningIn)} in`,
+              name: `before, ${gateInWords(changed.before.gateOpeningIn)}`,
               working: changed.before.working,
             }}
-            after={{ name: `now, ${formatInches(calibration.gateOpeningIn)} in`, working: own.working }}
+            after={{ name: `now, ${gateInWords(calibration.gateOpeningIn)}`, working: own.working }}
             savings={changed.savings}
             units={view.units}
           />
@@ -218,7 +229,7 @@ function OwnSetting({
 
 /** The one thing to do next: approve it, weigh at the new gate, or print the card. */
 function NextStep({ calibration, isDirector }: Pick<Route.ComponentProps["loaderData"], "calibration" | "isDirector">) {
-  const { id, truck, materialId, decision, state } = calibration;
+  const { id, truck, materialId, gateOpeningIn, decision, state } = calibration;
   const isSending = useNavigation().formMethod === "POST";
   const newGate = `/fleet/worksheets/new?${new URLSearchParams({ truck: String(truck.id), material: String(materialId), countsFrom: String(id) }).toString()}`;
   const card = `/fleet/calibrations/${id}/card`;
@@ -239,7 +250,9 @@ function NextStep({ calibration, isDirector }: Pick<Route.ComponentProps["loader
         ) : (
           <ButtonLink to={newGate}>Weigh one revolution at the new gate</ButtonLink>
         ))}
-      {!mayApprove && !isMove && state === "approved" ? (
+      {gateOpeningIn === null ? (
+        <p>Liquid alone has no cab card: its rate is on this page.</p>
+      ) : !mayApprove && !isMove && state === "approved" ? (
         <ButtonLink to={card}>Open the cab card</ButtonLink>
       ) : (
         <TextLink to={card}>Cab card</TextLink>

@@ -65,7 +65,7 @@ function Left({ leftOut }: { leftOut: readonly LeftOut[] }) {
           cells: {
             truck: <TextLink to={`/fleet/${truckId}`}>{unitNumber}</TextLink>,
             material: materialName,
-            why: <DueMark due={line.due} />,
+            why: line.due.state === "in-date" ? "no feed setting measured, so no card" : <DueMark due={line.due} />,
           },
         }))}
       />

@@ -1,7 +1,8 @@
 import { DueMark } from "#app/components/fleet/due-mark.tsx";
 import { FleetPages } from "#app/components/fleet/fleet-pages.tsx";
-import { controlWords, spreaderWords, workingPointWords } from "#app/components/fleet/fleet-words.ts";
-import { PlaceKey, WorkingRateWords } from "#app/components/fleet/rate-words.tsx";
+import { controlWords, gateWords, spreaderWords, workingPointWords } from "#app/components/fleet/fleet-words.ts";
+import { LaysWords, liquidRateAt } from "#app/components/fleet/liquid-words.tsx";
+import { PlaceKey } from "#app/components/fleet/rate-words.tsx";
 import { mainLine } from "#app/components/fleet/register-view.ts";
 import { WorkTable } from "#app/components/fleet/work-table.tsx";
 import { Answer, Heading, Method } from "#app/components/layout/answer.tsx";
@@ -32,6 +33,9 @@ function Sentence({ truck }: { truck: TruckDetail }) {
   const name = `Truck ${truck.unitNumber}`;
   const working = line?.inForce?.working ?? null;
   if (!line?.inForce) return `${name} has never been weighed${line ? ` with ${line.materialName.toLowerCase()}` : ""}.`;
+  if (working === null && line.inForce.liquids.length > 0) {
+    return `${name} lays ${line.materialName.toLowerCase()}: ${line.inForce.liquids.map(liquidRateAt).join("; ")}.`;
+  }
   if (working === null) return `${name} was not measured at its working setting, ${truck.workingSetting}.`;
   const rate = formatWhole(working.lbPerLaneMile);
   const head = `${name} lays ${rate} lb of ${line.materialName.toLowerCase()} per lane mile at ${workingPointWords(truck)}`;
@@ -122,18 +126,22 @@ function materialCells(truck: TruckDetail, line: MaterialLine) {
   return {
     material: line.materialName,
     state: <DueMark due={line.due} />,
-    lays: <WorkingRateWords working={inForce?.working ?? null} />,
-    gate: inForce ? formatInches(inForce.gateOpeningIn) : "–",
+    lays: <LaysWords line={inForce} />,
+    gate: inForce ? gateWords(inForce.gateOpeningIn) : "–",
     weighed: inForce ? formatShortDay(inForce.testedOn) : "–",
     next: inForce ? (
       <>
         <TextLink to={`/fleet/calibrations/${inForce.id}`}>
           Rates<span className="sr-only"> with {line.materialName}</span>
         </TextLink>
-        ,{" "}
-        <TextLink to={`/fleet/calibrations/${inForce.id}/card`}>
-          cab card<span className="sr-only"> for {line.materialName}</span>
-        </TextLink>
+        {inForce.gateOpeningIn !== null && (
+          <>
+            ,{" "}
+            <TextLink to={`/fleet/calibrations/${inForce.id}/card`}>
+              cab card<span className="sr-only"> for {line.materialName}</span>
+            </TextLink>
+          </>
+        )}
       </>
     ) : (
       <TextLink to={weigh}>
@@ -200,8 +208,8 @@ function Calibrations({ truck }: { truck: TruckDetail }) {
         cells: {
           day: <TextLink to={`/fleet/calibrations/${calibration.id}`}>{formatShortDay(calibration.testedOn)}</TextLink>,
           material: calibration.materialName,
-          gate: formatInches(calibration.gateOpeningIn),
-          lays: <WorkingRateWords working={calibration.working} />,
+          gate: gateWords(calibration.gateOpeningIn),
+          lays: <LaysWords line={calibration} />,
           state: stateWords(calibration.id, calibration.state),
         },
       }))}

@@ -26,7 +26,8 @@ export type CalibrationDetail = {
   materialKind: MaterialKind;
   band: BandInForce;
   testedOn: string;
-  gateOpeningIn: number;
+  /** Null for liquid alone. */
+  gateOpeningIn: number | null;
   gateScaleMark: string | null;
   note: string;
   state: "ready" | "approved";
@@ -77,7 +78,7 @@ export async function getCalibration(actor: TownActor, calibrationId: number): P
   const [history, verifications, liquids, tolerance, names, eventCount] = await Promise.all([
     historyOf(actor, truck, materialId, band),
     verificationsOf(calibrationId),
-    liquidsOf(calibrationId),
+    liquidsOf([calibrationId]),
     tolerancePercent(),
     namesOf([calibration.createdById, calibration.approvedById]),
     lastEventCount(actor),
@@ -109,7 +110,7 @@ export async function getCalibration(actor: TownActor, calibrationId: number): P
     approvedOn: calibration.approvedAt?.toISOString().slice(0, 10) ?? null,
     readings,
     verifications,
-    liquids,
+    liquids: liquids.get(calibrationId) ?? [],
     tolerancePercent: tolerance,
     history: history.lines,
     inForceId: history.lines.findLast(({ state }) => state === "approved")?.id ?? null,

@@ -31,9 +31,9 @@ function plusMinusPercent({ truck, readings, band }: CalibrationDetail): number 
 }
 
 function printed(actor: TownActor, calibration: CalibrationDetail): PrintedCard | null {
-  const { id, truck, readings, band, state, inForceId } = calibration;
+  const { id, truck, gateOpeningIn, readings, band, state, inForceId } = calibration;
   const measured = dischargeReadings(readings);
-  if (measured === null) return null;
+  if (measured === null || gateOpeningIn === null) return null;
   const address = `${env.publicOrigin}/fleet/calibrations/${id}`;
   return {
     calibrationId: id,
@@ -41,7 +41,7 @@ function printed(actor: TownActor, calibration: CalibrationDetail): PrintedCard 
       ...measured,
       unitNumber: truck.unitNumber,
       materialName: calibration.materialName,
-      gateOpeningIn: calibration.gateOpeningIn,
+      gateOpeningIn,
       gateScaleMark: calibration.gateScaleMark,
       testedOn: calibration.testedOn,
       testedBy: calibration.testerName ?? "",
@@ -71,7 +71,7 @@ export async function getCard(actor: TownActor, calibrationId: number): Promise<
   return printed(actor, await getCalibration(actor, calibrationId));
 }
 
-/** A truck and material without a card in the batch, and why. */
+/** A truck and material without a card in the batch: it is due, or in date without a feed setting measured. */
 export type LeftOut = { truckId: number; unitNumber: string; materialName: string; line: MaterialLine };
 
 function pairs(trucks: readonly TruckLine[]) {
@@ -83,7 +83,8 @@ function pairs(trucks: readonly TruckLine[]) {
 /** The cards of everything in force and in date, by unit number; what is due gets none, and is named instead. */
 export async function listCards(actor: TownActor): Promise<{ cards: PrintedCard[]; leftOut: LeftOut[] }> {
   const all = pairs(await listFleet(actor));
-  const ids = all.flatMap(({ line }) => (line.inForce && line.due.state === "in-date" ? [line.inForce.id] : []));
+  const inDate = all.filter(({ line }) => line.due.state === "in-date");
+  const ids = inDate.flatMap(({ line }) => (line.inForce ? [line.inForce.id] : []));
   const cards: PrintedCard[] = [];
   // One after the other: a large fleet must not take every connection of the pool.
   for (const id of ids) {
@@ -91,7 +92,7 @@ export async function listCards(actor: TownActor): Promise<{ cards: PrintedCard[
     if (card) cards.push(card);
   }
   const leftOut = all
-    .filter(({ line }) => line.due.state !== "in-date")
+    .filter(({ line }) => !cards.some(({ calibrationId }) => calibrationId === line.inForce?.id))
     .map(({ truck, line }) => ({
       truckId: truck.id,
       unitNumber: truck.unitNumber,

@@ -28,21 +28,28 @@ export type Decision =
 
 type Input = {
   truck: Pick<TruckFacts, "lanesPerPass" | "workingSpeedMph" | "workingSetting" | "gateMaxIn">;
-  gateOpeningIn: number;
+  /** Null for liquid alone. */
+  gateOpeningIn: number | null;
   readings: Readings;
   working: WorkingRate | null;
   band: Band | null;
   /** The same truck and material at other openings in the same season: wear between seasons would bend the line. */
-  others: readonly { gateOpeningIn: number; readings: Readings }[];
+  others: readonly { gateOpeningIn: number | null; readings: Readings }[];
   eventCount: number | null;
   priceCentsPerTon: number | null;
 };
 
-function adviceFor({ truck, gateOpeningIn, readings, others }: Input, target: number): GateAdvice | GateRefusal {
+function adviceFor(
+  { truck, readings, others }: Input,
+  gateOpeningIn: number,
+  target: number,
+): GateAdvice | GateRefusal {
   const own: WeighedOpening = { gateOpeningIn, lbPerRev: lbPerRevolution(readings.catches) };
-  const weighed = others
-    .filter((other) => other.readings.catches.length > 0)
-    .map((other) => ({ gateOpeningIn: other.gateOpeningIn, lbPerRev: lbPerRevolution(other.readings.catches) }));
+  const weighed = others.flatMap((other): WeighedOpening[] =>
+    other.gateOpeningIn === null || other.readings.catches.length === 0
+      ? []
+      : [{ gateOpeningIn: other.gateOpeningIn, lbPerRev: lbPerRevolution(other.readings.catches) }],
+  );
   return gateAdvice({ weighed: [own, ...weighed], targetLbPerRev: target, gateMaxIn: truck.gateMaxIn });
 }
 
@@ -53,14 +60,16 @@ function adviceFor({ truck, gateOpeningIn, readings, others }: Input, target: nu
  * @returns leave it, a new opening, or why there is no advice; savings on one lane mile, its season with one pass an event
  */
 export function decide(input: Input): Decision {
-  const { truck, readings, working, band, eventCount, priceCentsPerTon } = input;
+  const { truck, gateOpeningIn, readings, working, band, eventCount, priceCentsPerTon } = input;
   if (band === null) return { kind: "none", reason: "no-band" };
   if (readings.timedCatches.length > 0) return { kind: "none", reason: "timed" };
-  if (working === null || readings.catches.length === 0) return { kind: "none", reason: "not-counted" };
+  if (gateOpeningIn === null || working === null || readings.catches.length === 0) {
+    return { kind: "none", reason: "not-counted" };
+  }
   if (working.place === "in") return { kind: "leave" };
   const target = targetLbPerRev({ ...truck, counts: readings.counts, band });
   if (target === null) return { kind: "none", reason: "not-counted" };
-  const advice = adviceFor(input, target);
+  const advice = adviceFor(input, gateOpeningIn, target);
   if (advice.method === "refused") return { kind: "none", reason: advice.reason };
   // At the advised opening it lays the band's middle; a rule can be set to a sixteenth only, which moves it in proportion.
   const middle = (band.lowLbPerLaneMile + band.highLbPerLaneMile) / 2;

@@ -4,14 +4,17 @@ import { Calibration } from "#app/models/calibration.server.ts";
 import type { Truck } from "#app/models/truck.server.ts";
 import type { BandInForce } from "../bands.server.ts";
 import { type WorkingRate, workingRateOf } from "./read.server.ts";
-import { type Readings, readingsOf } from "./readings.server.ts";
+import { type LiquidReading, liquidsOf, type Readings, readingsOf } from "./readings.server.ts";
 
 export type HistoryLine = {
   id: number;
   testedOn: string;
-  gateOpeningIn: number;
+  /** Null for liquid alone. */
+  gateOpeningIn: number | null;
   state: "ready" | "approved";
   working: WorkingRate | null;
+  /** Of liquid alone; empty beside a dry rate. */
+  liquids: LiquidReading[];
   /** Against the one before, at the working setting and speed; null for the first, or when one was not measured there. */
   driftPercent: number | null;
   /** Whether the two differ by more than they can be wrong; null when that is not known. */
@@ -59,14 +62,26 @@ export async function historyOf(
     ],
     limit: 200,
   });
-  const readings = await readingsOf(rows.map(({ id }) => id));
+  const withoutGate = rows.filter(({ gateOpeningIn }) => gateOpeningIn === null);
+  const [readings, liquids] = await Promise.all([
+    readingsOf(rows.map(({ id }) => id)),
+    liquidsOf(withoutGate.map(({ id }) => id)),
+  ]);
   const lines: HistoryLine[] = [];
   for (const { id, testedOn, gateOpeningIn, state } of rows.reverse()) {
     const own = readings.get(id);
     const working = own ? workingRateOf(truck, own, band) : null;
     // What was never approved was never in force, so nothing is measured against it but its own line.
     const before = lines.findLast((line) => line.state === "approved");
-    lines.push({ id, testedOn, gateOpeningIn, state, working, ...drift(before?.working, working) });
+    lines.push({
+      id,
+      testedOn,
+      gateOpeningIn,
+      state,
+      working,
+      liquids: liquids.get(id) ?? [],
+      ...drift(before?.working, working),
+    });
   }
   return { lines, readings };
 }

@@ -12,7 +12,7 @@ import { Truck } from "#app/models/truck.server.ts";
 import { TruckMaterial } from "#app/models/truck-material.server.ts";
 import { TruckWork, type WorkPart } from "#app/models/truck-work.server.ts";
 import { type BandInForce, bandsOfTown, type TownBands } from "../bands.server.ts";
-import { dischargeReadings, type Readings, readingsOf } from "./readings.server.ts";
+import { dischargeReadings, type LiquidReading, liquidsOf, type Readings, readingsOf } from "./readings.server.ts";
 
 export type WorkingRate = {
   lbPerLaneMile: number;
@@ -27,10 +27,13 @@ export type CalibrationLine = {
   materialId: number;
   materialName: string;
   testedOn: string;
-  gateOpeningIn: number;
+  /** Null for liquid alone. */
+  gateOpeningIn: number | null;
   state: "ready" | "approved";
   /** At the truck's working setting and speed; null when that setting was not measured. */
   working: WorkingRate | null;
+  /** Of liquid alone; a dry calibration's are on its own page. */
+  liquids: LiquidReading[];
 };
 
 export type Due = ReturnType<typeof dueReason>;
@@ -85,6 +88,8 @@ type Gathered = {
   /** Newest first. */
   calibrations: Calibration[];
   readings: Map<number, Readings>;
+  /** Of the calibrations without a gate. */
+  liquids: Map<number, LiquidReading[]>;
   bands: TownBands;
 };
 
@@ -125,13 +130,21 @@ async function gather(actor: TownActor, truckId: number | null): Promise<Gathere
     bandsOfTown(actor),
   ]);
   const shown = truckId === null ? inForceOrReady(calibrations) : calibrations;
-  const readings = await readingsOf(shown.map(({ id }) => id));
-  return { trucks, materials, carried, work, calibrations: shown, readings, bands };
+  const withoutGate = shown.filter(({ gateOpeningIn }) => gateOpeningIn === null);
+  const [readings, liquids] = await Promise.all([
+    readingsOf(shown.map(({ id }) => id)),
+    liquidsOf(withoutGate.map(({ id }) => id)),
+  ]);
+  return { trucks, materials, carried, work, calibrations: shown, readings, liquids, bands };
 }
 
 const noReadings: Readings = { counts: [], catches: [], timedCatches: [] };
 
-function calibrationLine(truck: Truck, calibration: Calibration, { readings, bands }: Gathered): CalibrationLine {
+function calibrationLine(
+  truck: Truck,
+  calibration: Calibration,
+  { readings, liquids, bands }: Gathered,
+): CalibrationLine {
   const band = bands[calibration.material?.kind ?? "salt"];
   return {
     id: calibration.id,
@@ -141,6 +154,7 @@ function calibrationLine(truck: Truck, calibration: Calibration, { readings, ban
     gateOpeningIn: calibration.gateOpeningIn,
     state: calibration.state,
     working: workingRateOf(truck, readings.get(calibration.id) ?? noReadings, band),
+    liquids: liquids.get(calibration.id) ?? [],
   };
 }
 

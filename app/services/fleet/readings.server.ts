@@ -92,15 +92,27 @@ export async function verificationsOf(calibrationId: number): Promise<Verificati
   }));
 }
 
-/** The liquid readings of one calibration, in their order; empty where there are none. */
-export async function liquidsOf(calibrationId: number): Promise<LiquidReading[]> {
-  const rows = await CalibrationLiquid.findAll({ where: { calibrationId }, order: ["position"], raw: true });
-  return rows.map(({ kind, gallons, seconds, speedMph, lanes, dryLbPerMin }) => ({
-    kind,
-    gallons,
-    seconds,
-    speedMph,
-    lanes,
-    dryLbPerMin,
-  }));
+/**
+ * The liquid readings of calibrations, in their order.
+ *
+ * @param ids - calibrations that the caller has already found to be the town's
+ * @returns an entry for those that have any
+ */
+export async function liquidsOf(ids: readonly number[]): Promise<Map<number, LiquidReading[]>> {
+  if (ids.length === 0) return new Map();
+  const where = { calibrationId: [...ids] };
+  const found = grouped(await CalibrationLiquid.findAll({ where, order: ["position"], raw: true }));
+  return new Map(
+    [...found].map(([id, rows]) => [
+      id,
+      rows.map(({ kind, gallons, seconds, speedMph, lanes, dryLbPerMin }) => ({
+        kind,
+        gallons,
+        seconds,
+        speedMph,
+        lanes,
+        dryLbPerMin,
+      })),
+    ]),
+  );
 }

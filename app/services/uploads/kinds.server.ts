@@ -114,8 +114,8 @@ async function checkCalibrations(
       .sort((one, other) => one.unitNumber.localeCompare(other.unitNumber, "en", { numeric: true })),
     materials: materials.map(({ id, name }) => ({ id, name })),
     storedKeys: new Set(
-      calibrations.map((stored) =>
-        calibrationKey(stored.truckId, stored.materialId, stored.testedOn, stored.gateOpeningIn),
+      calibrations.flatMap(({ truckId, materialId, testedOn, gateOpeningIn }) =>
+        gateOpeningIn === null ? [] : [calibrationKey(truckId, materialId, testedOn, gateOpeningIn)],
       ),
     ),
     today: now().toISOString().slice(0, 10),

@@ -18,11 +18,14 @@ function refused(code: string, field: string, message: string): Stored {
   return { ok: false, problems: [{ code, severity: "error", field, message }] };
 }
 
-/** A truck weighed again at the same gate on the same day is a second calibration, not the same one. */
-async function nextSameDayNumber(sheet: Worksheet, gateOpeningIn: number, transaction: Transaction) {
+/**
+ * A truck weighed again at the same gate on the same day is a second calibration, not the same one. The unique key takes
+ * no two calibrations without a gate for the same, so their numbers rest on the truck's lock alone.
+ */
+async function nextSameDayNumber(sheet: Worksheet, gateOpeningIn: number | null, transaction: Transaction) {
   const [row] = await db.query<{ last: number | null }>(
     `SELECT MAX(same_day_number) AS last FROM calibration
-      WHERE truck_id = ? AND material_id = ? AND tested_on = ? AND gate_opening_in = ?`,
+      WHERE truck_id = ? AND material_id = ? AND tested_on = ? AND gate_opening_in <=> ?`,
     {
       type: QueryTypes.SELECT,
       replacements: [sheet.truckId, sheet.materialId, sheet.testedOn, gateOpeningIn],
@@ -107,9 +110,9 @@ export async function storeCalibration(actor: TownActor, sheet: Worksheet, trans
   const readings = worksheetReadings(sheet);
   if (!readings) {
     return refused(
-      "no-gate",
-      "gate.openingText",
-      "A calibration needs a gate opening with its counts and catches. Liquid alone is not stored as a calibration yet.",
+      "no-readings",
+      "catches",
+      "A calibration needs a gate opening with its counts and catches, or timed catches of liquid alone.",
     );
   }
   const { gateOpeningIn, gateScaleMark } = readings;

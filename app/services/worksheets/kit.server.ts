@@ -1,3 +1,4 @@
+import { Op } from "sequelize";
 import type { TownActor } from "#app/context.ts";
 import type { WorksheetCopy } from "#app/domain/calibration/worksheet-sync.ts";
 import type { KitCalibration, YardKit } from "#app/domain/calibration/yard-kit.ts";
@@ -15,7 +16,8 @@ const keptOfEachPair = 3;
 async function listCalibrations(townId: number): Promise<KitCalibration[]> {
   const rows = await Calibration.findAll({
     attributes: ["id", "truckId", "materialId", "testedOn", "gateOpeningIn", "state"],
-    where: { townId, method: "counts" },
+    // Liquid alone has neither counts to take over nor a gate to compare.
+    where: { townId, method: "counts", gateOpeningIn: { [Op.ne]: null } },
     include: [
       { association: calibrationCounts, separate: true },
       { association: calibrationCatches, separate: true },
@@ -28,6 +30,7 @@ async function listCalibrations(townId: number): Promise<KitCalibration[]> {
   });
   const seen = new Map<string, { count: number; hasInForce: boolean }>();
   return rows.flatMap(({ id, truckId, materialId, testedOn, gateOpeningIn, state, counts = [], catches = [] }) => {
+    if (gateOpeningIn === null) return [];
     const pair = seen.get(`${truckId} ${materialId}`) ?? { count: 0, hasInForce: false };
     const isInForce = state === "approved" && !pair.hasInForce;
     seen.set(`${truckId} ${materialId}`, { count: pair.count + 1, hasInForce: pair.hasInForce || isInForce });

@@ -139,10 +139,38 @@ test("a tank truck with direct liquid alone needs neither gate nor catch, and ha
   ];
   const sheet = { ...emptyWorksheet(head), cautions: { counting: false, catching: true }, liquids };
   expect(worksheetProblems(sheet, truck)).toEqual([]);
+  expect(worksheetReadings(sheet)).toEqual({
+    gateOpeningIn: null,
+    gateScaleMark: null,
+    counts: [],
+    catches: [],
+    timedCatches: [],
+    verification: [],
+    liquids: [{ id: "l", kind: "direct", gallons: 20, seconds: 60, speedMph: 30, lanes: 1 }],
+  });
+  expect(nextStep(sheet, truck)).toBe("rates");
+  expect(isStepDone("rates", sheet, truck)).toBe(true);
+  // What was typed of a gate before is no gate of the liquid's.
+  const typedGate = { ...sheet, gate: { scaleMark: "3", openingText: "1 7/8" } };
+  expect(worksheetReadings(typedGate)).toEqual(worksheetReadings(sheet));
+});
+
+test("prewetting alone has no gate either, and a catch that cannot be read still stops it", () => {
+  const liquid = { id: "p", kind: "prewet" as const, gallons: "1.5", seconds: "45", speedMph: "", lanes: "" };
+  const sheet = { ...emptyWorksheet(head), cautions: { counting: false, catching: true } };
+  const read = worksheetReadings({ ...sheet, liquids: [{ ...liquid, dryLbPerMin: "200" }] });
+  expect(read).toMatchObject({ gateOpeningIn: null, liquids: [{ kind: "prewet", dryLbPerMin: 200 }] });
+  expect(worksheetReadings({ ...sheet, liquids: [{ ...liquid, dryLbPerMin: "" }] })).toBeNull();
+});
+
+test("of a tank truck nothing but a catch of liquid is asked; one count makes it dry work again", () => {
+  const tanks = { ...truck, spreaderKind: "liquid-tanks" as const };
+  const sheet = { ...emptyWorksheet(head), cautions: { counting: false, catching: true } };
+  const fields = (one: Worksheet) => worksheetProblems(one, tanks).map(({ field, code }) => `${field} ${code}`);
+  expect(fields(sheet)).toEqual(["liquids no-catch"]);
+  expect(nextStep(sheet, tanks)).toBe("catches");
   expect(worksheetReadings(sheet)).toBeNull();
-  expect(readableReadings(sheet).liquids).toEqual([
-    { id: "l", kind: "direct", gallons: 20, seconds: 60, speedMph: 30, lanes: 1 },
-  ]);
+  expect(fields({ ...sheet, counts: [countA] })).toContain("gate.openingText blank");
 });
 
 test("a ground-speed truck may be verified without a count, though not without its gate", () => {

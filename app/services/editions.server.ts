@@ -90,7 +90,6 @@ const DownloadCellShape = z.discriminatedUnion("state", [
 
 export type MemberCell = z.infer<typeof MemberCellShape>;
 export type WallCell = z.infer<typeof WallCellShape>;
-type DownloadCell = z.infer<typeof DownloadCellShape>;
 type Placed<Cell> = { indicator: IndicatorKey; groupKey: string; cell: Cell };
 
 /** Editions never change, so their cells are read and checked once: the last fifty are kept for each audience. */

@@ -26,6 +26,8 @@ export async function listEditions(): Promise<EditionSummary[]> {
       ["number", "DESC"],
     ],
     limit: 200,
+    // Asked for by nearly every page: plain rows, no model for each.
+    raw: true,
   });
   return editions.map(({ id, seasonStartYear, number, publishedAt, townCount, contentSha256 }) => ({
     id,

@@ -6,75 +6,32 @@ type Props = { spec: LaneStripSpec; peers: ShownPeers; title: string };
 
 /** The figures the strip is drawn from. Laid along the lane where there is room, as rows on a phone. */
 export function HeapTable({ spec, peers, title }: Props) {
-  const towns = peers.heapKind === "bars" ? "towns, about" : "towns";
-  const cells = peers.heaps.map((heap) => ({
-    words: heapColumnWords(heap, spec),
-    townCount: townsInHeap(peers, heap),
-    isOurs: isOwnHeap(heap, spec.own),
-  }));
   return (
     <div className="@container">
-      <table className="hidden w-full border-collapse text-center text-note leading-tight @min-[52rem]:table">
+      <table className="heap-table">
         <caption className="sr-only">{`${title}: towns by range`}</caption>
         <thead>
-          <tr className="border-b-2 border-line align-bottom">
-            <th scope="col" className="py-1.5 pr-2 text-left font-semibold">
-              {spec.unit}
-            </th>
-            {cells.map((cell) => (
-              <th
-                key={cell.words}
-                scope="col"
-                className={`${column} font-semibold ${cell.isOurs ? "bg-spruce-wash" : ""}`}
-              >
-                {cell.words}
-              </th>
-            ))}
+          <tr>
+            <th scope="col">{spec.unit}</th>
+            <th scope="col">{peers.heapKind === "bars" ? "towns, about" : "towns"}</th>
           </tr>
         </thead>
         <tbody>
-          <tr className="border-b border-line align-baseline">
-            <th scope="row" className="py-1.5 pr-2 text-left font-semibold">
-              {towns}
-            </th>
-            {cells.map((cell) => (
-              <td key={cell.words} className={`${column} ${cell.isOurs ? "bg-spruce-wash font-bold" : ""}`}>
-                {cell.townCount}
-                {cell.isOurs && <span className="block font-semibold">with you</span>}
-              </td>
-            ))}
-          </tr>
-        </tbody>
-      </table>
-      <table className="w-full border-collapse text-table @min-[52rem]:hidden">
-        <caption className="sr-only">{`${title}: towns by range`}</caption>
-        <thead>
-          <tr className="border-b-2 border-line">
-            <th scope="col" className="py-1.5 text-left font-semibold">
-              {spec.unit}
-            </th>
-            <th scope="col" className="py-1.5 text-right font-semibold">
-              {towns}
-            </th>
-          </tr>
-        </thead>
-        <tbody>
-          {cells.map((cell) => (
-            <tr
-              key={cell.words}
-              className={`border-b border-rule last:border-line ${cell.isOurs ? "bg-spruce-wash font-bold" : ""}`}
-            >
-              <th scope="row" className="py-1.5 text-left font-normal">
-                {cell.words}
-                {cell.isOurs && <span className="font-semibold"> · with you</span>}
-              </th>
-              <td className="py-1.5 text-right">{cell.townCount}</td>
-            </tr>
-          ))}
+          {peers.heaps.map((heap) => {
+            const words = heapColumnWords(heap, spec);
+            const isOurs = isOwnHeap(heap, spec.own);
+            return (
+              <tr key={words} className={isOurs ? "heap-table-ours" : undefined}>
+                <th scope="row">{words}</th>
+                <td>
+                  {townsInHeap(peers, heap)}
+                  {isOurs && <span> with you</span>}
+                </td>
+              </tr>
+            );
+          })}
         </tbody>
       </table>
     </div>
   );
 }
-
-const column = "border-l border-rule px-1 py-1.5";

@@ -14,15 +14,27 @@ function decimalsOf({ unit, axis }: Pick<LaneStripSpec, "unit" | "axis">) {
   return Math.min(4, Math.ceil(-Math.log10(axis.step)) + 1);
 }
 
+/** Made once each: a strip says a few dozen figures, and making a formatter costs more than all of them. */
+const formatters = new Map<string, Intl.NumberFormat>();
+
+function formatter(least: number, most: number) {
+  const key = `${least} ${most}`;
+  const known = formatters.get(key);
+  if (known) return known;
+  const made = new Intl.NumberFormat("en-US", { minimumFractionDigits: least, maximumFractionDigits: most });
+  formatters.set(key, made);
+  return made;
+}
+
 export function figureWords(value: number, spec: Pick<LaneStripSpec, "unit" | "axis">) {
   const decimals = decimalsOf(spec);
-  return value.toLocaleString("en-US", { minimumFractionDigits: decimals, maximumFractionDigits: decimals });
+  return formatter(decimals, decimals).format(value);
 }
 
 /** Axis figures are round, so they need no more digits than the step has. */
 export function axisWords(value: number, spec: Pick<LaneStripSpec, "unit" | "axis">) {
   const decimals = spec.axis.step >= 1 ? 0 : Math.min(4, Math.ceil(-Math.log10(spec.axis.step)));
-  return value.toLocaleString("en-US", { minimumFractionDigits: 0, maximumFractionDigits: decimals });
+  return formatter(0, decimals).format(value);
 }
 
 /** "340 to 379"; the heap's upper border belongs to the next one. */

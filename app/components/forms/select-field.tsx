@@ -1,7 +1,7 @@
 import type { ComponentProps } from "react";
 import { FieldFrame, fieldLook, fieldTies, type FieldWords } from "./field-frame.tsx";
 
-type Choice = { value: string; label: string };
+type Choice = { value: string; label: string; isDisabled?: boolean };
 
 type SelectProps = FieldWords &
   Omit<ComponentProps<"select">, keyof FieldWords | "className" | "children"> & {
@@ -23,7 +23,7 @@ export function SelectField(props: SelectProps) {
         >
           {prompt !== undefined && <option value="">{prompt}</option>}
           {choices.map((choice) => (
-            <option key={choice.value} value={choice.value}>
+            <option key={choice.value} value={choice.value} disabled={choice.isDisabled}>
               {choice.label}
             </option>
           ))}

@@ -109,6 +109,7 @@ export function PartSamples() {
       <Heading>Groups</Heading>
       <GroupSwitch
         label="Compare with"
+        menu={{ action: "/components", name: "group", fields: {} }}
         choices={[
           { key: "all", label: "The whole region", townCountWords: "36", to: "?group=all", isCurrent: true },
           { key: "size", label: "100 to 199 lane miles", townCountWords: "15", to: "?group=size" },

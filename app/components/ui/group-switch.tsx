@@ -1,4 +1,6 @@
 import { Link } from "react-router";
+import { SelectField } from "#app/components/forms/select-field.tsx";
+import { Button } from "./button.tsx";
 
 export type GroupChoice = {
   key: string;
@@ -13,13 +15,18 @@ export type GroupChoice = {
   hiddenReason?: string;
 };
 
-type Props = { label: string; choices: readonly GroupChoice[] };
+type Props = {
+  label: string;
+  choices: readonly GroupChoice[];
+  /** Where a phone's menu asks for a group: the name of the group in the address, and what else stands in it. */
+  menu: { action: string; name: string; fields: Record<string, string> };
+};
 
 /**
- * Which peers to stand beside. Links, so that a choice has an address and works without script. On a phone the choice
- * is one line that opens, so that the strips stay in sight.
+ * Which peers to stand beside. Links, so that a choice has an address and works without script. On a phone it is one
+ * menu, so that the strips stay in sight.
  */
-export function GroupSwitch({ label, choices }: Props) {
+export function GroupSwitch({ label, choices, menu }: Props) {
   const current = choices.find(({ isCurrent }) => isCurrent === true);
   return (
     <>
@@ -27,26 +34,26 @@ export function GroupSwitch({ label, choices }: Props) {
         Compared with: <b>{current?.label}</b>
         {current?.townCountWords !== undefined && `, ${current.townCountWords} towns`}
       </p>
-      <nav aria-label={label} className="mt-5 border-b border-line print:hidden">
-        <details key={current?.key} className="group sm:hidden">
-          <summary className="flex min-h-target list-none items-center justify-between gap-4">
-            <span className="py-1.5">
-              <span className="block text-note text-gravel">{label}</span>
-              <b>{current?.label}</b> {current?.townCountWords}
-            </span>
-            <span className="font-semibold text-spruce underline underline-offset-3">
-              <span className="group-open:hidden">Change</span>
-              <span className="hidden group-open:inline">Close</span>
-            </span>
-          </summary>
-          <ul>
-            {choices.map((choice) => (
-              <li key={choice.key} className="border-t border-rule">
-                <Choice choice={choice} />
-              </li>
-            ))}
-          </ul>
-        </details>
+      <nav aria-label={label} className="mt-5 border-b border-line max-sm:pb-4 print:hidden">
+        <form method="get" action={menu.action} className="flex items-end gap-3 sm:hidden">
+          {Object.entries(menu.fields).map(([name, value]) => (
+            <input key={name} type="hidden" name={name} value={value} />
+          ))}
+          <div className="min-w-0 flex-1">
+            <SelectField
+              key={current?.key}
+              name={menu.name}
+              label={label}
+              defaultValue={current?.key}
+              choices={choices.map((choice) => ({
+                value: choice.key,
+                label: menuWords(choice),
+                isDisabled: choice.hiddenReason !== undefined,
+              }))}
+            />
+          </div>
+          <Button variant="quiet">Show</Button>
+        </form>
         <div className="max-sm:hidden">
           {parts(choices).map(([part, own]) => (
             <div key={part} className="flex gap-x-6">
@@ -64,6 +71,11 @@ export function GroupSwitch({ label, choices }: Props) {
       </nav>
     </>
   );
+}
+
+function menuWords({ label, townCountWords, hiddenReason }: GroupChoice) {
+  if (hiddenReason !== undefined) return `${label}: hidden, ${hiddenReason}`;
+  return townCountWords === undefined ? label : `${label}, ${townCountWords} towns`;
 }
 
 /** The choices by row, in the order they come. */

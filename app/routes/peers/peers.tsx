@@ -86,6 +86,7 @@ export default function Peers({ loaderData: { standing } }: Route.ComponentProps
       </Method>
       <GroupSwitch
         label="Compare with"
+        menu={{ action: "/peers", name: "group", fields: { edition: String(edition.id) } }}
         choices={groups.map(({ key, label, towns, reason }) => ({
           key,
           label,

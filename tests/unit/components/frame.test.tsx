@@ -38,6 +38,7 @@ test("a hidden group is words with its reason, not a link", () => {
     <MemoryRouter>
       <GroupSwitch
         label="Compare with"
+        menu={{ action: "/peers", name: "group", fields: {} }}
         choices={[
           { key: "all", label: "The whole region", townCountWords: "36", to: "?group=all", isCurrent: true },
           { key: "hill", label: "Hill roads", to: "?group=hill", hiddenReason: "too few towns" },
@@ -48,6 +49,7 @@ test("a hidden group is words with its reason, not a link", () => {
   expect(markup).toContain('aria-current="true"');
   expect(markup).toContain("hidden to protect members: too few towns");
   expect(markup).not.toContain("group=hill");
+  expect(markup).toContain('<option value="hill" disabled="">Hill roads: hidden, too few towns</option>');
 });
 
 test("a button that cannot act yet does not submit and points at the reason", () => {
